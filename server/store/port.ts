@@ -1,0 +1,263 @@
+/**
+ * The Store port: what the service asks of its storage, as whole acts of the domain. Every method
+ * is asynchronous and keyed by club, so that another engine can stand in for the embedded one.
+ * Ids (UUIDv7) and times (RFC 3339 UTC, milliseconds, `Z`) are made by the caller.
+ */
+
+/** Where and by whom a change was made: written with it. */
+export interface Actor {
+  readonly clubId: string;
+  readonly memberId: string;
+  readonly at: string;
+}
+
+/** The kinds of failure that a caller can act on. */
+export type StoreErrorKind = 'conflict' | 'stale' | 'full' | 'corrupt' | 'unavailable';
+
+/** Thrown by every adapter; `kind` is a closed list. */
+export class StoreError extends Error {
+  override readonly name = 'StoreError';
+  readonly kind: StoreErrorKind;
+  /** For `conflict`: the field that must be unique. */
+  readonly field: string | undefined;
+
+  constructor(kind: StoreErrorKind, message: string, field?: string, cause?: unknown) {
+    super(message, { cause });
+    this.kind = kind;
+    this.field = field;
+  }
+}
+
+export interface ClubRecord {
+  readonly id: string;
+  readonly key: string;
+  readonly name: string;
+  readonly invented: boolean;
+  readonly createdAt: string;
+}
+
+/** What every editable resource has. `revision` starts at 1 and grows by 1 with each edit. */
+export interface Editable<Facts> {
+  readonly id: string;
+  readonly clubId: string;
+  /** Unique in the club: lower-case letters, digits and hyphens. */
+  readonly key: string;
+  readonly revision: number;
+  readonly createdAt: string;
+  readonly updatedAt: string;
+  readonly facts: Facts;
+}
+
+export interface SiteFacts {
+  readonly name: string;
+  readonly latitudeDeg: number | null;
+  readonly longitudeDeg: number | null;
+  readonly elevationM: number | null;
+  readonly note: string;
+  readonly invented: boolean;
+}
+
+/** One section of a feed line, from the analyzer's end to the antenna. Null is unknown. */
+export interface FeedLineSectionFacts {
+  readonly cable: string;
+  readonly lengthM: number | null;
+  readonly lengthU95M: number | null;
+  readonly extraLossDb: number;
+  readonly choke: boolean;
+}
+
+export type AntennaKind =
+  | 'dipole'
+  | 'loaded_dipole'
+  | 'trap_dipole'
+  | 'off_centre_fed'
+  | 'end_fed'
+  | 'vertical'
+  | 'vertical_with_radials'
+  | 'five_eighths_vertical'
+  | 'loop'
+  | 'small_loop'
+  | 'beam'
+  | 'other';
+
+export interface AntennaFacts {
+  readonly siteId: string;
+  readonly name: string;
+  readonly kind: AntennaKind;
+  /** Band names of the plan, for instance `20m`. */
+  readonly designBands: readonly string[];
+  /** Id of the band plan it is judged by. */
+  readonly plan: string;
+  /** Operator class of a licence plan, null for all rows. */
+  readonly licence: string | null;
+  readonly maxSwr: number;
+  readonly referenceOhm: number;
+  /** Null: not known. Empty: the analyzer is connected at the feed point. */
+  readonly feedLine: readonly FeedLineSectionFacts[] | null;
+  readonly note: string;
+  readonly invented: boolean;
+}
+
+export interface AnalyzerFacts {
+  readonly name: string;
+  readonly note: string;
+  readonly invented: boolean;
+}
+
+export type SiteRecord = Editable<SiteFacts>;
+export type AntennaRecord = Editable<AntennaFacts>;
+export type AnalyzerRecord = Editable<AnalyzerFacts>;
+
+/** The kinds of editable resource, by the name of their collection. */
+export interface EditableKinds {
+  readonly sites: SiteFacts;
+  readonly antennas: AntennaFacts;
+  readonly analyzers: AnalyzerFacts;
+}
+export type EditableKind = keyof EditableKinds;
+
+/** What is told about a sweep beside its file; none of it is measured. */
+export interface SweepFacts {
+  readonly antennaId: string;
+  readonly analyzerId: string | null;
+  /** When it was measured; null if nobody said. */
+  readonly measuredAt: string | null;
+  readonly conditions: string | null;
+  readonly note: string;
+  readonly plane: 'measured' | 'feed_point';
+  readonly invented: boolean;
+}
+
+/** What was read from the file, fixed for good. */
+export interface SweepMeasured {
+  readonly fileSha256: string;
+  readonly fileBytes: number;
+  readonly fileName: string | null;
+  readonly format: string;
+  /** The column mapping that was used, for delimited text. */
+  readonly columns: string | null;
+  readonly port: 1 | 2 | null;
+  readonly phase: 'signed' | 'unsigned' | 'none';
+  readonly referenceOhm: number;
+  readonly points: number;
+  readonly lowHz: number;
+  readonly highHz: number;
+  /** The reader's assumptions as JSON text. */
+  readonly assumptionsJson: string;
+}
+
+export interface SweepRecord {
+  readonly id: string;
+  readonly clubId: string;
+  readonly receivedAt: string;
+  readonly uploadedBy: string;
+  readonly facts: SweepFacts;
+  readonly measured: SweepMeasured;
+}
+
+/** The points of a sweep as typed arrays; `none` has the magnitude in place of both parts. */
+export interface StoredPoints {
+  readonly frequencyHz: Float64Array;
+  readonly reflectionRe: Float64Array | null;
+  readonly reflectionIm: Float64Array | null;
+  readonly reflectionMagnitude: Float64Array | null;
+}
+
+/** A derived answer as the bytes that are sent, for one analysis version. */
+export interface StoredSummary {
+  readonly analysisVersion: string;
+  /** Wire JSON (snake_case) of the summary. */
+  readonly summaryJson: string;
+  /** Wire JSON of the usable-band report at the antenna's own limit and plan. */
+  readonly usableJson: string;
+}
+
+export interface NewSweep {
+  readonly record: SweepRecord;
+  readonly file: Uint8Array;
+  readonly points: StoredPoints;
+  readonly summary: StoredSummary;
+}
+
+/** `same`: these bytes are this antenna's already. `elsewhere`: they are another antenna's. */
+export type AddSweepOutcome =
+  | { readonly outcome: 'added'; readonly record: SweepRecord }
+  | { readonly outcome: 'same'; readonly record: SweepRecord }
+  | { readonly outcome: 'elsewhere'; readonly record: SweepRecord };
+
+/** A page by key: rows strictly after `after` in the list's order. */
+export interface PageRequest {
+  readonly limit: number;
+  readonly after: readonly [sortKey: string, id: string] | null;
+}
+export interface Page<Row> {
+  readonly items: readonly Row[];
+  readonly next: readonly [sortKey: string, id: string] | null;
+}
+
+export interface TokenRecord {
+  readonly id: string;
+  readonly clubId: string;
+  readonly memberId: string;
+  readonly label: string;
+  readonly createdAt: string;
+}
+
+export interface Store {
+  /** Adds the club with its first token, in one act. */
+  addClub(
+    club: ClubRecord,
+    token: TokenRecord & { readonly secretSha256: Uint8Array },
+  ): Promise<void>;
+  listClubs(): Promise<readonly ClubRecord[]>;
+  /** The live token whose secret has this SHA-256, if there is one. */
+  findToken(secretSha256: Uint8Array): Promise<TokenRecord | null>;
+
+  /** Adds a site, antenna or analyzer at revision 1. Throws `conflict` on a key in use. */
+  addEditable<K extends EditableKind>(
+    kind: K,
+    actor: Actor,
+    fresh: { readonly id: string; readonly key: string; readonly facts: EditableKinds[K] },
+  ): Promise<Editable<EditableKinds[K]>>;
+  /** By id or key; null if the club has none such. */
+  findEditable<K extends EditableKind>(
+    kind: K,
+    clubId: string,
+    idOrKey: string,
+  ): Promise<Editable<EditableKinds[K]> | null>;
+  /** Ascending by key; antennas may be limited to one site. */
+  listEditables<K extends EditableKind>(
+    kind: K,
+    clubId: string,
+    page: PageRequest,
+    filter?: { readonly siteId?: string },
+  ): Promise<Page<Editable<EditableKinds[K]>>>;
+  /**
+   * Replaces key and facts if the stored revision is `revision`, else throws `stale`. The check and
+   * the write are one act; the revision before is kept.
+   */
+  editEditable<K extends EditableKind>(
+    kind: K,
+    actor: Actor,
+    id: string,
+    revision: number,
+    next: { readonly key: string; readonly facts: EditableKinds[K] },
+  ): Promise<Editable<EditableKinds[K]>>;
+
+  /** Keeps file, points, record and summary in one act; the same bytes never make a twin. */
+  addSweep(sweep: NewSweep): Promise<AddSweepOutcome>;
+  /** The club's record of these bytes, if it has them. */
+  findSweepByFile(clubId: string, fileSha256: string): Promise<SweepRecord | null>;
+  findSweep(clubId: string, id: string): Promise<SweepRecord | null>;
+  /** Newest first by (measuredAt or receivedAt, id). */
+  listSweeps(clubId: string, antennaId: string, page: PageRequest): Promise<Page<SweepRecord>>;
+  /** The file byte for byte, checked against its SHA-256; throws `corrupt` if it does not match. */
+  readSweepFile(clubId: string, id: string): Promise<Uint8Array | null>;
+  readSweepPoints(clubId: string, id: string): Promise<StoredPoints | null>;
+  readSummary(clubId: string, id: string, analysisVersion: string): Promise<StoredSummary | null>;
+
+  /** Resolves if reader and writer both answer. */
+  ready(): Promise<void>;
+  /** Waits for accepted writes, then closes. */
+  close(): Promise<void>;
+}

@@ -1,0 +1,35 @@
+import type { Impedance } from '../../../server/demo/models/lumped.ts';
+import type { Random } from '../../support/random.ts';
+
+export type FamilyName =
+  | 'varying_rlc'
+  | 'dipole'
+  | 'line_fed_rlc'
+  | 'coupled_resonators'
+  | 'loaded_short_dipole';
+
+/** One antenna of a family: the parameters that a fit may move, all positive unless listed signed. */
+export interface Antenna {
+  readonly family: AntennaFamily;
+  readonly parameters: readonly number[];
+  /** About where it is meant to be used, hertz. */
+  readonly nominalHz: number;
+  /** About its loaded bandwidth, hertz: where no SWR limit says how wide a sweep should be. */
+  readonly bandwidthHz: number;
+  /** Outside of this range the closed form is not meant. */
+  readonly validHz: readonly [low: number, high: number];
+}
+
+/** A closed physical model with a few parameters. */
+export interface AntennaFamily {
+  readonly name: FamilyName;
+  /** Steps that count as small for each parameter of this antenna. */
+  scales(parameters: readonly number[]): readonly number[];
+  impedance(frequencyHz: number, parameters: readonly number[]): Impedance;
+  draw(random: Random): Antenna;
+}
+
+/** Each parameter its own scale: fits for parameters that cannot be zero. */
+export function relativeScales(parameters: readonly number[]): readonly number[] {
+  return parameters.map((value) => Math.abs(value));
+}

@@ -1,8 +1,10 @@
 import { defineConfig } from 'vitest/config';
+import { ClosingLine } from './tests/support/closing-line.ts';
 
 export default defineConfig({
   test: {
     include: ['tests/**/*.test.ts'],
+    reporters: ['default', new ClosingLine()],
     coverage: {
       provider: 'v8',
       include: ['core/**/*.ts', 'server/**/*.ts'],

@@ -1,0 +1,18 @@
+import type { ReadLimits } from '../core/formats/read-types.ts';
+import type { Clock } from './ids.ts';
+import type { Store } from './store/port.ts';
+
+/** What the routes are given to work with: storage, time and ids, and the settings they need. */
+export interface Service {
+  readonly store: Store;
+  readonly now: Clock;
+  readonly newId: () => string;
+  /** Without a slash at its end. */
+  readonly publicUrl: string;
+  readonly limits: ReadLimits;
+}
+
+/** The present time as it is stored and sent: RFC 3339, UTC, milliseconds. */
+export function timestamp(now: Clock): string {
+  return new Date(now()).toISOString();
+}

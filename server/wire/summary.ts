@@ -1,0 +1,124 @@
+import { z } from 'zod';
+import type { Summary } from '../../core/analysis/summary.ts';
+import { toSnakeCase } from './case.ts';
+import { frequencySchema, idSchema } from './common.ts';
+
+export const cautionSchema = z
+  .object({ code: z.string(), detail: z.string() })
+  .meta({ id: 'Caution', description: 'What a person must know beside the numbers.' });
+
+export const assumptionSchema = z
+  .object({
+    code: z.string(),
+    detail: z.string(),
+    line: z.int().optional().meta({ description: 'Line of the file, from 1.' }),
+  })
+  .meta({ id: 'Assumption', description: 'A liberty that was taken in reading the file.' });
+
+export const phaseSchema = z.enum(['signed', 'unsigned', 'none']).meta({
+  description:
+    'What is known of the phase: all; all but the sign of the reactance; nothing (SWR or return loss only).',
+});
+
+export const planeSchema = z.enum(['measured', 'feed_point']).meta({
+  description: 'Where the reflection holds: at the analyzer, or at the feed point of the antenna.',
+});
+
+const halfWidth = z
+  .number()
+  .nullable()
+  .meta({ description: 'Half-width of the 95 % interval; null if unknown.' });
+
+const minimumSchema = z
+  .object({
+    frequency_hz: frequencySchema,
+    frequency_u95_hz: halfWidth,
+    swr: z.number(),
+    swr_u95: halfWidth,
+    resistance_ohm: z.number().nullable(),
+    reactance_ohm: z.number().nullable(),
+    return_loss_db: z.number().nullable(),
+    at_edge: z.boolean().meta({ description: 'The sweep ends before the minimum does.' }),
+  })
+  .meta({ id: 'SwrMinimum', description: 'A minimum of SWR, refined below the grid.' });
+
+const resonanceSchema = z
+  .object({
+    frequency_hz: frequencySchema,
+    frequency_u95_hz: halfWidth,
+    kind: z
+      .enum(['series', 'parallel'])
+      .meta({ description: 'Reactance rising (series) or falling (parallel) through zero.' }),
+    resistance_ohm: z.number().nullable(),
+    resistance_u95_ohm: halfWidth,
+    swr: z.number().nullable(),
+    swr_u95: halfWidth,
+    q: z.number().nullable(),
+    q_u95: halfWidth,
+    grazing: z
+      .boolean()
+      .meta({ description: 'The reactance touches zero without a crossing beyond doubt.' }),
+  })
+  .meta({ id: 'Resonance', description: 'A frequency of zero reactance.' });
+
+const spanSchema = z
+  .object({
+    max_swr: z.number(),
+    low_hz: frequencySchema,
+    low_u95_hz: halfWidth,
+    high_hz: frequencySchema,
+    high_u95_hz: halfWidth,
+    width_hz: z.number(),
+    low_open: z.boolean().meta({ description: 'The sweep began below the limit.' }),
+    high_open: z.boolean().meta({ description: 'The sweep ended below the limit.' }),
+  })
+  .meta({ id: 'UsableSpan', description: 'A contiguous range where SWR <= max_swr.' });
+
+/** The resonance and minimum-SWR summary of a sweep. */
+export const summarySchema = z
+  .object({
+    sweep_id: idSchema,
+    antenna_id: idSchema,
+    analysis_version: z.string(),
+    plane: planeSchema,
+    reference_ohm: z.number(),
+    phase: phaseSchema,
+    span: z.object({
+      low_hz: frequencySchema,
+      high_hz: frequencySchema,
+      points: z.int(),
+      median_step_hz: z.number().nullable(),
+    }),
+    minimum_swr: minimumSchema.nullable(),
+    swr_minima: z.array(minimumSchema),
+    resonances: z.array(resonanceSchema),
+    resonance_offset_hz: z
+      .number()
+      .nullable()
+      .meta({ description: 'Frequency of the SWR minimum less that of the nearest resonance.' }),
+    spans: z.array(spanSchema),
+    quality: z.object({
+      flags: z.array(z.object({ code: z.string(), detail: z.string() })),
+      reflection_noise: z.number().nullable(),
+    }),
+    absent: z
+      .array(z.object({ field: z.string(), code: z.string(), detail: z.string() }))
+      .meta({ description: 'Why a field is null or empty.' }),
+    assumptions: z.array(assumptionSchema),
+    cautions: z.array(cautionSchema),
+  })
+  .meta({ id: 'Summary', description: 'Where an antenna resonates and where its SWR is lowest.' });
+
+/** Whose summary or report it is. */
+export interface SweepIdentity {
+  readonly sweepId: string;
+  readonly antennaId: string;
+}
+
+/** A summary as it is sent and stored. */
+export function summaryToWire(
+  { sweepId, antennaId }: SweepIdentity,
+  summary: Summary,
+): z.output<typeof summarySchema> {
+  return { sweep_id: sweepId, antenna_id: antennaId, ...toSnakeCase(summary) };
+}

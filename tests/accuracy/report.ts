@@ -1,23 +1,19 @@
 import type { BenchScores } from './bench.ts';
+import type { Quantity } from './comparison.ts';
+import { coverageFigure } from './coverage-figure.ts';
+import { addFindings, type Finding } from './crossings.ts';
 import {
-  addFindings,
-  type CaseScore,
-  type Comparison,
-  type Finding,
-  type Quantity,
-} from './scores.ts';
-
-/** One line of the bench: a value, what it should be, and what lies behind it. */
-export interface BenchFigure {
-  readonly value: number | Readonly<Record<string, number>>;
-  readonly aim: string;
-  readonly met: boolean;
-  readonly detail: Readonly<Record<string, unknown>>;
-}
-
-export type BenchReport = Readonly<Record<string, BenchFigure>>;
-
-const quantities: readonly Quantity[] = ['resonance', 'min_swr_frequency', 'min_swr', 'span_edge'];
+  type BenchFigure,
+  type BenchReport,
+  byFamily,
+  comparisonsOf,
+  errorSteps,
+  label,
+  worst,
+} from './figure.ts';
+import { ratioFigure } from './ratio-figure.ts';
+import type { CaseScore } from './scores.ts';
+import { quantile, sorted } from './statistics.ts';
 
 /** The figures of the accuracy bench, each with its aim. */
 export function reportOf({ exact, asInFiles }: BenchScores): BenchReport {
@@ -31,20 +27,6 @@ export function reportOf({ exact, asInFiles }: BenchScores): BenchReport {
     resonance_invented: findingFigure(asInFiles, 'invented'),
     verdict_wrong: verdictFigure(asInFiles),
   };
-}
-
-function comparisonsOf(scores: readonly CaseScore[], quantity: Quantity): Comparison[] {
-  return scores.flatMap((score) => score.comparisons.filter((c) => c.quantity === quantity));
-}
-
-function byFamily<T>(
-  scores: readonly CaseScore[],
-  of: (scores: readonly CaseScore[]) => T,
-): Record<string, T> {
-  const names = [...new Set(scores.map((score) => score.bench.antenna.family.name))];
-  return Object.fromEntries(
-    names.map((name) => [name, of(scores.filter((s) => s.bench.antenna.family.name === name))]),
-  );
 }
 
 function exactFigure(
@@ -75,114 +57,6 @@ function exactFigure(
       worst: worst(comparisonsOf(withSpan, quantity), errorSteps),
     },
   };
-}
-
-/** A comparison whose yardstick is there and sound. */
-interface Measured {
-  readonly comparison: Comparison;
-  readonly estimate: number;
-  readonly fit: number;
-  readonly deviationSteps: number;
-}
-
-function measured(scores: readonly CaseScore[], quantity: Quantity): Measured[] {
-  return comparisonsOf(scores, quantity).flatMap((comparison) => {
-    const { yardstick, bench, error, truth } = comparison;
-    if (yardstick === null || yardstick.fitted === null || bench.noise === 0) return [];
-    const { deviation, fitted } = yardstick;
-    return [
-      {
-        comparison,
-        estimate: error / deviation,
-        fit: (fitted - truth) / deviation,
-        deviationSteps: deviation / bench.stepHz,
-      },
-    ];
-  });
-}
-
-function ratioFigure(scores: readonly CaseScore[], quantity: Quantity): BenchFigure {
-  const all = measured(scores, quantity);
-  const ratioOf = (some: readonly Measured[]) =>
-    rms(some.map((m) => m.estimate)) / rms(some.map((m) => m.fit));
-  const inSteps = (some: readonly Measured[]) =>
-    rms(some.map((m) => m.estimate * m.deviationSteps)) /
-    rms(some.map((m) => m.fit * m.deviationSteps));
-  const value = ratioOf(all);
-  const ratiosWhere = (keep: (m: Measured) => boolean) => ratioOf(all.filter(keep));
-  return {
-    value,
-    aim: '<= 1.5',
-    met: value <= 1.5,
-    detail: {
-      compared: all.length,
-      normalised: 'each error over the standard deviation that the model fit states for its case',
-      fit_rms_over_its_own_deviation: rms(all.map((m) => m.fit)),
-      trimmed_1_percent: ratioOf(trimmed(all)),
-      median_ratio:
-        median(all.map((m) => Math.abs(m.estimate))) / median(all.map((m) => Math.abs(m.fit))),
-      plain_steps: inSteps(all),
-      by_family: byFamily(scores, (some) => ratioOf(measured(some, quantity))),
-      by_family_trimmed: byFamily(scores, (some) => ratioOf(trimmed(measured(some, quantity)))),
-      by_noise: {
-        below_0_001: ratiosWhere((m) => m.comparison.bench.noise < 0.001),
-        to_0_005: ratiosWhere(
-          (m) => m.comparison.bench.noise >= 0.001 && m.comparison.bench.noise < 0.005,
-        ),
-        above_0_005: ratiosWhere((m) => m.comparison.bench.noise >= 0.005),
-      },
-      worst: worst(
-        all.map((m) => m.comparison),
-        (c) => Math.abs(c.error) / (c.yardstick?.deviation ?? 1),
-      ),
-    },
-  };
-}
-
-/** Without the hundredth part whose estimate is worst. */
-function trimmed(all: readonly Measured[]): Measured[] {
-  const ranked = [...all].sort((a, b) => Math.abs(a.estimate) - Math.abs(b.estimate));
-  return ranked.slice(0, Math.ceil(0.99 * ranked.length));
-}
-
-function coverageFigure(scores: readonly CaseScore[]): BenchFigure {
-  const coverage = (some: readonly Comparison[]) =>
-    some.filter((c) => c.u95 !== null && Math.abs(c.error) <= c.u95).length / some.length;
-  const of = (quantity: Quantity) => {
-    const all = comparisonsOf(scores, quantity);
-    const stated = all.filter((c) => c.u95 !== null);
-    return {
-      compared: all.length,
-      without_half_width: all.length - stated.length,
-      median_half_width_over_rms_error: halfWidthOverRms(stated),
-      by_family: byFamily(scores, (some) => coverage(comparisonsOf(some, quantity))),
-      where_noise_rules: coverage(all.filter((c) => noiseRules(c))),
-      where_rounding_rules: coverage(all.filter((c) => !noiseRules(c))),
-      worst: worst(stated, (c) => Math.abs(c.error) / (c.u95 ?? 1)),
-    };
-  };
-  const value = Object.fromEntries(
-    quantities.map((quantity) => [quantity, coverage(comparisonsOf(scores, quantity))]),
-  );
-  return {
-    value,
-    aim: 'each 0.93 to 0.97',
-    met: Object.values(value).every((share) => share >= 0.93 && share <= 0.97),
-    detail: Object.fromEntries(quantities.map((quantity) => [quantity, of(quantity)])),
-  };
-}
-
-function noiseRules({ bench }: Comparison): boolean {
-  return bench.noise / Math.SQRT2 > 0.7 * bench.sigma;
-}
-
-/** Each over the model fit's deviation for its case, so that no case outweighs another. Ideal: 1.96. */
-function halfWidthOverRms(stated: readonly Comparison[]): number {
-  const sound = stated.filter((c) => c.yardstick !== null && c.yardstick.deviation > 0);
-  const scaled = (value: number, c: Comparison) => value / (c.yardstick?.deviation ?? 1);
-  return (
-    median(sound.map((c) => scaled(c.u95 ?? 0, c))) / rms(sound.map((c) => scaled(c.error, c)))
-  );
 }
 
 const noFinding: Finding = { clear: 0, missed: 0, invented: 0, hedged: 0 };
@@ -229,50 +103,4 @@ function verdictFigure(scores: readonly CaseScore[]): BenchFigure {
         .map((score) => label(score.bench)),
     },
   };
-}
-
-function worst(comparisons: readonly Comparison[], badness: (c: Comparison) => number) {
-  return [...comparisons]
-    .sort((a, b) => badness(b) - badness(a))
-    .slice(0, 6)
-    .map((c) => ({
-      badness: badness(c),
-      ...label(c.bench),
-      truth: c.truth,
-      error: c.error,
-      u95: c.u95,
-    }));
-}
-
-function label(bench: CaseScore['bench']) {
-  return {
-    case: bench.index,
-    seed: bench.seed,
-    family: bench.antenna.family.name,
-    points: bench.clean.length,
-    noise: bench.noise,
-    rounding: bench.rounding,
-  };
-}
-
-function errorSteps(comparison: Comparison): number {
-  return Math.abs(comparison.error) / comparison.bench.stepHz;
-}
-
-function sorted(values: readonly number[]): number[] {
-  return [...values].sort((a, b) => a - b);
-}
-
-/** Of ascending values; NaN where there are none. */
-function quantile(ascending: readonly number[], p: number): number {
-  if (ascending.length === 0) return Number.NaN;
-  return ascending[Math.min(ascending.length - 1, Math.ceil(p * ascending.length) - 1)];
-}
-
-function median(values: readonly number[]): number {
-  return quantile(sorted(values), 0.5);
-}
-
-function rms(values: readonly number[]): number {
-  return Math.sqrt(values.reduce((sum, value) => sum + value * value, 0) / values.length);
 }

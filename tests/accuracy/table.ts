@@ -1,4 +1,4 @@
-import type { BenchFigure, BenchReport } from './report.ts';
+import type { BenchFigure, BenchReport } from './figure.ts';
 
 /** The bench's figures as lines for people: value, aim, and what each family contributes. */
 export function tableOf(report: BenchReport): string {

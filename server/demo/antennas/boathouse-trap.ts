@@ -6,7 +6,7 @@ import { dry, wet } from '../visit.ts';
 
 const dipole = {
   innerM: 5.11,
-  outerM: 3.72,
+  outerM: 4.13,
   trap: { resistanceOhm: 30_000, resonanceHz: 14_150_000, q: 120 },
 };
 const line = genericLine('coax-50-pe-5mm', 12);

@@ -19,7 +19,7 @@ export interface NewClub {
 export async function addFirstClub(
   service: Service,
   randomBytes: RandomBytes,
-  club: NewClub,
+  { key, name, invented }: NewClub,
 ): Promise<FirstRun | null> {
   const clubs = await service.store.listClubs();
   if (clubs.length > 0) return null;
@@ -28,7 +28,7 @@ export async function addFirstClub(
   const memberId = service.newId();
   const createdAt = timestamp(service.now);
   await service.store.addClub(
-    { id: clubId, ...club, createdAt },
+    { id: clubId, key, name, invented, createdAt },
     {
       id: service.newId(),
       clubId,

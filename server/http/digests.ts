@@ -15,9 +15,12 @@ export function digestField(digest: Uint8Array): string {
  * Checks a `Content-Digest` (RFC 9530) against the body it came with. Other algorithms beside
  * SHA-256 are passed over. Throws `digest-unsupported` and `digest-mismatch`.
  */
-export function checkContentDigest(header: string | undefined, body: Uint8Array): void {
+export function checkContentDigest(
+  header: string | readonly string[] | undefined,
+  body: Uint8Array,
+): void {
   if (header === undefined) return;
-  const match = /(?:^|,)\s*sha-256=:([A-Za-z0-9+/]{43}=):\s*(?:,|$)/.exec(header);
+  const match = /(?:^|,)\s*sha-256=:([A-Za-z0-9+/]{43}=):\s*(?:,|$)/.exec(String(header));
   if (match === null) {
     throw new Problem('digest-unsupported', {
       errors: [{ detail: 'There is no SHA-256 digest in it.', header: 'content-digest' }],

@@ -75,3 +75,19 @@ export function pageSchema<Item extends z.ZodType>(item: Item) {
 
 /** What a list's query has to be strict about: nothing unknown. */
 export const noQuery = z.strictObject({});
+
+/** Headers of a read that may be answered with 304; every other header passes as well. */
+export const readHeaders = z.looseObject({
+  'if-none-match': z
+    .string()
+    .optional()
+    .meta({ description: 'The `ETag` of the answer that the client has.' }),
+});
+
+/** Headers of an edit. Leaving `If-Match` out is a 428, not a fault of form. */
+export const editHeaders = z.looseObject({
+  'if-match': z
+    .string()
+    .optional()
+    .meta({ description: 'Needed: the `ETag` of the record as it was read.' }),
+});

@@ -41,6 +41,11 @@ interface Answer {
   readonly content?: Readonly<Record<string, { readonly schema: z.ZodType }>>;
 }
 
+/** What a client that has the present answer already is told. */
+export const notModified = {
+  304: z.undefined().describe('The client has it already: `If-None-Match` names its tag.'),
+};
+
 /** The problems that any operation behind a token may answer with. */
 export const commonProblems: readonly ProblemSlug[] = [
   'invalid-request',
@@ -57,15 +62,15 @@ export const commonProblems: readonly ProblemSlug[] = [
  * with their slugs in the description, so that the document names each one.
  */
 export function answers(
-  own: Readonly<Record<number, Answer>>,
+  own: Readonly<Record<number, Answer | z.ZodType>>,
   problems: readonly ProblemSlug[],
-): Record<number, Answer> {
+): Record<number, Answer | z.ZodType> {
   const slugsByStatus = new Map<number, ProblemSlug[]>();
   for (const slug of new Set(problems)) {
     const { status } = problemKinds[slug];
     slugsByStatus.set(status, [...(slugsByStatus.get(status) ?? []), slug]);
   }
-  const all: Record<number, Answer> = { ...own };
+  const all: Record<number, Answer | z.ZodType> = { ...own };
   for (const [status, slugs] of slugsByStatus) {
     all[status] = {
       description: slugs.map((slug) => `${problemKinds[slug].title} (\`${slug}\`).`).join(' '),

@@ -59,16 +59,18 @@ export const usableSchema = z
     plan: z.string(),
     licence: z.string().nullable(),
     max_swr: z.number(),
+    design_bands: z.array(z.string()),
     bands: z.array(bandSchema),
     cautions: z.array(cautionSchema),
   })
   .meta({ id: 'UsableReport', description: 'Which part of each band of a plan is usable.' });
 
-/** How the sweep was looked at for a report. */
-export interface ReportBasis {
+/** How a sweep is looked at for a report, beside what the report itself says. */
+interface ReportBasis {
   readonly analysisVersion: string;
   readonly plane: Plane;
   readonly referenceOhm: number;
+  readonly designBands: readonly string[];
 }
 
 /** A report as it is sent and stored. */
@@ -80,7 +82,10 @@ export function usableToWire(
   return {
     sweep_id: sweepId,
     antenna_id: antennaId,
-    ...toSnakeCase(basis),
+    analysis_version: basis.analysisVersion,
+    plane: basis.plane,
+    reference_ohm: basis.referenceOhm,
+    design_bands: [...basis.designBands],
     ...toSnakeCase(report),
   };
 }

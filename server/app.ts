@@ -1,0 +1,110 @@
+import helmet from '@fastify/helmet';
+import Fastify, { type FastifyBaseLogger } from 'fastify';
+import {
+  serializerCompiler,
+  validatorCompiler,
+  type ZodTypeProvider,
+} from 'fastify-type-provider-zod';
+import type { OpenAPIV3_1 } from 'openapi-types';
+import { requireToken } from './auth/bearer.ts';
+import { closeSoon } from './closing.ts';
+import { serveDocs } from './docs.ts';
+import { answerErrorsAsProblems, refuseSocket, sendError } from './errors.ts';
+import type { App } from './http/app-type.ts';
+import { keepKnownMethods } from './known-methods.ts';
+import { logAnswers } from './log.ts';
+import { measureRequests } from './metrics.ts';
+import { collectRoutes } from './openapi/collect.ts';
+import { analyzerRoutes } from './routes/analyzers.ts';
+import { antennaRoutes } from './routes/antennas.ts';
+import { healthRoutes, metricsRoutes } from './routes/operations.ts';
+import { planRoutes } from './routes/plans.ts';
+import { problemPageRoutes } from './routes/problem-pages.ts';
+import { siteRoutes } from './routes/sites.ts';
+import { sweepPointRoutes } from './routes/sweep-points.ts';
+import { sweepReportRoutes } from './routes/sweep-reports.ts';
+import { sweepRoutes } from './routes/sweeps.ts';
+import { uploadRoutes } from './routes/upload.ts';
+import type { Service } from './service.ts';
+
+export interface AppParts {
+  readonly service: Service;
+  readonly log: FastifyBaseLogger;
+  /** What /openapi.json and /docs show; `null` collects the routes for making it anew. */
+  readonly document: OpenAPIV3_1.Document | null;
+}
+
+const jsonBodyLimit = 64 * 1024;
+const requestTimeoutMs = 120_000;
+
+/** Builds the HTTP service from its parts; it does not listen yet. */
+export async function buildApp({ service, log, document }: AppParts): Promise<App> {
+  const { publicUrl, newId } = service;
+  const app: App = Fastify({
+    loggerInstance: log,
+    disableRequestLogging: true,
+    genReqId: newId,
+    bodyLimit: jsonBodyLimit,
+    requestTimeout: requestTimeoutMs,
+    return503OnClosing: false,
+    onProtoPoisoning: 'error',
+    onConstructorPoisoning: 'error',
+    frameworkErrors: (error, request, reply) => sendError(error, request, reply, publicUrl),
+    clientErrorHandler: (error, socket) => refuseSocket(error, socket, publicUrl, newId()),
+  }).withTypeProvider<ZodTypeProvider>();
+
+  app.setValidatorCompiler(validatorCompiler);
+  app.setSerializerCompiler(serializerCompiler);
+  app.decorateRequest('actor', null);
+  app.addHook('onRequest', async (request, reply) => {
+    reply.header('x-request-id', request.id);
+  });
+  closeSoon(app);
+  takeJsonOnly(app);
+  keepKnownMethods(app);
+  answerErrorsAsProblems(app, publicUrl);
+  logAnswers(app);
+  const metricsText = measureRequests(app);
+  await app.register(helmet, securityHeaders);
+  if (document === null) await collectRoutes(app);
+  else await serveDocs(app, document);
+
+  healthRoutes(app, service);
+  problemPageRoutes(app);
+  await app.register(async (behindToken: App) => {
+    requireToken(behindToken, service);
+    metricsRoutes(behindToken, metricsText);
+    siteRoutes(behindToken, service);
+    antennaRoutes(behindToken, service);
+    analyzerRoutes(behindToken, service);
+    sweepRoutes(behindToken, service);
+    sweepPointRoutes(behindToken, service);
+    sweepReportRoutes(behindToken, service);
+    planRoutes(behindToken);
+    // In a scope of its own, since it takes any body.
+    await behindToken.register(async (scope: App) => uploadRoutes(scope, service));
+  });
+  return app;
+}
+
+/** Leaves JSON as the only kind of body; poisoned prototypes are refused. */
+function takeJsonOnly(app: App): void {
+  app.removeAllContentTypeParsers();
+  app.addContentTypeParser(
+    ['application/json', 'application/merge-patch+json'],
+    { parseAs: 'string' },
+    app.getDefaultJsonParser('error', 'error'),
+  );
+}
+
+/** Nothing that is answered may be framed, sniffed or run; the docs page has rules of its own. */
+const securityHeaders = {
+  contentSecurityPolicy: {
+    useDefaults: false,
+    directives: { defaultSrc: ["'none'"], baseUri: ["'none'"], frameAncestors: ["'none'"] },
+  },
+  crossOriginResourcePolicy: { policy: 'same-origin' as const },
+  referrerPolicy: { policy: 'no-referrer' as const },
+  // Whether there is TLS is for the proxy in front to say.
+  strictTransportSecurity: false,
+};

@@ -1,0 +1,89 @@
+import { readSweep } from '../core/formats/read-sweep.ts';
+import type { ReadError, ReadLimits, ReadSweep } from '../core/formats/read-types.ts';
+import { fail, ok, type Result } from '../core/result.ts';
+import { basisOf, summaryOf, usableOf } from './reports.ts';
+import type {
+  AntennaRecord,
+  NewSweep,
+  StoredSummary,
+  SweepFacts,
+  SweepMeasured,
+  SweepRecord,
+} from './store/port.ts';
+import { toStoredPoints } from './stored-points.ts';
+
+/** A file on its way in, and what was told about it. */
+export interface Incoming {
+  readonly id: string;
+  readonly clubId: string;
+  readonly receivedAt: string;
+  readonly uploadedBy: string;
+  readonly antenna: AntennaRecord;
+  readonly facts: SweepFacts;
+  readonly bytes: Uint8Array;
+  /** Lower-case hex of `bytes`. */
+  readonly fileSha256: string;
+  readonly fileName: string | null;
+  readonly columns: string | null;
+  readonly port: 1 | 2 | null;
+  readonly limits: ReadLimits;
+}
+
+/**
+ * Reads a file and derives all that is stored with it: points, summary and usable-band report.
+ * Values in, values out (no clock, no store, no HTTP), so that it can move to another thread.
+ */
+export function ingest(incoming: Incoming): Result<NewSweep, ReadError> {
+  const { bytes, columns, port, fileName, limits } = incoming;
+  const read = readSweep(bytes, {
+    limits,
+    ...(columns === null ? {} : { columns }),
+    ...(port === null ? {} : { port }),
+    ...(fileName === null ? {} : { fileName }),
+  });
+  if (!read.ok) return fail(read.error);
+  const record = recordOf(incoming, read.value);
+  return ok({
+    record,
+    file: bytes,
+    points: toStoredPoints(read.value.sweep),
+    summary: derivedFrom(incoming, record, read.value),
+  });
+}
+
+function derivedFrom(
+  { antenna, facts }: Incoming,
+  record: SweepRecord,
+  { sweep, assumptions }: ReadSweep,
+): StoredSummary {
+  const basis = basisOf(antenna.facts, facts.plane);
+  return {
+    analysisVersion: basis.analysisVersion,
+    summaryJson: JSON.stringify(summaryOf(record, sweep, assumptions, basis)),
+    usableJson: JSON.stringify(usableOf(record, sweep, basis)),
+  };
+}
+
+function recordOf(incoming: Incoming, read: ReadSweep): SweepRecord {
+  const { id, clubId, receivedAt, uploadedBy, facts } = incoming;
+  return { id, clubId, receivedAt, uploadedBy, facts, measured: measuredOf(incoming, read) };
+}
+
+function measuredOf(incoming: Incoming, read: ReadSweep): SweepMeasured {
+  const { sweep, format, assumptions, columns = null, port = null } = read;
+  const { frequencyHz, phase, referenceOhm } = sweep;
+  return {
+    fileSha256: incoming.fileSha256,
+    fileBytes: incoming.bytes.length,
+    fileName: incoming.fileName,
+    format,
+    columns,
+    port,
+    phase,
+    referenceOhm,
+    points: frequencyHz.length,
+    lowHz: frequencyHz[0],
+    highHz: frequencyHz[frequencyHz.length - 1],
+    assumptionsJson: JSON.stringify(assumptions),
+  };
+}

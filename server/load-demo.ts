@@ -1,0 +1,70 @@
+import type { DemoClub, DemoUpload } from './demo/club.ts';
+import { sha256 } from './http/digests.ts';
+import { ingest } from './ingest.ts';
+import type { Service } from './service.ts';
+import type { Actor, AntennaRecord } from './store/port.ts';
+
+/** Adds the demo club's records to the actor's club, its sweeps by the way of every upload. */
+export async function loadDemo(service: Service, actor: Actor, demo: DemoClub): Promise<void> {
+  const { store, newId } = service;
+  const siteIds = new Map<string, string>();
+  for (const { key, facts } of demo.sites) {
+    const { id } = await store.addEditable('sites', actor, { id: newId(), key, facts });
+    siteIds.set(key, id);
+  }
+  const analyzerIds = new Map<string, string>();
+  for (const { key, facts } of demo.analyzers) {
+    const { id } = await store.addEditable('analyzers', actor, { id: newId(), key, facts });
+    analyzerIds.set(key, id);
+  }
+  const antennas = new Map<string, AntennaRecord>();
+  for (const { key, siteKey, facts } of demo.antennas) {
+    const fresh = { id: newId(), key, facts: { ...facts, siteId: found(siteIds, siteKey) } };
+    antennas.set(key, await store.addEditable('antennas', actor, fresh));
+  }
+  for (const upload of demo.uploads) {
+    const antenna = found(antennas, upload.antennaKey);
+    const analyzerId = found(analyzerIds, upload.analyzerKey);
+    await keepUpload(service, actor, upload, antenna, analyzerId);
+  }
+}
+
+async function keepUpload(
+  service: Service,
+  actor: Actor,
+  upload: DemoUpload,
+  antenna: AntennaRecord,
+  analyzerId: string,
+): Promise<void> {
+  const { measuredAt, conditions, note, plane, bytes, fileName } = upload;
+  const made = ingest({
+    id: service.newId(),
+    clubId: actor.clubId,
+    receivedAt: actor.at,
+    uploadedBy: actor.memberId,
+    antenna,
+    facts: {
+      antennaId: antenna.id,
+      analyzerId,
+      measuredAt,
+      conditions,
+      note,
+      plane,
+      invented: true,
+    },
+    bytes,
+    fileSha256: sha256(bytes).toString('hex'),
+    fileName,
+    columns: upload.columns ?? null,
+    port: upload.port ?? null,
+    limits: service.limits,
+  });
+  if (!made.ok) throw new Error(`The demo file ${fileName} cannot be read: ${made.error.detail}`);
+  await service.store.addSweep(made.value);
+}
+
+function found<Value>(map: ReadonlyMap<string, Value>, key: string): Value {
+  const value = map.get(key);
+  if (value === undefined) throw new Error(`The demo club names \`${key}\` but does not have it.`);
+  return value;
+}

@@ -1,0 +1,45 @@
+import fastifySwagger from '@fastify/swagger';
+import { jsonSchemaTransform, jsonSchemaTransformObject } from 'fastify-type-provider-zod';
+import type { App } from '../http/app-type.ts';
+
+const description = `A radio club's record of its antenna tests.
+
+Fields may be added to answers at any time: pass over what you do not know. Unknown fields and
+parameters in requests are refused. Times are RFC 3339 in UTC, units stand in the names.`;
+
+/** Collects the schemas of the routes registered from now on, for \`app.swagger()\`. */
+export async function collectRoutes(app: App): Promise<void> {
+  await app.register(fastifySwagger, {
+    openapi: {
+      openapi: '3.1.0',
+      info: {
+        title: 'Sweep Ledger',
+        version: '1',
+        description,
+        license: { name: 'MIT', identifier: 'MIT' },
+      },
+      servers: [{ url: '/', description: 'Where this document was read.' }],
+      tags: [
+        { name: 'sites', description: 'Places where antennas stand.' },
+        { name: 'antennas', description: 'What is measured.' },
+        { name: 'analyzers', description: 'What it is measured with.' },
+        { name: 'sweeps', description: 'Measurements: upload, record, file and points.' },
+        { name: 'reports', description: 'What follows from a sweep.' },
+        { name: 'plans', description: 'Band plans with their sources.' },
+        { name: 'operations', description: 'Health, counters and the pages behind problems.' },
+      ],
+      components: {
+        securitySchemes: {
+          bearerAuth: {
+            type: 'http',
+            scheme: 'bearer',
+            description: 'A token of the club, as the first start prints it.',
+          },
+        },
+      },
+      security: [{ bearerAuth: [] }],
+    },
+    transform: jsonSchemaTransform,
+    transformObject: jsonSchemaTransformObject,
+  });
+}

@@ -1,0 +1,113 @@
+import type { OpenAPIV3_1 } from 'openapi-types';
+import type { App } from '../http/app-type.ts';
+import { sampleFile } from '../sample-file.ts';
+import { operationsOf } from './document.ts';
+
+/** A request whose real answer stands in the document as the example of its operation. */
+interface ExampleCall {
+  readonly method?: 'GET' | 'POST' | 'PATCH';
+  readonly url: string;
+  readonly body?: string | Readonly<Record<string, unknown>>;
+  readonly headers?: Readonly<Record<string, string>>;
+}
+
+/** By operation, in the order in which they are made; `sweep` is a sweep of the demo club. */
+function calls(sweep: string): Readonly<Record<string, ExampleCall>> {
+  const edit = { method: 'PATCH', headers: { 'if-match': '*' } } as const;
+  return {
+    getLiveness: { url: '/livez' },
+    getReadiness: { url: '/readyz' },
+    listSites: { url: '/v1/sites' },
+    getSite: { url: '/v1/sites/hilltop' },
+    addSite: { method: 'POST', url: '/v1/sites', body: { key: 'quarry', name: 'Quarry' } },
+    editSite: { ...edit, url: '/v1/sites/quarry', body: { elevation_m: 310 } },
+    listAntennas: { url: '/v1/antennas?limit=2' },
+    getAntenna: { url: '/v1/antennas/hilltop-20m' },
+    addAntenna: {
+      method: 'POST',
+      url: '/v1/antennas',
+      body: {
+        key: 'quarry-20m',
+        site: 'quarry',
+        name: 'Quarry dipole',
+        kind: 'dipole',
+        design_bands: ['20m'],
+        plan: 'iaru-r1',
+      },
+    },
+    editAntenna: { ...edit, url: '/v1/antennas/quarry-20m', body: { max_swr: 1.5 } },
+    listAnalyzers: { url: '/v1/analyzers' },
+    getAnalyzer: { url: '/v1/analyzers/bench' },
+    addAnalyzer: { method: 'POST', url: '/v1/analyzers', body: { key: 'loan', name: 'On loan' } },
+    editAnalyzer: { ...edit, url: '/v1/analyzers/loan', body: { note: 'given back' } },
+    uploadSweep: {
+      method: 'POST',
+      url: '/v1/antennas/quarry-20m/sweeps?file_name=quarry.s1p&measured_at=2026-05-17T14:30:00Z',
+      body: sampleFile,
+      headers: { 'content-type': 'application/octet-stream' },
+    },
+    listSweeps: { url: '/v1/antennas/hilltop-20m/sweeps?limit=2' },
+    getSweep: { url: `/v1/sweeps/${sweep}` },
+    getSummary: { url: `/v1/sweeps/${sweep}/summary` },
+    getUsable: { url: `/v1/sweeps/${sweep}/usable` },
+    getSweepPoints: { url: `/v1/sweeps/${sweep}/points` },
+    listPlans: { url: '/v1/plans' },
+  };
+}
+
+/** Longer lists are cut in examples: the document is to be read. */
+const longestList = 2;
+
+/** Puts the real answers of the demo club into the document, as examples of its operations. */
+export async function addExamples(
+  document: OpenAPIV3_1.Document,
+  app: App,
+  token: string,
+  sweep: string,
+): Promise<void> {
+  const operations = operationsOf(document);
+  for (const [operationId, call] of Object.entries(calls(sweep))) {
+    const operation = operations.find((candidate) => candidate.operationId === operationId);
+    if (operation === undefined) throw new Error(`There is no operation ${operationId}.`);
+    await addExample(operation, app, token, call);
+  }
+}
+
+async function addExample(
+  operation: OpenAPIV3_1.OperationObject,
+  app: App,
+  token: string,
+  { method = 'GET', url, body, headers }: ExampleCall,
+): Promise<void> {
+  const answer = await app.inject({
+    method,
+    url,
+    headers: { authorization: `Bearer ${token}`, ...headers },
+    ...(body === undefined ? {} : { payload: body }),
+  });
+  const response = operation.responses?.[answer.statusCode];
+  const media = mediaOf(response, 'application/json');
+  if (answer.statusCode >= 300 || media === undefined) {
+    throw new Error(`${method} ${url} answered ${answer.statusCode}: ${answer.body}`);
+  }
+  media.example = shortened(answer.json());
+  const sent = mediaOf(operation.requestBody, 'application/json');
+  if (sent !== undefined && typeof body === 'object') sent.example = body;
+}
+
+function mediaOf(
+  part:
+    | OpenAPIV3_1.ResponseObject
+    | OpenAPIV3_1.RequestBodyObject
+    | OpenAPIV3_1.ReferenceObject
+    | undefined,
+  type: string,
+): OpenAPIV3_1.MediaTypeObject | undefined {
+  return part !== undefined && 'content' in part ? part.content?.[type] : undefined;
+}
+
+function shortened(value: unknown): unknown {
+  if (Array.isArray(value)) return value.slice(0, longestList).map(shortened);
+  if (typeof value !== 'object' || value === null) return value;
+  return Object.fromEntries(Object.entries(value).map(([name, inner]) => [name, shortened(inner)]));
+}

@@ -1,0 +1,108 @@
+import { swrCurve } from '../core/analysis/refined-swr.ts';
+import { analysisVersion, summarise } from '../core/analysis/summarise.ts';
+import { findPlan } from '../core/bands/plans.ts';
+import { usableBands } from '../core/bands/usable.ts';
+import type { Assumption } from '../core/formats/read-types.ts';
+import type { Sweep } from '../core/sweep.ts';
+import { Problem } from './problems.ts';
+import type { Service } from './service.ts';
+import type { AntennaFacts, SweepFacts, SweepRecord } from './store/port.ts';
+import { toSweep } from './stored-points.ts';
+import { toSnakeCase } from './wire/case.ts';
+import { type SweepIdentity, summaryToWire } from './wire/summary.ts';
+import { usableToWire } from './wire/usable.ts';
+
+/** All that a summary or a report follows from, beside the sweep itself. */
+export interface ReportBasis {
+  readonly analysisVersion: string;
+  readonly plane: SweepFacts['plane'];
+  readonly referenceOhm: number;
+  readonly maxSwr: number;
+  readonly plan: string;
+  readonly licence: string | null;
+  readonly designBands: readonly string[];
+}
+
+/** The basis by which an antenna wants its sweeps judged. */
+export function basisOf(antenna: AntennaFacts, plane: SweepFacts['plane']): ReportBasis {
+  const { referenceOhm, maxSwr, plan, licence, designBands } = antenna;
+  return { analysisVersion, plane, referenceOhm, maxSwr, plan, licence, designBands };
+}
+
+/** The basis by which the sweep's antenna wants it judged at present. */
+export async function reportBasisOf(service: Service, record: SweepRecord): Promise<ReportBasis> {
+  const { antennaId, plane } = record.facts;
+  const antenna = await service.store.findEditable('antennas', record.clubId, antennaId);
+  if (antenna === null) throw new Error(`The antenna ${antennaId} of sweep ${record.id} is gone.`);
+  return basisOf(antenna.facts, plane);
+}
+
+/** The summary of a sweep as it is sent. */
+export function summaryOf(
+  record: SweepRecord,
+  sweep: Sweep,
+  assumptions: readonly Assumption[],
+  basis: ReportBasis,
+) {
+  const { plane, referenceOhm, maxSwr } = basis;
+  const summary = summarise(sweep, { plane, referenceOhm, maxSwr, assumptions });
+  return summaryToWire(identityOf(record), summary);
+}
+
+/** The usable-band report of a sweep as it is sent. */
+export function usableOf(record: SweepRecord, sweep: Sweep, basis: ReportBasis) {
+  const { referenceOhm, maxSwr, licence, designBands } = basis;
+  const plan = findPlan(basis.plan);
+  if (plan === null) throw new Error(`The plan ${basis.plan} is gone.`);
+  const curve = swrCurve(sweep, referenceOhm);
+  const report = usableBands(curve, plan, { maxSwr, licence, designBands });
+  return usableToWire(identityOf(record), basis, report);
+}
+
+/** The summary as JSON: the stored text if it was made on this basis, else computed. */
+export async function summaryText(
+  service: Service,
+  record: SweepRecord,
+  basis: ReportBasis,
+): Promise<string> {
+  const stored = await service.store.readSummary(record.clubId, record.id, basis.analysisVersion);
+  if (stored !== null && holds(stored.summaryJson, summaryMark(basis))) return stored.summaryJson;
+  const sweep = await readSweepOf(service, record);
+  const assumptions: Assumption[] = JSON.parse(record.measured.assumptionsJson);
+  return JSON.stringify(summaryOf(record, sweep, assumptions, basis));
+}
+
+/** The report as JSON: the stored text if it was made on this basis, else computed. */
+export async function usableText(
+  service: Service,
+  record: SweepRecord,
+  basis: ReportBasis,
+): Promise<string> {
+  const stored = await service.store.readSummary(record.clubId, record.id, basis.analysisVersion);
+  if (stored !== null && holds(stored.usableJson, toSnakeCase(basis))) return stored.usableJson;
+  return JSON.stringify(usableOf(record, await readSweepOf(service, record), basis));
+}
+
+/** The points of a record as a sweep. */
+export async function readSweepOf(service: Service, record: SweepRecord): Promise<Sweep> {
+  const points = await service.store.readSweepPoints(record.clubId, record.id);
+  if (points === null) throw new Problem('record-corrupt');
+  return toSweep(record.measured, points);
+}
+
+function identityOf({ id, facts }: SweepRecord): SweepIdentity {
+  return { sweepId: id, antennaId: facts.antennaId };
+}
+
+/** The fields by which a stored summary tells what it follows from. */
+function summaryMark({ plane, referenceOhm, maxSwr }: ReportBasis) {
+  return toSnakeCase({ plane, referenceOhm, maxSwr });
+}
+
+/** Whether a stored answer has these fields, so that it is the answer that is asked for. */
+function holds(json: string, mark: object): boolean {
+  const stored = new Map<string, unknown>(Object.entries(JSON.parse(json)));
+  return Object.entries(mark).every(
+    ([name, value]) => JSON.stringify(stored.get(name)) === JSON.stringify(value),
+  );
+}

@@ -1,0 +1,55 @@
+import { z } from 'zod';
+import type { App } from '../http/app-type.ts';
+import { problemListPage, problemPage } from '../pages/problem-page.ts';
+import { Problem, type ProblemSlug, problemKinds } from '../problems.ts';
+import { answers } from '../wire/problem.ts';
+
+const html = (description: string) => ({
+  description,
+  content: { 'text/html': { schema: z.string() } },
+});
+
+/** The pages behind the `type` of problems. */
+export function problemPageRoutes(app: App): void {
+  app.get(
+    '/problems',
+    {
+      schema: {
+        operationId: 'listProblemPages',
+        tags: ['operations'],
+        security: [],
+        summary: 'Every kind of problem',
+        response: answers({ 200: html('A page.') }, ['malformed-request', 'internal']),
+      },
+    },
+    async (_request, reply) => reply.type('text/html; charset=utf-8').send(problemListPage()),
+  );
+
+  app.get(
+    '/problems/:slug',
+    {
+      schema: {
+        operationId: 'getProblemPage',
+        tags: ['operations'],
+        security: [],
+        summary: 'What a kind of problem means and what to do',
+        params: z.strictObject({ slug: z.string().max(40) }),
+        response: answers({ 200: html('A page.') }, [
+          'invalid-request',
+          'malformed-request',
+          'not-found',
+          'internal',
+        ]),
+      },
+    },
+    async (request, reply) => {
+      const { slug } = request.params;
+      if (!isSlug(slug)) throw new Problem('not-found');
+      return reply.type('text/html; charset=utf-8').send(problemPage(slug));
+    },
+  );
+}
+
+function isSlug(text: string): text is ProblemSlug {
+  return Object.hasOwn(problemKinds, text);
+}

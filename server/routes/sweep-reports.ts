@@ -1,0 +1,129 @@
+import { z } from 'zod';
+import type { App } from '../http/app-type.ts';
+import { isNotModified } from '../http/conditional.ts';
+import { derivedTag } from '../http/etags.ts';
+import { Problem } from '../problems.ts';
+import { type ReportBasis, reportBasisOf, summaryText, usableText } from '../reports.ts';
+import type { Service } from '../service.ts';
+import type { SweepRecord } from '../store/port.ts';
+import { readHeaders } from '../wire/common.ts';
+import { withEdits } from '../wire/editable.ts';
+import { answers, jsonAnswer, notModified } from '../wire/problem.ts';
+import { planeSchema, summarySchema } from '../wire/summary.ts';
+import { usableSchema } from '../wire/usable.ts';
+import { findProblems } from './editables.ts';
+import { planFaults } from './plan-reference.ts';
+import { findSweepOrRefuse, sweepParams } from './sweeps.ts';
+
+const tags = ['reports'];
+const planeQuery = planeSchema
+  .optional()
+  .meta({ description: "The plane of the answer; default: the sweep's own." });
+const referenceQuery = z.coerce
+  .number()
+  .positive()
+  .max(10_000)
+  .optional()
+  .meta({ description: "What SWR refers to, in ohms; default: the antenna's reference." });
+
+/** Refuses a plane at which the sweep is not known. Throws `plane-unavailable`. */
+export function refuseOtherPlane(record: SweepRecord, plane: string | undefined): void {
+  if (plane === undefined || plane === record.facts.plane) return;
+  throw new Problem('plane-unavailable', {
+    detail: `The sweep was taken at the plane \`${record.facts.plane}\`; it cannot be given at \`${plane}\`.`,
+    errors: [{ detail: 'Not known at this plane.', parameter: 'plane' }],
+  });
+}
+
+/** What follows from a sweep: its summary and its usable-band report. */
+export function sweepReportRoutes(app: App, service: Service): void {
+  app.get(
+    '/v1/sweeps/:sweep/summary',
+    {
+      schema: {
+        operationId: 'getSummary',
+        tags,
+        summary: 'Where the antenna resonates, and where its SWR is lowest',
+        params: sweepParams,
+        querystring: z.strictObject({ plane: planeQuery, reference_ohm: referenceQuery }),
+        headers: readHeaders,
+        response: answers({ 200: jsonAnswer('The summary.', summarySchema), ...notModified }, [
+          ...findProblems,
+          'plane-unavailable',
+        ]),
+      },
+    },
+    async (request, reply) => {
+      const { plane, reference_ohm } = request.query;
+      const record = await findSweepOrRefuse(request, service, request.params.sweep);
+      refuseOtherPlane(record, plane);
+      const basis = withEdits(await reportBasisOf(service, record), {
+        referenceOhm: reference_ohm,
+      });
+      const tag = derivedTag(['summary', record.id, basis.analysisVersion, basis.referenceOhm]);
+      if (isNotModified(request, reply, tag)) return reply.code(304).send();
+      return reply.type('application/json').send(await summaryText(service, record, basis));
+    },
+  );
+
+  app.get(
+    '/v1/sweeps/:sweep/usable',
+    {
+      schema: {
+        operationId: 'getUsable',
+        tags,
+        summary: 'Which part of each band is usable',
+        params: sweepParams,
+        querystring: z.strictObject({
+          max_swr: z.coerce
+            .number()
+            .gt(1)
+            .max(20)
+            .optional()
+            .meta({ description: "The SWR that counts as usable; default: the antenna's limit." }),
+          plan: z
+            .string()
+            .max(40)
+            .optional()
+            .meta({ description: "Id of the plan; default: the antenna's." }),
+          licence: z
+            .string()
+            .max(40)
+            .optional()
+            .meta({ description: "Operator class; default: the antenna's, if its plan is asked." }),
+          plane: planeQuery,
+        }),
+        headers: readHeaders,
+        response: answers({ 200: jsonAnswer('The report.', usableSchema), ...notModified }, [
+          ...findProblems,
+          'plane-unavailable',
+          'unknown-reference',
+        ]),
+      },
+    },
+    async (request, reply) => {
+      const { plane, plan, licence, max_swr } = request.query;
+      const record = await findSweepOrRefuse(request, service, request.params.sweep);
+      refuseOtherPlane(record, plane);
+      const own = await reportBasisOf(service, record);
+      // Another plan has classes of its own, so the antenna's class does not carry over to it.
+      const basis = withEdits(own, {
+        maxSwr: max_swr,
+        plan,
+        licence: licence ?? (plan === undefined || plan === own.plan ? own.licence : null),
+      });
+      refuseUnknownPlan(basis);
+      const tag = derivedTag(['usable', record.id, JSON.stringify(basis)]);
+      if (isNotModified(request, reply, tag)) return reply.code(304).send();
+      return reply.type('application/json').send(await usableText(service, record, basis));
+    },
+  );
+}
+
+function refuseUnknownPlan({ plan, licence }: ReportBasis): void {
+  const errors = planFaults(plan, licence, {
+    plan: { parameter: 'plan' },
+    licence: { parameter: 'licence' },
+  });
+  if (errors.length > 0) throw new Problem('unknown-reference', { errors });
+}

@@ -1,0 +1,222 @@
+import type { FastifyReply, FastifyRequest } from 'fastify';
+import { z } from 'zod';
+import { actorOf } from '../auth/bearer.ts';
+import type { App } from '../http/app-type.ts';
+import { checkContentDigest, digestField, sha256 } from '../http/digests.ts';
+import { readProblem } from '../http/read-problems.ts';
+import { bodyBytes, uploadedFile } from '../http/upload-body.ts';
+import { ingest } from '../ingest.ts';
+import { Problem } from '../problems.ts';
+import { basisOf, summaryText } from '../reports.ts';
+import type { Service } from '../service.ts';
+import type { AntennaRecord, SweepFacts, SweepRecord } from '../store/port.ts';
+import { idOrKeySchema, timeInputSchema } from '../wire/common.ts';
+import { answers, commonProblems, jsonAnswer } from '../wire/problem.ts';
+import { planeSchema } from '../wire/summary.ts';
+import { sweepWithSummaryJson, sweepWithSummarySchema } from '../wire/sweep.ts';
+import { findOrRefuse, resolveReference } from './editables.ts';
+
+const querystring = z.strictObject({
+  measured_at: timeInputSchema.optional(),
+  analyzer: idOrKeySchema.optional(),
+  conditions: z
+    .string()
+    .max(500)
+    .optional()
+    .meta({ examples: ['wet ground, 4 degrees'] }),
+  note: z.string().max(2000).default(''),
+  plane: planeSchema.default('measured'),
+  columns: z
+    .string()
+    .max(2000)
+    .optional()
+    .meta({ description: 'What the columns of delimited text hold.' }),
+  port: z
+    .enum(['1', '2'])
+    .transform((port) => (port === '1' ? 1 : 2))
+    .optional()
+    .meta({ description: 'Which port of a two-port file the antenna was at.' }),
+  file_name: z.string().min(1).max(255).optional(),
+});
+
+const uploadHeaders = z.looseObject({
+  'content-digest': z.string().optional().meta({
+    description: 'RFC 9530, `sha-256=:<base64>:`: checked against the bytes of the body.',
+  }),
+});
+type UploadQuery = z.output<typeof querystring>;
+
+const binary = { type: 'string', format: 'binary' };
+const requestBody = {
+  description:
+    'The file itself, under any content type, or a form with one part `file`. What kind of file it is is told from its content.',
+  required: true,
+  content: {
+    'application/octet-stream': { schema: binary },
+    'multipart/form-data': {
+      schema: { type: 'object', required: ['file'], properties: { file: binary } },
+    },
+  },
+};
+
+/** How far a clock may run ahead before a time of measurement counts as not yet been. */
+const clockToleranceMs = 24 * 3600 * 1000;
+
+/** The upload of a sweep: the one route that takes any body. */
+export function uploadRoutes(app: App, service: Service): void {
+  app.removeAllContentTypeParsers();
+  app.addContentTypeParser('*', { parseAs: 'buffer' }, (_request, body, done) => done(null, body));
+  app.post(
+    '/v1/antennas/:antenna/sweeps',
+    {
+      bodyLimit: service.limits.maxBytes,
+      schema: {
+        operationId: 'uploadSweep',
+        tags: ['sweeps'],
+        summary: 'Upload a sweep',
+        description:
+          'Keeps the file and answers where the antenna resonates and where its SWR is lowest. The same bytes again are answered with the first record, so repeating is safe. Send `Content-Digest: sha-256=:<base64>:` to have the transfer checked.',
+        params: z.strictObject({ antenna: idOrKeySchema }),
+        querystring,
+        headers: uploadHeaders,
+        'x-request-body': requestBody,
+        response: answers(
+          {
+            200: jsonAnswer(
+              'These bytes are kept already: the first record.',
+              sweepWithSummarySchema,
+            ),
+            201: jsonAnswer('The record that was made.', sweepWithSummarySchema),
+          },
+          [
+            ...commonProblems,
+            'not-found',
+            'digest-mismatch',
+            'digest-unsupported',
+            'file-of-other-antenna',
+            'too-large',
+            'unsupported-media-type',
+            'unknown-file-kind',
+            'unreadable-file',
+            'columns-to-confirm',
+            'unknown-reference',
+            'implausible-fact',
+            'storage-full',
+          ],
+        ),
+      },
+    },
+    async (request, reply) => {
+      const antenna = await findOrRefuse(request, service, 'antennas', request.params.antenna);
+      const facts = await factsOf(request, service, antenna, request.query);
+      return keepSweep(request, reply, service, { antenna, facts, query: request.query });
+    },
+  );
+}
+
+async function factsOf(
+  request: FastifyRequest,
+  service: Service,
+  antenna: AntennaRecord,
+  query: UploadQuery,
+): Promise<SweepFacts> {
+  const { measured_at: measuredAt = null, analyzer } = query;
+  if (measuredAt !== null && Date.parse(measuredAt) > service.now() + clockToleranceMs) {
+    throw new Problem('implausible-fact', {
+      errors: [{ detail: `${measuredAt} has not been yet.`, parameter: 'measured_at' }],
+    });
+  }
+  const place = { parameter: 'analyzer' };
+  return {
+    antennaId: antenna.id,
+    analyzerId:
+      analyzer === undefined
+        ? null
+        : (await resolveReference(request, service, 'analyzers', analyzer, place)).id,
+    measuredAt,
+    conditions: query.conditions ?? null,
+    note: query.note,
+    plane: query.plane,
+    invented: false,
+  };
+}
+
+interface Told {
+  readonly antenna: AntennaRecord;
+  readonly facts: SweepFacts;
+  readonly query: UploadQuery;
+}
+
+async function keepSweep(
+  request: FastifyRequest,
+  reply: FastifyReply,
+  service: Service,
+  { antenna, facts, query }: Told,
+): Promise<FastifyReply> {
+  checkContentDigest(request.headers['content-digest'], bodyBytes(request));
+  const { bytes, fileName } = await uploadedFile(request);
+  const { clubId, memberId, at } = actorOf(request, service);
+  const fileSha256 = sha256(bytes).toString('hex');
+  const known = await service.store.findSweepByFile(clubId, fileSha256);
+  if (known !== null) return sendKnown(reply, service, antenna, known);
+
+  const made = ingest({
+    id: service.newId(),
+    clubId,
+    receivedAt: at,
+    uploadedBy: memberId,
+    antenna,
+    facts,
+    bytes,
+    fileSha256,
+    fileName: query.file_name ?? fileName,
+    columns: query.columns ?? null,
+    port: query.port ?? null,
+    limits: service.limits,
+  });
+  if (!made.ok) throw readProblem(made.error);
+  const { outcome, record } = await service.store.addSweep(made.value);
+  // Somebody else's upload of the same bytes may have come first.
+  if (outcome !== 'added') return sendKnown(reply, service, antenna, record);
+  return sendRecord(reply.code(201), service, record, made.value.summary.summaryJson);
+}
+
+async function sendKnown(
+  reply: FastifyReply,
+  service: Service,
+  antenna: AntennaRecord,
+  record: SweepRecord,
+): Promise<FastifyReply> {
+  const { antennaId } = record.facts;
+  if (antennaId !== antenna.id) {
+    const url = sweepUrl(service, record);
+    throw new Problem('file-of-other-antenna', {
+      headers: { link: `<${url}>; rel="related"` },
+      members: { existing: { sweep_id: record.id, antenna_id: antennaId, url } },
+    });
+  }
+  const summaryJson = await summaryText(
+    service,
+    record,
+    basisOf(antenna.facts, record.facts.plane),
+  );
+  return sendRecord(reply.code(200), service, record, summaryJson);
+}
+
+function sendRecord(
+  reply: FastifyReply,
+  service: Service,
+  record: SweepRecord,
+  summaryJson: string,
+): FastifyReply {
+  const body = Buffer.from(sweepWithSummaryJson(record, summaryJson));
+  return reply
+    .header('location', sweepUrl(service, record))
+    .header('repr-digest', digestField(sha256(body)))
+    .type('application/json; charset=utf-8')
+    .send(body);
+}
+
+function sweepUrl(service: Service, record: SweepRecord): string {
+  return `${service.publicUrl}/v1/sweeps/${record.id}`;
+}

@@ -81,7 +81,7 @@ function bandUse(asked: Asked, band: PlanBand): BandUse {
 }
 
 function segmentUse(asked: Asked, band: PlanBand, segment: BandSegment): SegmentUse {
-  const general = segment.status === 'national' ? [] : intersectRanges([segment], band.ranges);
+  const general = intersectRanges([segment], band.ranges);
   const isWhole = widthOf(general) === segment.highHz - segment.lowHz;
   const permission = permissionOf(general, isWhole ? [] : [segment]);
   const measure = general.length > 0 ? general : [segment];

@@ -73,6 +73,15 @@ describe('a band that was swept as a whole', () => {
     });
   });
 
+  it('has no span where SWR falls to the limit just at its edge', () => {
+    const touching: Polyline[0] = [
+      [13_900_000, 1],
+      [14_000_000, 2],
+      [14_400_000, 6],
+    ];
+    expect(onlyBand([touching])).toMatchObject({ verdict: 'not_usable', spans: [] });
+  });
+
   it('counts as swept if the sweep stops within a hertz of its edge', () => {
     const band = onlyBand([
       [
@@ -324,6 +333,12 @@ describe('rows that only a national administration opens', () => {
       ranges: [],
     });
     expect(band.detail).toContain('whatever the SWR');
+  });
+
+  it('make such a band not usable also where it was swept in part', () => {
+    const band = onlyBand(flat(70_000_000, 71_000_000), 'national-4m');
+    expect(band).toMatchObject({ verdict: 'not_usable', usableFraction: 0 });
+    expect(band.sweptFraction).toBeCloseTo(5 / 6, 12);
   });
 
   it('leave a band that has no others not swept until it is', () => {

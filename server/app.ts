@@ -1,5 +1,5 @@
 import helmet from '@fastify/helmet';
-import Fastify, { type FastifyBaseLogger } from 'fastify';
+import Fastify, { type FastifyBaseLogger, LogController } from 'fastify';
 import {
   serializerCompiler,
   validatorCompiler,
@@ -42,7 +42,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
   const { publicUrl, newId } = service;
   const app: App = Fastify({
     loggerInstance: log,
-    disableRequestLogging: true,
+    logController: new LogController({ disableRequestLogging: true }),
     genReqId: newId,
     bodyLimit: jsonBodyLimit,
     requestTimeout: requestTimeoutMs,
@@ -59,13 +59,14 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
   app.addHook('onRequest', async (request, reply) => {
     reply.header('x-request-id', request.id);
   });
-  closeSoon(app);
   takeJsonOnly(app);
   keepKnownMethods(app);
-  answerErrorsAsProblems(app, publicUrl);
   logAnswers(app);
   const metricsText = measureRequests(app);
   await app.register(helmet, securityHeaders);
+  // After the hooks above, so that a refusal is logged, counted and has its headers too.
+  answerErrorsAsProblems(app, publicUrl);
+  closeSoon(app);
   if (document === null) await collectRoutes(app);
   else await serveDocs(app, document);
 
@@ -91,7 +92,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
 function takeJsonOnly(app: App): void {
   app.removeAllContentTypeParsers();
   app.addContentTypeParser(
-    ['application/json', 'application/merge-patch+json'],
+    'application/json',
     { parseAs: 'string' },
     app.getDefaultJsonParser('error', 'error'),
   );

@@ -33,7 +33,8 @@ export function sendError(
   const { status } = problemKinds[problem.slug];
   if (status >= 500) request.log.error({ err: error }, 'request failed');
   const body = problemBody(problem.slug, problem.parts, publicUrl, request.id);
-  reply.header('cache-control', 'no-store');
+  // An error before the hooks have run has no id yet.
+  reply.header('x-request-id', request.id).header('cache-control', 'no-store');
   reply.removeHeader('etag');
   for (const [name, value] of Object.entries(problem.parts.headers ?? {})) {
     reply.header(name, value);

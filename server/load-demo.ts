@@ -36,7 +36,8 @@ async function keepUpload(
   antenna: AntennaRecord,
   analyzerId: string,
 ): Promise<void> {
-  const { measuredAt, conditions, note, plane, bytes, fileName } = upload;
+  const { conditions, note, plane, bytes, fileName } = upload;
+  const measuredAt = new Date(upload.measuredAt).toISOString();
   const made = ingest({
     id: service.newId(),
     clubId: actor.clubId,

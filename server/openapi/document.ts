@@ -6,7 +6,10 @@ type Operation = OpenAPIV3_1.OperationObject;
 /** The OpenAPI document of an app that was built with `document: null`, without examples. */
 export function documentOf(app: App): OpenAPIV3_1.Document {
   const document = app.swagger() as OpenAPIV3_1.Document;
-  for (const operation of operationsOf(document)) placeRequestBody(operation);
+  for (const operation of operationsOf(document)) {
+    placeRequestBody(operation);
+    placeHeaders(operation);
+  }
   pruneSchemas(document);
   return document;
 }
@@ -26,6 +29,29 @@ function placeRequestBody(
   if (body === undefined) return;
   operation.requestBody = body;
   delete operation['x-request-body'];
+}
+
+/** What answers of a status carry in their header, in every operation alike. */
+const headersByStatus: Readonly<Record<string, Readonly<Record<string, string>>>> = {
+  201: { Location: 'Where the record is.' },
+  401: { 'WWW-Authenticate': 'The challenge of RFC 6750.' },
+  503: { 'Retry-After': 'Seconds.' },
+};
+
+function placeHeaders({ responses = {} }: Operation): void {
+  const isConditional = '304' in responses;
+  for (const [status, response] of Object.entries(responses)) {
+    if ('$ref' in response) continue;
+    const named = { ...headersByStatus[status] };
+    if (isConditional && (status === '200' || status === '304'))
+      named['ETag'] = 'Names this state.';
+    for (const [name, description] of Object.entries(named)) {
+      response.headers = {
+        ...response.headers,
+        [name]: { description, schema: { type: 'string' } },
+      };
+    }
+  }
 }
 
 /** Drops the schemas that nothing refers to: each is made once for input and once for output. */

@@ -38,6 +38,7 @@ export function problemPageRoutes(app: App): void {
           'invalid-request',
           'malformed-request',
           'not-found',
+          'uri-too-long',
           'internal',
         ]),
       },

@@ -52,6 +52,7 @@ export const commonProblems: readonly ProblemSlug[] = [
   'malformed-request',
   'token-in-url',
   'unauthenticated',
+  'uri-too-long',
   'headers-too-large',
   'internal',
   'unavailable',

@@ -59,7 +59,10 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
   return Object.freeze({
     host: settings.HOST,
     port: settings.PORT,
-    publicUrl: (settings.PUBLIC_URL ?? httpUrl(settings.HOST, settings.PORT)).replace(/\/+$/, ''),
+    publicUrl: (settings.PUBLIC_URL ?? httpUrl(reachable(settings.HOST), settings.PORT)).replace(
+      /\/+$/,
+      '',
+    ),
     dataDir: settings.DATA_DIR,
     clubName: settings.CLUB_NAME,
     demo: settings.DEMO === 'on',
@@ -68,6 +71,11 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     maxPoints: settings.MAX_POINTS,
     shutdownSeconds: settings.SHUTDOWN_SECONDS,
   });
+}
+
+/** A listener on all addresses is reached by one of them. */
+function reachable(host: string): string {
+  return host === '0.0.0.0' || host === '::' ? '127.0.0.1' : host;
 }
 
 /** The URL under which a local listener is reached; an IPv6 address gets its brackets. */

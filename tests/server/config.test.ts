@@ -10,6 +10,7 @@ describe('the configuration', () => {
 
   it('takes the public URL from host and port, unless told otherwise', () => {
     expect(readConfig({ PORT: '9000' }).publicUrl).toBe('http://127.0.0.1:9000');
+    expect(readConfig({ HOST: '0.0.0.0' }).publicUrl).toBe('http://127.0.0.1:8080');
     expect(readConfig({ HOST: '::1' }).publicUrl).toBe('http://[::1]:8080');
     expect(readConfig({ PUBLIC_URL: 'https://club.example/' }).publicUrl).toBe(
       'https://club.example',

@@ -1,4 +1,4 @@
-import { type ChildProcess, spawn } from 'node:child_process';
+import { type ChildProcess, spawn, spawnSync } from 'node:child_process';
 import { once } from 'node:events';
 import { existsSync, mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
 import { Agent, request } from 'node:http';
@@ -145,6 +145,40 @@ describe('the program', () => {
     const list = await fetch(`${running.url}/v1/antennas/b/sweeps`, { headers: headers() });
     const { items } = (await list.json()) as { items: unknown[] };
     expect(items).toHaveLength(2);
+  });
+});
+
+describe('a request that never completes', () => {
+  it('does not keep the program from ending at its deadline', async () => {
+    const folder = mkdtempSync(join(tmpdir(), 'sweep-ledger-deadline-'));
+    const running = await start({ DATA_DIR: folder, DEMO: 'off', SHUTDOWN_SECONDS: '1' });
+    const token = /sl_[0-9A-Za-z]+/.exec(running.output())?.[0];
+    const hanging = request(`${running.url}/v1/antennas/none/sweeps`, {
+      method: 'POST',
+      headers: { authorization: `Bearer ${token}`, 'content-length': 100 },
+    });
+    const cut = once(hanging, 'error');
+    hanging.write('a part of the body');
+    expect((await fetch(`${running.url}/livez`)).status).toBe(200);
+    expect(await stop(running)).toBe(0);
+    await cut;
+    rmSync(folder, { recursive: true, force: true });
+  });
+});
+
+const hasCurl = spawnSync('curl', ['--version']).status === 0;
+
+describe.skipIf(!hasCurl)('the commands that a first start prints', () => {
+  it.each(['on', 'off'])('lead to a first record when they are pasted (DEMO=%s)', async (demo) => {
+    const folder = mkdtempSync(join(tmpdir(), 'sweep-ledger-first-'));
+    const running = await start({ DATA_DIR: folder, DEMO: demo });
+    const [printed] = running.output().split('Sweep Ledger listens on');
+    const commands = printed.slice(printed.indexOf('\n\n  ', printed.indexOf('sl_')));
+    const { stdout } = spawnSync('bash', ['-ec', commands], { encoding: 'utf8' });
+    expect(stdout).toContain('"minimum_swr":{');
+    expect(stdout).toContain('"file":{"sha256":');
+    expect(await stop(running)).toBe(0);
+    rmSync(folder, { recursive: true, force: true });
   });
 });
 

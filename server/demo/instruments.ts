@@ -60,9 +60,9 @@ export const instruments: Readonly<Record<DemoAnalyzerKey, Instrument>> = {
   handheld: {
     facts: inventedFacts('Field handheld', readsHigh.text),
     errors: {
-      frequencyScale: 1.0012,
-      directivity: { re: 0.016, im: 0.012 },
-      tracking: { re: 1.008, im: 0 },
+      frequencyScale: 1.003,
+      directivity: { re: 0.004, im: 0.003 },
+      tracking: { re: 1.003, im: 0 },
       noise: 0.002,
     },
     points: () => 101,

@@ -69,7 +69,7 @@ export const retuned = story({
 export const readsHigh = story({
   key: 'analyzer-reads-high',
   analyzerKey: 'handheld',
-  text: 'The field handheld shows frequencies 0.12 % too high and has an error of about 0.02 in reflection.',
+  text: 'The field handheld shows frequencies 0.3 % too high.',
 });
 
 export const demoStories: readonly DemoStory[] = [

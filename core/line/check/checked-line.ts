@@ -31,7 +31,7 @@ export interface LocatedDiscontinuity {
   readonly magnitude: number;
   /** |reflection| at its place, freed of the cable's two-way loss; null without a cable. */
   readonly magnitudeThere: number | null;
-  /** `echo`: beyond the end, so a reflection that went to and fro. */
+  /** `echo`: a reflection that went to and fro between others, or lies beyond the end. */
   readonly kind: 'near_end' | 'on_line' | 'end' | 'echo';
 }
 

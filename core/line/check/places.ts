@@ -7,6 +7,8 @@ import type { ReflectometryGrid } from './grid.ts';
 
 /** Of the strongest reflection: one at the stated length that has as much is taken for the end. */
 const END_SHARE = 0.3;
+/** Both orders of a pair add up, and short faults reflect more towards the top of the sweep. */
+const ECHO_MARGIN = 4;
 
 /** The strongest reflection beyond the near end, or that at the stated length if it is a match for it. */
 export function endPlace(
@@ -38,8 +40,8 @@ export function located(
     const lossDb = (attenuationDbPer100M(cable.attenuation, middleHz) * distanceM) / 100;
     return Math.exp((2 * Math.max(0, lossDb)) / DB_PER_NEPER);
   };
-  return places.found
-    .map((place) => {
+  const seen = places.found
+    .map((place): LocatedDiscontinuity => {
       const grown = growth(place.distanceM);
       return {
         distanceM: place.distanceM,
@@ -50,6 +52,41 @@ export function located(
       };
     })
     .sort((a, b) => a.distanceM - b.distanceM);
+  return seen.map(
+    (place): LocatedDiscontinuity =>
+      place.kind === 'on_line' && isEcho(place, seen, places.separableM)
+        ? { ...place, kind: 'echo' }
+        : place,
+  );
+}
+
+/**
+ * A wave that turned at a, back at c and again at b arrives from a + b - c with the product of the
+ * three reflections. A place where two others would put such an echo, no stronger than it, is one.
+ */
+function isEcho(
+  place: LocatedDiscontinuity,
+  seen: readonly LocatedDiscontinuity[],
+  separableM: number,
+): boolean {
+  const before = seen.filter((other) => place.distanceM - other.distanceM > separableM / 2);
+  return before.some((a) =>
+    before.some((b) =>
+      before.some((c) => {
+        if (!(c.distanceM < a.distanceM && c.distanceM < b.distanceM)) return false;
+        const from = a.distanceM + b.distanceM - c.distanceM;
+        const product = strength(a) * strength(b) * strength(c);
+        return (
+          Math.abs(from - place.distanceM) < separableM / 2 &&
+          strength(place) <= ECHO_MARGIN * product
+        );
+      }),
+    ),
+  );
+}
+
+function strength(place: LocatedDiscontinuity): number {
+  return place.magnitudeThere ?? place.magnitude;
 }
 
 function kindOf(

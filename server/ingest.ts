@@ -52,11 +52,11 @@ export function ingest(incoming: Incoming): Result<NewSweep, ReadError> {
 }
 
 function derivedFrom(
-  { antenna, facts }: Incoming,
+  { antenna }: Incoming,
   record: SweepRecord,
   { sweep, assumptions }: ReadSweep,
 ): StoredSummary {
-  const basis = basisOf(antenna.facts, facts.plane);
+  const basis = basisOf(antenna.facts, record);
   return {
     analysisVersion: basis.analysisVersion,
     summaryJson: JSON.stringify(summaryOf(record, sweep, assumptions, basis)),

@@ -101,10 +101,10 @@ export const problemKinds = {
   },
   'phase-unknown': {
     status: 409,
-    title: 'The sweep lacks the phase that this form needs',
+    title: 'The sweep lacks the phase that this needs',
     meaning:
-      'The form writes complex reflection, but the sign of the reactance or the whole phase was not measured; it would have to be invented.',
-    remedy: 'Ask for JSON or CSV, which carry what is known.',
+      'The answer needs the complex reflection, but the sign of the reactance or the whole phase was not measured; it would have to be invented.',
+    remedy: 'Ask for points as JSON or CSV, and for SWR against the reference of the file.',
   },
   stale: {
     status: 412,

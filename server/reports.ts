@@ -1,4 +1,6 @@
+import { standingCautions } from '../core/advice/cautions.ts';
 import { swrCurve } from '../core/analysis/refined-swr.ts';
+import { renormaliseSweep } from '../core/analysis/renormalise-sweep.ts';
 import { analysisVersion, summarise } from '../core/analysis/summarise.ts';
 import { findPlan } from '../core/bands/plans.ts';
 import { usableBands } from '../core/bands/usable.ts';
@@ -6,7 +8,7 @@ import type { Assumption } from '../core/formats/read-types.ts';
 import type { Sweep } from '../core/sweep.ts';
 import { Problem } from './problems.ts';
 import type { Service } from './service.ts';
-import type { AntennaFacts, SweepFacts, SweepRecord } from './store/port.ts';
+import type { AntennaFacts, SweepFacts, SweepMeasured, SweepRecord } from './store/port.ts';
 import { toSweep } from './stored-points.ts';
 import { toSnakeCase } from './wire/case.ts';
 import { type SweepIdentity, summaryToWire } from './wire/summary.ts';
@@ -23,18 +25,29 @@ export interface ReportBasis {
   readonly designBands: readonly string[];
 }
 
-/** The basis by which an antenna wants its sweeps judged. */
-export function basisOf(antenna: AntennaFacts, plane: SweepFacts['plane']): ReportBasis {
-  const { referenceOhm, maxSwr, plan, licence, designBands } = antenna;
+/** What of a record bears on how its sweep can be judged. */
+export interface JudgedRecord {
+  readonly facts: Pick<SweepFacts, 'plane'>;
+  readonly measured: Pick<SweepMeasured, 'phase' | 'referenceOhm'>;
+}
+
+/**
+ * The basis by which an antenna wants a sweep judged. A sweep without phase keeps the reference of
+ * its file: it cannot be moved to another.
+ */
+export function basisOf(antenna: AntennaFacts, { facts, measured }: JudgedRecord): ReportBasis {
+  const { maxSwr, plan, licence, designBands } = antenna;
+  const { plane } = facts;
+  const referenceOhm = measured.phase === 'none' ? measured.referenceOhm : antenna.referenceOhm;
   return { analysisVersion, plane, referenceOhm, maxSwr, plan, licence, designBands };
 }
 
 /** The basis by which the sweep's antenna wants it judged at present. */
 export async function reportBasisOf(service: Service, record: SweepRecord): Promise<ReportBasis> {
-  const { antennaId, plane } = record.facts;
+  const { antennaId } = record.facts;
   const antenna = await service.store.findEditable('antennas', record.clubId, antennaId);
   if (antenna === null) throw new Error(`The antenna ${antennaId} of sweep ${record.id} is gone.`);
-  return basisOf(antenna.facts, plane);
+  return basisOf(antenna.facts, record);
 }
 
 /** The summary of a sweep as it is sent. */
@@ -44,9 +57,10 @@ export function summaryOf(
   assumptions: readonly Assumption[],
   basis: ReportBasis,
 ) {
-  const { plane, referenceOhm, maxSwr } = basis;
-  const summary = summarise(sweep, { plane, referenceOhm, maxSwr, assumptions });
-  return summaryToWire(identityOf(record), summary);
+  const { plane, referenceOhm } = basis;
+  const summary = summarise(sweep, { plane, referenceOhm, assumptions });
+  const cautions = [...summary.cautions, ...standingCautions];
+  return summaryToWire(identityOf(record), { ...summary, cautions });
 }
 
 /** The usable-band report of a sweep as it is sent. */
@@ -54,7 +68,7 @@ export function usableOf(record: SweepRecord, sweep: Sweep, basis: ReportBasis) 
   const { referenceOhm, maxSwr, licence, designBands } = basis;
   const plan = findPlan(basis.plan);
   if (plan === null) throw new Error(`The plan ${basis.plan} is gone.`);
-  const curve = swrCurve(sweep, referenceOhm);
+  const curve = swrCurve(renormaliseSweep(sweep, referenceOhm));
   const report = usableBands(curve, plan, { maxSwr, licence, designBands });
   return usableToWire(identityOf(record), basis, report);
 }
@@ -95,8 +109,8 @@ function identityOf({ id, facts }: SweepRecord): SweepIdentity {
 }
 
 /** The fields by which a stored summary tells what it follows from. */
-function summaryMark({ plane, referenceOhm, maxSwr }: ReportBasis) {
-  return toSnakeCase({ plane, referenceOhm, maxSwr });
+function summaryMark({ plane, referenceOhm }: ReportBasis) {
+  return toSnakeCase({ plane, referenceOhm });
 }
 
 /** Whether a stored answer has these fields, so that it is the answer that is asked for. */

@@ -35,6 +35,16 @@ export function refuseOtherPlane(record: SweepRecord, plane: string | undefined)
   });
 }
 
+/** Refuses another reference for a sweep that cannot be moved to it. Throws `phase-unknown`. */
+function refuseOtherReference({ measured }: SweepRecord, referenceOhm: number | undefined): void {
+  if (measured.phase !== 'none' || referenceOhm === undefined) return;
+  if (referenceOhm === measured.referenceOhm) return;
+  throw new Problem('phase-unknown', {
+    detail: `Without phase SWR is known against ${measured.referenceOhm} ohm only.`,
+    errors: [{ detail: 'Not known against this.', parameter: 'reference_ohm' }],
+  });
+}
+
 /** What follows from a sweep: its summary and its usable-band report. */
 export function sweepReportRoutes(app: App, service: Service): void {
   app.get(
@@ -50,6 +60,7 @@ export function sweepReportRoutes(app: App, service: Service): void {
         response: answers({ 200: jsonAnswer('The summary.', summarySchema), ...notModified }, [
           ...findProblems,
           'plane-unavailable',
+          'phase-unknown',
         ]),
       },
     },
@@ -57,6 +68,7 @@ export function sweepReportRoutes(app: App, service: Service): void {
       const { plane, reference_ohm } = request.query;
       const record = await findSweepOrRefuse(request, service, request.params.sweep);
       refuseOtherPlane(record, plane);
+      refuseOtherReference(record, reference_ohm);
       const basis = withEdits(await reportBasisOf(service, record), {
         referenceOhm: reference_ohm,
       });

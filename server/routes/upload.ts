@@ -195,11 +195,7 @@ async function sendKnown(
       members: { existing: { sweep_id: record.id, antenna_id: antennaId, url } },
     });
   }
-  const summaryJson = await summaryText(
-    service,
-    record,
-    basisOf(antenna.facts, record.facts.plane),
-  );
+  const summaryJson = await summaryText(service, record, basisOf(antenna.facts, record));
   return sendRecord(reply.code(200), service, record, summaryJson);
 }
 

@@ -44,7 +44,9 @@ export function judgeRemoval(removal: Removal): Conditioning {
   const contradicted = impossible?.code === 'line_loss_impossible';
   const swr = contradicted ? 'worthless' : standing(medianMagnitudeU95);
   const impedance = contradicted ? 'worthless' : standing(medianReflectionU95);
-  if (impedance !== 'good') reasons.push(uncertainty(swr, impedance, medianReflectionU95));
+  if (impedance !== 'good' && !contradicted) {
+    reasons.push(uncertainty(swr, impedance, medianReflectionU95));
+  }
   return { swr, impedance, medianReflectionU95, medianMagnitudeU95, medianMagnification, reasons };
 }
 

@@ -69,5 +69,5 @@ export function ratioFigure(scores: readonly CaseScore[], quantity: Quantity): B
 /** Without the hundredth part whose estimate is worst. */
 function trimmed(all: readonly Measured[]): Measured[] {
   const ranked = [...all].sort((a, b) => Math.abs(a.estimate) - Math.abs(b.estimate));
-  return ranked.slice(0, Math.ceil(0.99 * ranked.length));
+  return ranked.slice(0, Math.floor(0.99 * ranked.length));
 }

@@ -1,0 +1,55 @@
+import { beforeAll, describe, expect, it } from 'vitest';
+import { runBench } from './bench.ts';
+import type { BenchReport } from './figure.ts';
+import { reportOf } from './report.ts';
+import { summaryEstimator } from './summary-estimator.ts';
+
+/**
+ * A short run of the accuracy bench with a fixed seed. The limits are loose beside those of the full
+ * run, since a hundred cases cannot show one part in ten thousand, and tight enough to fail where
+ * a refinement, a half-width or the treatment of noise is lost.
+ */
+describe('a summary of a hundred random antennas', () => {
+  let report: BenchReport;
+  beforeAll(() => {
+    report = reportOf(runBench({ seed: 3, cases: 100 }, summaryEstimator));
+  }, 60_000);
+
+  const valueOf = (key: string, part?: string): number => {
+    const { value } = report[key];
+    if (typeof value === 'number') return value;
+    return part === undefined ? Number.NaN : value[part];
+  };
+
+  it('places resonances without noise far below the step', () => {
+    expect(valueOf('noise_free_resonance_error_steps', 'median')).toBeLessThan(0.001);
+    expect(valueOf('noise_free_resonance_error_steps', 'p99')).toBeLessThan(0.02);
+  });
+
+  it('places the SWR minimum without noise far below the step', () => {
+    expect(valueOf('noise_free_min_swr_error_steps')).toBeLessThan(0.02);
+  });
+
+  it('comes near to a fit that knows the form of the antenna', () => {
+    expect(valueOf('resonance_rms_vs_model_fit')).toBeLessThan(2);
+    expect(valueOf('min_swr_rms_vs_model_fit')).toBeLessThan(2);
+  });
+
+  it.each(['resonance', 'min_swr_frequency', 'min_swr', 'span_edge'])(
+    'states half-widths that hold the true %s about as often as they promise',
+    (quantity) => {
+      expect(valueOf('coverage_95', quantity)).toBeGreaterThan(0.89);
+      const { detail } = report['coverage_95'];
+      expect(detail[quantity]).toHaveProperty('median_half_width_over_rms_error');
+    },
+  );
+
+  it('neither misses a clear resonance nor makes one up', () => {
+    expect(report['resonance_missed'].detail['missed']).toBeLessThanOrEqual(1);
+    expect(report['resonance_invented'].detail['invented']).toBeLessThanOrEqual(1);
+  });
+
+  it('calls no band usable that is not, beyond the stated half-width', () => {
+    expect(valueOf('verdict_wrong')).toBe(0);
+  });
+});

@@ -67,6 +67,10 @@ def main(path, port):
     lowest = int(np.argmin(swr))
     around = swr[max(0, lowest - 2) : lowest + 3]
     answer = {
+        "frequency_hz": frequency.tolist(),
+        "re": reflection.real.tolist(),
+        "im": reflection.imag.tolist(),
+        "reference_ohm": reference,
         "crossings": crossings(frequency, impedance.imag),
         "lowest": {
             "frequency_hz": frequency[lowest],

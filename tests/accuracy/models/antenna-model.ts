@@ -8,9 +8,10 @@ export type FamilyName =
   | 'coupled_resonators'
   | 'loaded_short_dipole';
 
-/** One antenna of a family: the parameters that a fit may move, all positive unless listed signed. */
+/** One antenna of a family. */
 export interface Antenna {
   readonly family: AntennaFamily;
+  /** What a fit of the family's form may move. */
   readonly parameters: readonly number[];
   /** About where it is meant to be used, hertz. */
   readonly nominalHz: number;
@@ -27,9 +28,4 @@ export interface AntennaFamily {
   scales(parameters: readonly number[]): readonly number[];
   impedance(frequencyHz: number, parameters: readonly number[]): Impedance;
   draw(random: Random): Antenna;
-}
-
-/** Each parameter its own scale: fits for parameters that cannot be zero. */
-export function relativeScales(parameters: readonly number[]): readonly number[] {
-  return parameters.map((value) => Math.abs(value));
 }

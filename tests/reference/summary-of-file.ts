@@ -26,6 +26,5 @@ export function summaryOfFile(bytes: Uint8Array, maxSwr = 2): Summary {
   const read = readSweep(bytes, { fileName: 'reference.s1p' });
   if (!read.ok) throw new Error(read.error.detail);
   const { sweep, assumptions } = read.value;
-  const { referenceOhm } = sweep;
-  return summarise(sweep, { plane: 'measured', referenceOhm, maxSwr, assumptions });
+  return summarise(sweep, { swrLimits: [maxSwr], assumptions });
 }

@@ -39,20 +39,15 @@ function sweepOf({ bytes, columns, port, fileName }: DemoUpload) {
 }
 
 function summaryOf(upload: DemoUpload): Summary {
-  return summarise(sweepOf(upload), {
-    plane: 'measured',
-    referenceOhm: 50,
-    maxSwr: 2,
-    assumptions: [],
-  });
+  return summarise(sweepOf(upload), { swrLimits: [2] });
 }
 
 function swrAt(upload: DemoUpload, frequencyHz: number): number {
-  return swrCurve(sweepOf(upload), 50).extremes(frequencyHz, frequencyHz)?.worstSwr ?? Number.NaN;
+  return swrCurve(sweepOf(upload)).extremes(frequencyHz, frequencyHz)?.worstSwr ?? Number.NaN;
 }
 
 function bandOf(upload: DemoUpload, band: string): BandUse | undefined {
-  const curve = swrCurve(sweepOf(upload), 50);
+  const curve = swrCurve(sweepOf(upload));
   const { bands } = usableBands(curve, knownPlan('iaru-r1'), { maxSwr: 2 });
   return bands.find((use) => use.band === band);
 }

@@ -31,7 +31,8 @@ export interface InstrumentErrors {
 
 /** Since then the handheld tells the sign of a reactance and the logger the whole reflection. */
 const newFirmware = '2025-07-01T00:00:00Z';
-const wideSweepHz = 5_000_000;
+/** A sweep over more than half an octave spans several bands. */
+const wideRatio = Math.SQRT2;
 
 const benchFiles: readonly WriteSweepFile[] = [
   touchstone1('HZ', 'RI'),
@@ -54,7 +55,7 @@ export const instruments: Readonly<Record<DemoAnalyzerKey, Instrument>> = {
       tracking: { re: 1.001, im: 0 },
       noise: 0.0004,
     },
-    points: ({ lowHz, highHz }) => (highHz - lowHz > wideSweepHz ? 1601 : 401),
+    points: ({ lowHz, highHz }) => (highHz > lowHz * wideRatio ? 801 : 401),
     fileOf: (visitNumber) => benchFiles[visitNumber % benchFiles.length],
   },
   handheld: {

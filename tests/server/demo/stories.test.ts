@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { swrCurve } from '../../../core/analysis/refined-swr.ts';
 import { summarise } from '../../../core/analysis/summarise.ts';
 import type { Summary } from '../../../core/analysis/summary.ts';
+import type { SwrCurve } from '../../../core/analysis/swr-curve.ts';
 import { usableBands } from '../../../core/bands/usable.ts';
 import type { BandUse } from '../../../core/bands/usable-report.ts';
 import { readSweep } from '../../../core/formats/read-sweep.ts';
@@ -28,6 +29,17 @@ function uploadsOf(antennaKey: string, analyzerKey?: string): readonly DemoUploa
   return own;
 }
 
+/** Analysed once: several stories look at the same sweep. */
+const curves = new Map<DemoUpload, SwrCurve>();
+
+function curveOf(upload: DemoUpload): SwrCurve {
+  const known = curves.get(upload);
+  if (known !== undefined) return known;
+  const curve = swrCurve(sweepOf(upload));
+  curves.set(upload, curve);
+  return curve;
+}
+
 function sweepOf({ bytes, columns, port, fileName }: DemoUpload) {
   const told = {
     ...(columns === undefined ? {} : { columns }),
@@ -43,12 +55,11 @@ function summaryOf(upload: DemoUpload): Summary {
 }
 
 function swrAt(upload: DemoUpload, frequencyHz: number): number {
-  return swrCurve(sweepOf(upload)).extremes(frequencyHz, frequencyHz)?.worstSwr ?? Number.NaN;
+  return curveOf(upload).extremes(frequencyHz, frequencyHz)?.worstSwr ?? Number.NaN;
 }
 
 function bandOf(upload: DemoUpload, band: string): BandUse | undefined {
-  const curve = swrCurve(sweepOf(upload));
-  const { bands } = usableBands(curve, knownPlan('iaru-r1'), { maxSwr: 2 });
+  const { bands } = usableBands(curveOf(upload), knownPlan('iaru-r1'), { maxSwr: 2 });
   return bands.find((use) => use.band === band);
 }
 
@@ -136,7 +147,7 @@ describe('the off-centre-fed wire', () => {
       expect(Math.abs(at20m(upload) - at20m(first)) > 0.3, upload.measuredAt).toBe(leaks);
     }
     expect(changed).toBe(3);
-  });
+  }, 60_000);
 });
 
 describe('the vertical', () => {
@@ -191,7 +202,8 @@ describe('the small loop', () => {
   it('is usable on a part of its band, elsewhere each time', () => {
     const uploads = uploadsOf('boathouse-loop');
     for (const upload of uploads) expect(bandOf(upload, '20m')?.verdict).toBe('partly_usable');
-    expect(new Set(uploads.map((upload) => Math.round(minimumHz(upload) / 1e4))).size).toBe(5);
+    const tunedHz = uploads.map(minimumHz);
+    expect(Math.max(...tunedHz) - Math.min(...tunedHz)).toBeGreaterThan(50_000);
   });
 });
 
@@ -204,5 +216,5 @@ describe('the trap dipole', () => {
         expect(use?.usableFraction).toBeGreaterThan(0.4);
       }
     }
-  });
+  }, 60_000);
 });

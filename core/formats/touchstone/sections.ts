@@ -1,0 +1,185 @@
+import { ok, type Result } from '../../result.ts';
+import type { Assumption, ReadError } from '../read-types.ts';
+import { DataLineReader, type Tolerated } from './data-line.ts';
+import { refuse } from './faults.ts';
+import { LineWalker } from './file-lines.ts';
+import { Keywords, readKeyword } from './keywords.ts';
+import { NumberTable } from './number-table.ts';
+import { type OptionLine, type ReadOptionLine, readOptionLine } from './option-line.ts';
+
+/** A Touchstone file taken apart, its numbers read, nothing yet made of them. */
+export interface Sections {
+  /** Null without a `[Version]`. */
+  readonly keywords: Keywords | null;
+  readonly option: OptionLine;
+  readonly network: NumberTable;
+  readonly tolerated: Tolerated;
+  readonly assumptions: readonly Assumption[];
+}
+
+const noOptionLine =
+  'Add the option line that the instrument should have written, for instance `# Hz S RI R 50` with the unit, format and reference that hold. No default is taken, since a wrong unit changes every frequency.';
+const otherReference =
+  /(?:port\s*impedance|reference\s*impedance|port\s*z|\bz0\b|\bgamma\b)[^0-9]*[-+]?\d/i;
+
+/** Takes the lines of a file apart. `givenOption`: an option line for a file that has none. */
+export function readSections(text: string, givenOption?: string): Result<Sections, ReadError> {
+  const reader = new SectionReader(text, givenOption);
+  return reader.read();
+}
+
+class SectionReader {
+  private readonly text: string;
+  private readonly walker: LineWalker;
+  private readonly givenOption: string | undefined;
+  private readonly assumptions: Assumption[] = [];
+  private readonly network = new NumberTable();
+  private keywords: Keywords | null = null;
+  private option: OptionLine | null = null;
+  private optionText = '';
+  private numbers: DataLineReader | null = null;
+
+  constructor(text: string, givenOption: string | undefined) {
+    this.text = text;
+    this.walker = new LineWalker(text);
+    this.givenOption = givenOption;
+  }
+
+  read(): Result<Sections, ReadError> {
+    const { walker, text } = this;
+    while (walker.advance()) {
+      const ink = walker.firstInk();
+      if (ink === walker.end) continue;
+      const fault = this.readLine(text.charCodeAt(ink));
+      if (fault !== null) return fault;
+    }
+    return this.finish();
+  }
+
+  private readLine(ink: number): Result<never, ReadError> | null {
+    if (ink === 33) return this.readComment();
+    if (this.keywords?.phase === 'information') return this.passInformation(ink);
+    if (ink === 35) return this.readOption();
+    if (ink === 91) return this.readKeywordLine();
+    return this.readNumbers();
+  }
+
+  private readComment(): null {
+    const { walker, text } = this;
+    const hasSaid = this.assumptions.some(({ code }) => code === 'comment_names_reference');
+    const comment = text.slice(walker.start, Math.min(walker.end, walker.start + 400));
+    if (!hasSaid && otherReference.test(comment)) {
+      const detail =
+        'A comment names a port impedance or propagation constant. Comments are not data: the reference of the option line holds.';
+      this.assumptions.push({ code: 'comment_names_reference', detail, line: walker.number });
+    }
+    return null;
+  }
+
+  private passInformation(ink: number): Result<never, ReadError> | null {
+    return ink === 91 ? this.readKeywordLine() : null;
+  }
+
+  private readOption(): Result<never, ReadError> | null {
+    const { walker } = this;
+    const content = walker.content();
+    const place = { line: walker.number, column: walker.firstInk() - walker.start + 1 };
+    if (this.option !== null) return this.passSecondOption(content, place.line);
+    const read = readOptionLine(content, place);
+    if (!read.ok) return read;
+    this.take(read.value, content);
+    return null;
+  }
+
+  private take({ option, assumptions }: ReadOptionLine, content: string): void {
+    this.option = option;
+    this.optionText = content;
+    this.assumptions.push(...assumptions);
+    this.numbers = new DataLineReader(this.text, this.network, option.frequencyShift);
+  }
+
+  private passSecondOption(content: string, line: number): null {
+    const same = (one: string) => one.toUpperCase().replace(/\s+/g, ' ');
+    if (same(content) !== same(this.optionText)) {
+      const detail = `A second option line differs from the first (\`${this.optionText}\`); the first holds.`;
+      this.assumptions.push({ code: 'second_option_line', detail, line });
+    }
+    return null;
+  }
+
+  private readKeywordLine(): Result<never, ReadError> | null {
+    const { walker } = this;
+    const place = { line: walker.number, column: walker.firstInk() - walker.start + 1 };
+    if (this.keywords === null) {
+      if (this.option !== null || this.network.rowCount > 0) {
+        const detail = `Line ${place.line} has a keyword, but the file does not begin with \`[Version]\`.`;
+        const remedy = 'Put `[Version] 2.0` before the option line, or remove the keywords.';
+        return refuse('keyword_without_version', detail, remedy, place);
+      }
+      this.keywords = new Keywords();
+    }
+    const read = readKeyword(this.keywords, walker.content(), place, this.option !== null);
+    if (!read.ok) return read;
+    this.assumptions.push(...read.value);
+    return null;
+  }
+
+  private readNumbers(): Result<never, ReadError> | null {
+    const { walker, keywords } = this;
+    const line = walker.number;
+    if (keywords !== null) {
+      if (keywords.wantsArguments) return keywords.takeArguments(walker.content(), { line });
+      if (keywords.phase === 'ended') {
+        const detail = `Line ${line} has data after \`[End]\`.`;
+        return refuse('data_after_end', detail, 'Remove what stands after `[End]`.', { line });
+      }
+      if (keywords.phase === 'noise') return null;
+      if (keywords.phase !== 'network') {
+        const detail = `Line ${line} has data before \`[Network Data]\`.`;
+        return refuse('data_before_network', detail, 'Put `[Network Data]` before the data.', {
+          line,
+        });
+      }
+    }
+    if (this.numbers === null) {
+      const given = this.takeGivenOption(line);
+      if (given !== null) return given;
+    }
+    return this.numbers?.read(walker.start, walker.end, line) ?? null;
+  }
+
+  private takeGivenOption(line: number): Result<never, ReadError> | null {
+    if (this.givenOption === undefined) {
+      return refuse(
+        'option_line_missing',
+        `The data begin at line ${line} without an option line before them.`,
+        noOptionLine,
+        { line },
+      );
+    }
+    const read = readOptionLine(this.givenOption.replace(/^\s*#?/, '#'), { line });
+    if (!read.ok) return read;
+    const detail = `The file has no option line; \`${this.givenOption}\` was given with the upload.`;
+    this.assumptions.push({ code: 'option_line_given', detail, line });
+    this.take(read.value, this.givenOption);
+    return null;
+  }
+
+  private finish(): Result<Sections, ReadError> {
+    const { option, network, keywords } = this;
+    if (option === null || this.numbers === null || network.rowCount === 0) {
+      const detail = 'The file has no data lines.';
+      return refuse(
+        'no_points',
+        detail,
+        'Export the sweep again; it should have a line for each frequency.',
+      );
+    }
+    const { tolerated } = this.numbers;
+    if (keywords !== null && keywords.phase !== 'ended') {
+      const detail = 'The file does not close with `[End]`; it was taken as whole.';
+      this.assumptions.push({ code: 'end_missing', detail, line: this.walker.number });
+    }
+    return ok({ keywords, option, network, tolerated, assumptions: this.assumptions });
+  }
+}

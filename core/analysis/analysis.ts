@@ -45,7 +45,7 @@ export function analyse(sweep: Sweep): Analysis {
 }
 
 function complexModel(frequencyHz: Float64Array, re: Float64Array, im: Float64Array) {
-  return piecewiseModel({ frequencyHz, re, im }, false);
+  return piecewiseModel({ frequencyHz, re, im }, 'reflection');
 }
 
 function analyseOnePoint(sweep: Sweep): Analysis {

@@ -1,11 +1,11 @@
 import type { ScalarSweep, Sweep } from '../sweep.ts';
 import {
-  type ModelPiece,
+  halfWidthAt,
   type PiecewiseModel,
   pieceAt,
   piecewiseModel,
+  valueAt,
 } from './piecewise-model.ts';
-import { spreadAt, valueAt } from './rational-value.ts';
 
 /** The squared magnitude of the reflection at a frequency, with slopes per hertz. */
 export interface MismatchValue {
@@ -27,7 +27,7 @@ export interface Mismatch {
 export function complexMismatch(model: PiecewiseModel): Mismatch {
   return {
     at(frequencyHz) {
-      const v = valueAt(pieceAt(model, frequencyHz).fit, frequencyHz);
+      const v = valueAt(pieceAt(model, frequencyHz), frequencyHz);
       return {
         square: v.re * v.re + v.im * v.im,
         slope: 2 * (v.re * v.slopeRe + v.im * v.slopeIm),
@@ -41,22 +41,22 @@ export function complexMismatch(model: PiecewiseModel): Mismatch {
     },
     magnitudeU95(frequencyHz) {
       const piece = pieceAt(model, frequencyHz);
-      const value = valueAt(piece.fit, frequencyHz);
+      const value = valueAt(piece, frequencyHz);
       const magnitude = Math.hypot(value.re, value.im);
       const [re, im] = magnitude > 0 ? [value.re / magnitude, value.im / magnitude] : [1, 0];
       const functional = { valueRe: re, valueIm: -im, slopeRe: 0, slopeIm: 0 };
-      return halfWidth(piece, spreadAt(piece.fit, frequencyHz, value, functional));
+      return halfWidthAt(piece, frequencyHz, functional);
     },
     slopeU95(frequencyHz) {
       const piece = pieceAt(model, frequencyHz);
-      const value = valueAt(piece.fit, frequencyHz);
+      const value = valueAt(piece, frequencyHz);
       const functional = {
         valueRe: 2 * value.slopeRe,
         valueIm: -2 * value.slopeIm,
         slopeRe: 2 * value.re,
         slopeIm: -2 * value.im,
       };
-      return halfWidth(piece, spreadAt(piece.fit, frequencyHz, value, functional));
+      return halfWidthAt(piece, frequencyHz, functional);
     },
   };
 }
@@ -65,31 +65,24 @@ export function complexMismatch(model: PiecewiseModel): Mismatch {
 export function scalarMismatch(model: PiecewiseModel): Mismatch {
   return {
     at(frequencyHz) {
-      const v = valueAt(pieceAt(model, frequencyHz).fit, frequencyHz);
+      const v = valueAt(pieceAt(model, frequencyHz), frequencyHz);
       return { square: Math.max(0, v.re), slope: v.slopeRe, curvature: v.curvatureRe };
     },
     magnitudeU95(frequencyHz) {
       const piece = pieceAt(model, frequencyHz);
-      const value = valueAt(piece.fit, frequencyHz);
+      const value = valueAt(piece, frequencyHz);
       const functional = { valueRe: 1, valueIm: 0, slopeRe: 0, slopeIm: 0 };
-      const squareU95 = halfWidth(piece, spreadAt(piece.fit, frequencyHz, value, functional));
+      const squareU95 = halfWidthAt(piece, frequencyHz, functional);
       if (squareU95 === null) return null;
       const square = Math.max(0, value.re);
       return Math.sqrt(square + squareU95) - Math.sqrt(square);
     },
     slopeU95(frequencyHz) {
       const piece = pieceAt(model, frequencyHz);
-      const value = valueAt(piece.fit, frequencyHz);
       const functional = { valueRe: 0, valueIm: 0, slopeRe: 1, slopeIm: 0 };
-      return halfWidth(piece, spreadAt(piece.fit, frequencyHz, value, functional));
+      return halfWidthAt(piece, frequencyHz, functional);
     },
   };
-}
-
-/** The half-width that a piece's noise makes of a spread for unit noise. */
-export function halfWidth(piece: ModelPiece, spread: number): number | null {
-  if (piece.noise === null || Number.isNaN(spread)) return null;
-  return piece.factor95 * piece.noise * spread;
 }
 
 /** Models the squared magnitude of a sweep without usable phase. Needs two points. */
@@ -100,7 +93,7 @@ export function squaredMagnitudeModel(sweep: Sweep): PiecewiseModel {
     re: square,
     im: new Float64Array(square.length),
   };
-  return piecewiseModel(samples, true);
+  return piecewiseModel(samples, 'square');
 }
 
 function squaredMagnitude(sweep: Sweep): Float64Array {

@@ -1,10 +1,24 @@
 import { studentQuantile } from '../record/statistics/distributions.ts';
-import { fitRational, type RationalFit, type Samples, unknownsOf } from './rational-fit.ts';
+import type { RationalForm } from './rational-basis.ts';
+import {
+  fitRational,
+  numbersIn,
+  type RationalFit,
+  type Samples,
+  unknownsOf,
+} from './rational-fit.ts';
+import { sharpestPole } from './rational-value.ts';
 
-/** A fit with what is known of the noise around it. */
-export interface ChosenFit {
+/** One of the fits that stand for the samples, with its share; the shares add up to 1. */
+export interface WeightedFit {
   readonly fit: RationalFit;
-  /** Standard deviation of one component of the samples about the fit; null if it can't be told. */
+  readonly weight: number;
+}
+
+/** The fits that stand for some samples, with what is known of the noise around them. */
+export interface ChosenFits {
+  readonly members: readonly WeightedFit[];
+  /** Standard deviation of one number about the best fit; null if it can't be told. */
   readonly noise: number | null;
   /** Student's factor for a 95 % interval. */
   readonly factor95: number;
@@ -12,54 +26,75 @@ export interface ChosenFit {
   readonly isWhite: boolean;
 }
 
-const highestOrder = 10;
+const highestDegree = 16;
 const fewestSamples = 5;
 /** Residuals below this are rounding of the arithmetic, whatever their pattern. */
-const arithmeticFloor = 1e-11;
-/** Orders that may fail to help before the search ends. */
-const patience = 2;
+const arithmeticFloor = 1e-12;
+/** Degrees that may fail to help before the search ends. */
+const patience = 3;
+/** Fits whose weight beside the best one's is less than this are left out. */
+const leastWeight = 0.02;
+const sharpPolePenalty = 40;
 
-/**
- * Chooses the order of a rational fit by Akaike's criterion with the small-sample correction
- * (C. M. Hurvich, C.-L. Tsai, Biometrika 76(2), 1989). `isReal`: the samples have no imaginary
- * part, so each carries one number and not two. Null for fewer than five samples.
- */
-export function chooseFit(samples: Samples, isReal: boolean): ChosenFit | null {
-  const count = samples.re.length;
-  if (count < fewestSamples) return null;
-  const numbersEach = isReal ? 1 : 2;
-  const numbers = numbersEach * count;
-  let best: RationalFit | null = null;
-  let bestScore = Number.POSITIVE_INFINITY;
-  let failures = 0;
-  for (let order = 1; order <= highestOrder && failures < patience; order++) {
-    const unknowns = numbersEach * unknownsOf(order);
-    if (unknowns + 2 * numbersEach > numbers) break;
-    const fit = fitRational(samples, order);
-    if (fit === null) break;
-    const squares = Math.max(fit.squares, numbers * arithmeticFloor ** 2);
-    const score =
-      numbers * Math.log(squares / numbers) +
-      2 * unknowns +
-      (2 * unknowns * (unknowns + 1)) / Math.max(1, numbers - unknowns - 1);
-    if (score < bestScore && fit.factor !== null) {
-      best = fit;
-      bestScore = score;
-      failures = 0;
-    } else failures += 1;
-    if (fit.squares < numbers * arithmeticFloor ** 2) break;
-  }
-  return best === null ? null : judged(best, numbersEach, count);
+interface Scored {
+  readonly fit: RationalFit;
+  readonly score: number;
 }
 
-function judged(fit: RationalFit, numbersEach: number, count: number): ChosenFit {
-  const freedom = numbersEach * (count - unknownsOf(fit.order));
-  const noise = freedom > 0 ? Math.sqrt(fit.squares / freedom) : null;
-  const factor95 = freedom > 0 ? studentQuantile(0.975, freedom) : Number.NaN;
+/**
+ * Fits of rising degree, weighted by the Bayesian information criterion (G. Schwarz, Annals of
+ * Statistics 6(2), 1978; averaging as in S. T. Buckland et al., Biometrics 53(2), 1997). Null for
+ * fewer than five samples.
+ */
+export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | null {
+  const count = samples.re.length;
+  if (count < fewestSamples) return null;
+  const numbers = numbersIn(form, count);
+  const scored: Scored[] = [];
+  let best = Number.POSITIVE_INFINITY;
+  let failures = 0;
+  for (let degree = 0; degree <= highestDegree && failures < patience; degree++) {
+    if (unknownsOf(degree) + 2 > numbers) break;
+    const fit = fitRational(samples, form, degree);
+    if (fit === null || fit.triangle === null) {
+      failures += 1;
+      continue;
+    }
+    const score = scoreOf(fit, numbers) + pairPenalty(fit, samples);
+    scored.push({ fit, score });
+    failures = score < best ? 0 : failures + 1;
+    best = Math.min(best, score);
+    if (fit.squares < numbers * arithmeticFloor ** 2) break;
+  }
+  return scored.length === 0 ? null : judged(scored, best, numbers);
+}
+
+function scoreOf(fit: RationalFit, numbers: number): number {
+  const squares = Math.max(fit.squares, numbers * arithmeticFloor ** 2);
+  return numbers * Math.log(squares / numbers) + unknownsOf(fit.degree) * Math.log(numbers);
+}
+
+/** A pole nearer than a step may stand for one noisy point: it must explain far more than noise. */
+function pairPenalty(fit: RationalFit, { frequencyHz }: Samples): number {
+  return sharpestPole(fit, frequencyHz) > 1 ? sharpPolePenalty : 0;
+}
+
+function judged(scored: readonly Scored[], best: number, numbers: number): ChosenFits {
+  const shares = scored
+    .map(({ fit, score }) => ({ fit, weight: Math.exp((best - score) / 2) }))
+    .filter(({ weight }) => weight > leastWeight);
+  const total = shares.reduce((sum, { weight }) => sum + weight, 0);
+  const members = shares.map(({ fit, weight }) => ({ fit, weight: weight / total }));
+  const { fit } = members.reduce((a, b) => (b.weight > a.weight ? b : a));
+  const freedom = numbers - unknownsOf(fit.degree);
   const correlation = neighbourCorrelation(fit);
-  const scatter = 3 / Math.sqrt(numbersEach * count);
-  const isTiny = fit.squares < numbersEach * count * arithmeticFloor ** 2;
-  return { fit, noise, factor95, isWhite: isTiny || correlation < scatter };
+  const isTiny = fit.squares < numbers * (10 * arithmeticFloor) ** 2;
+  return {
+    members,
+    noise: Math.sqrt(fit.squares / freedom),
+    factor95: studentQuantile(0.975, freedom),
+    isWhite: isTiny || correlation < 3 / Math.sqrt(numbers),
+  };
 }
 
 /** Correlation of each residual with the next. */

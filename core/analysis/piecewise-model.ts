@@ -1,8 +1,16 @@
-import { type ChosenFit, chooseFit } from './model-choice.ts';
+import { type ChosenFits, chooseFits } from './model-choice.ts';
+import { frequencyScale, type RationalForm } from './rational-basis.ts';
 import type { RationalFit, Samples } from './rational-fit.ts';
+import {
+  type Functional,
+  fitValueAt,
+  functionalOf,
+  type RationalValue,
+  spreadAt,
+} from './rational-value.ts';
 
-/** A stretch of the sweep, from sample to sample, with the function that stands for it. */
-export interface ModelPiece extends Omit<ChosenFit, 'isWhite'> {
+/** A stretch of the sweep, from sample to sample, with the functions that stand for it. */
+export interface ModelPiece extends Omit<ChosenFits, 'isWhite'> {
   readonly lowHz: number;
   readonly highHz: number;
 }
@@ -18,20 +26,20 @@ const fewestToHalve = 32;
 const overlap = 0.35;
 
 /**
- * Stands rational functions for a sweep: one for all of it where one explains all but noise, else
+ * Stands rational functions for a sweep: for all of it where they explain all but noise, else for
  * halves of it, and so on. Each piece is fitted beyond its ends, where fits are weakest. Below five
  * samples the pieces are straight lines and know no noise. Needs two samples.
  */
-export function piecewiseModel(samples: Samples, isReal: boolean): PiecewiseModel {
+export function piecewiseModel(samples: Samples, form: RationalForm): PiecewiseModel {
   const count = samples.frequencyHz.length;
   const pieces: ModelPiece[] = [];
-  cover(samples, isReal, 0, count - 1, pieces);
+  cover(samples, form, 0, count - 1, pieces);
   return { pieces };
 }
 
 function cover(
   samples: Samples,
-  isReal: boolean,
+  form: RationalForm,
   first: number,
   last: number,
   pieces: ModelPiece[],
@@ -40,19 +48,19 @@ function cover(
   const reach = Math.ceil((last - first) * overlap);
   const from = Math.max(0, first - reach);
   const to = Math.min(frequencyHz.length - 1, last + reach);
-  const chosen = chooseFit(slice(samples, from, to + 1), isReal);
+  const chosen = chooseFits(slice(samples, from, to + 1), form);
   if (chosen === null) {
-    for (let i = first; i < last; i++) pieces.push(straightLine(samples, i));
+    for (let i = first; i < last; i++) pieces.push(straightLine(samples, form, i));
     return;
   }
   if (chosen.isWhite || last - first < fewestToHalve) {
-    const { fit, noise, factor95 } = chosen;
-    pieces.push({ lowHz: frequencyHz[first], highHz: frequencyHz[last], fit, noise, factor95 });
+    const { members, noise, factor95 } = chosen;
+    pieces.push({ lowHz: frequencyHz[first], highHz: frequencyHz[last], members, noise, factor95 });
     return;
   }
   const middle = (first + last) >> 1;
-  cover(samples, isReal, first, middle, pieces);
-  cover(samples, isReal, middle, last, pieces);
+  cover(samples, form, first, middle, pieces);
+  cover(samples, form, middle, last, pieces);
 }
 
 function slice({ frequencyHz, re, im }: Samples, from: number, to: number): Samples {
@@ -63,23 +71,35 @@ function slice({ frequencyHz, re, im }: Samples, from: number, to: number): Samp
   };
 }
 
-function straightLine({ frequencyHz, re, im }: Samples, i: number): ModelPiece {
+/**
+ * Between two samples: real part and imaginary part over frequency straight in the square of
+ * frequency, which a network of real elements can have, and straight enough in frequency.
+ */
+function straightLine({ frequencyHz, re, im }: Samples, form: RationalForm, i: number): ModelPiece {
   const lowHz = frequencyHz[i];
   const highHz = frequencyHz[i + 1];
+  const scale = frequencyScale(lowHz, highHz);
+  const oddAt = (k: number) =>
+    frequencyHz[k] === 0 ? 0 : (im[k] * scale.centreHz) / frequencyHz[k];
+  const even = [(re[i] + re[i + 1]) / 2, (re[i + 1] - re[i]) / 2];
+  const odd = [(oddAt(i) + oddAt(i + 1)) / 2, (oddAt(i + 1) - oddAt(i)) / 2];
+  const numerator = form === 'square' ? even : [even[0], odd[0], even[1], odd[1]];
+  const degree = numerator.length - 1;
+  const denominator = new Float64Array(degree + 1);
+  denominator[0] = 1;
   const fit: RationalFit = {
-    order: 1,
-    centreHz: (lowHz + highHz) / 2,
-    halfHz: (highHz - lowHz) / 2,
-    numeratorRe: Float64Array.of((re[i] + re[i + 1]) / 2, (re[i + 1] - re[i]) / 2),
-    numeratorIm: Float64Array.of((im[i] + im[i + 1]) / 2, (im[i + 1] - im[i]) / 2),
-    denominatorRe: Float64Array.of(1, 0),
-    denominatorIm: Float64Array.of(0, 0),
-    factor: null,
+    form,
+    degree,
+    scale,
+    numerator: Float64Array.from(numerator),
+    denominator,
+    still: 0,
+    triangle: null,
     squares: 0,
     residualRe: new Float64Array(2),
     residualIm: new Float64Array(2),
   };
-  return { lowHz, highHz, fit, noise: null, factor95: Number.NaN };
+  return { lowHz, highHz, members: [{ fit, weight: 1 }], noise: null, factor95: Number.NaN };
 }
 
 /** The piece that stands for a frequency; beyond the ends the outermost. */
@@ -92,4 +112,41 @@ export function pieceAt({ pieces }: PiecewiseModel, frequencyHz: number): ModelP
     else high = middle;
   }
   return pieces[low];
+}
+
+/** The model's value and derivatives at a frequency. */
+export function valueAt({ members }: ModelPiece, frequencyHz: number): RationalValue {
+  if (members.length === 1) return fitValueAt(members[0].fit, frequencyHz);
+  let [re, im, slopeRe, slopeIm, curvatureRe, curvatureIm] = [0, 0, 0, 0, 0, 0];
+  for (const { fit, weight } of members) {
+    const value = fitValueAt(fit, frequencyHz);
+    re += weight * value.re;
+    im += weight * value.im;
+    slopeRe += weight * value.slopeRe;
+    slopeIm += weight * value.slopeIm;
+    curvatureRe += weight * value.curvatureRe;
+    curvatureIm += weight * value.curvatureIm;
+  }
+  return { re, im, slopeRe, slopeIm, curvatureRe, curvatureIm };
+}
+
+/**
+ * 95 % half-width of a functional of the model at a frequency: from the noise, and from what the
+ * weighted fits differ by. Null where the noise can't be told.
+ */
+export function halfWidthAt(
+  piece: ModelPiece,
+  frequencyHz: number,
+  functional: Functional,
+): number | null {
+  const { members, noise, factor95 } = piece;
+  if (noise === null) return null;
+  const mean = functionalOf(valueAt(piece, frequencyHz), functional);
+  let variance = 0;
+  for (const { fit, weight } of members) {
+    const value = fitValueAt(fit, frequencyHz);
+    const spread = noise * spreadAt(fit, frequencyHz, value, functional);
+    variance += weight * (spread ** 2 + (functionalOf(value, functional) - mean) ** 2);
+  }
+  return Number.isFinite(variance) ? factor95 * Math.sqrt(variance) : null;
 }

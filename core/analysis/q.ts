@@ -1,6 +1,5 @@
-import { halfWidth } from './mismatch.ts';
-import type { ModelPiece } from './piecewise-model.ts';
-import { type Functional, type RationalValue, spreadAt } from './rational-value.ts';
+import { halfWidthAt, type ModelPiece } from './piecewise-model.ts';
+import type { Functional, RationalValue } from './rational-value.ts';
 import type { Resonance } from './summary.ts';
 
 /** Step of the numerical derivatives, as a part of what is moved. */
@@ -45,7 +44,7 @@ export function impedanceQ(
     slopeRe: derivative(2, slopeScale),
     slopeIm: -derivative(3, slopeScale),
   };
-  return { q, qU95: halfWidth(piece, spreadAt(piece.fit, frequencyHz, value, functional)) };
+  return { q, qU95: halfWidthAt(piece, frequencyHz, functional) };
 }
 
 function qOf(

@@ -1,7 +1,12 @@
-import { halfWidth } from './mismatch.ts';
-import { type ModelPiece, type PiecewiseModel, pieceAt } from './piecewise-model.ts';
+import {
+  halfWidthAt,
+  type ModelPiece,
+  type PiecewiseModel,
+  pieceAt,
+  valueAt,
+} from './piecewise-model.ts';
 import { impedanceQ } from './q.ts';
-import { type Functional, type RationalValue, spreadAt, valueAt } from './rational-value.ts';
+import type { Functional, RationalValue } from './rational-value.ts';
 import { type SignChange, scanModel, signChanges } from './scan.ts';
 import type { Resonance } from './summary.ts';
 import { zeroBetween } from './zero.ts';
@@ -28,7 +33,7 @@ export function findResonances(
     const { change } = event;
     const low = scan[change.before];
     const high = scan[change.after];
-    const frequencyHz = zeroBetween((f) => valueAt(pieceAt(model, f).fit, f).im, low, high);
+    const frequencyHz = zeroBetween((f) => valueAt(pieceAt(model, f), f).im, low, high);
     return resonanceAt(model, frequencyHz, referenceOhm, im[change.after] > 0, event.isTouch);
   });
 }
@@ -73,12 +78,8 @@ function isWithinNoise(
   let at = from;
   for (let i = from; i <= to; i++) if (Math.abs(im[i]) > Math.abs(im[at])) at = i;
   const piece = pieceAt(model, scan[at]);
-  const u95 = imaginaryU95(piece, scan[at], valueAt(piece.fit, scan[at]));
+  const u95 = halfWidthAt(piece, scan[at], imaginaryPart);
   return u95 !== null && Math.abs(im[at]) < doubtfulWithin * u95;
-}
-
-function imaginaryU95(piece: ModelPiece, frequencyHz: number, value: RationalValue): number | null {
-  return halfWidth(piece, spreadAt(piece.fit, frequencyHz, value, imaginaryPart));
 }
 
 function resonanceAt(
@@ -89,8 +90,8 @@ function resonanceAt(
   isTouch: boolean,
 ): Resonance {
   const piece = pieceAt(model, frequencyHz);
-  const value = valueAt(piece.fit, frequencyHz);
-  const imU95 = imaginaryU95(piece, frequencyHz, value);
+  const value = valueAt(piece, frequencyHz);
+  const imU95 = halfWidthAt(piece, frequencyHz, imaginaryPart);
   const frequencyU95Hz = imU95 === null ? null : imU95 / Math.abs(value.slopeIm);
   return {
     frequencyHz,
@@ -118,7 +119,7 @@ function resistanceAt(
   if (real >= 1) return { resistanceOhm: null, resistanceU95Ohm: null, swr: null, swrU95: null };
   const along = value.slopeIm === 0 ? 0 : value.slopeRe / value.slopeIm;
   const functional: Functional = { valueRe: 1, valueIm: along, slopeRe: 0, slopeIm: 0 };
-  const realU95 = halfWidth(piece, spreadAt(piece.fit, frequencyHz, value, functional));
+  const realU95 = halfWidthAt(piece, frequencyHz, functional);
   const magnitude = Math.abs(real);
   const isPassive = magnitude < 1;
   return {

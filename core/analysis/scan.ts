@@ -1,5 +1,4 @@
-import { type PiecewiseModel, pieceAt } from './piecewise-model.ts';
-import { valueAt } from './rational-value.ts';
+import { type PiecewiseModel, pieceAt, valueAt } from './piecewise-model.ts';
 
 /** Frequencies at which a model is looked at for signs and turns, ascending. */
 export function scanFrequencies(frequencyHz: Float64Array): Float64Array {
@@ -22,7 +21,7 @@ export function scanModel(
   const re = new Float64Array(scan.length);
   const im = new Float64Array(scan.length);
   for (let i = 0; i < scan.length; i++) {
-    const value = valueAt(pieceAt(model, scan[i]).fit, scan[i]);
+    const value = valueAt(pieceAt(model, scan[i]), scan[i]);
     re[i] = value.re;
     im[i] = value.im;
   }

@@ -2,9 +2,8 @@ import type { Assumption } from '../formats/read-types.ts';
 import type { Sweep } from '../sweep.ts';
 import { absences } from './absences.ts';
 import { type Analysis, analyse } from './analysis.ts';
-import { pieceAt } from './piecewise-model.ts';
+import { pieceAt, valueAt } from './piecewise-model.ts';
 import { qualityFlags } from './quality.ts';
-import { valueAt } from './rational-value.ts';
 import { curveOf, swrOfSquare, swrU95OfSquare } from './refined-swr.ts';
 import { renormaliseSweep } from './renormalise-sweep.ts';
 import { findResonances } from './resonances.ts';
@@ -86,9 +85,7 @@ type Impedance = Pick<SwrMinimum, 'resistanceOhm' | 'reactanceOhm'>;
 
 function impedanceAt({ reflection, sweep }: Analysis, frequencyHz: number): Impedance {
   const point =
-    reflection === null
-      ? onlyPoint(sweep)
-      : valueAt(pieceAt(reflection, frequencyHz).fit, frequencyHz);
+    reflection === null ? onlyPoint(sweep) : valueAt(pieceAt(reflection, frequencyHz), frequencyHz);
   if (point === null) return { resistanceOhm: null, reactanceOhm: null };
   const d = (1 - point.re) ** 2 + point.im ** 2;
   return {

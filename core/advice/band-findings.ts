@@ -1,7 +1,7 @@
 import type { Resonance, Summary } from '../analysis/summary.ts';
 import type { BandUse } from '../bands/usable-report.ts';
 import { trimBehaviour } from './antenna-kind.ts';
-import { type Finding, type FindingFacts, khz, mhz } from './finding.ts';
+import { type Aim, type Finding, type FindingFacts, khz, mhz } from './finding.ts';
 
 /** A resonance this far off, as a fraction, is not the one that was meant for a band. */
 const MEANT_FOR = 0.2;
@@ -32,54 +32,74 @@ export function bandFindings(
       },
     ];
   }
-  const found = placeFindings(summary, band, facts);
+  const aim = { name: band.band, lowHz: band.lowHz, highHz: band.highHz };
+  const found = aimFindings(summary, aim, facts);
   if (found.length > 0) return found;
-  const share = (100 * band.usableFraction).toFixed(0);
+  if (band.verdict === 'partly_swept') {
+    return [
+      {
+        code: 'band_partly_swept',
+        detail: `Only ${percent(band.sweptFraction)} of ${band.band} was swept. Sweep all of it.`,
+        next: 'sweep_again',
+        band: band.band,
+      },
+    ];
+  }
   return [
     {
       code: 'band_wider_than_antenna',
-      detail: `${share} % of ${band.band} is known to be within SWR ${facts.maxSwr}, and the antenna stands where it should: a match can widen it.`,
+      detail: `${percent(band.usableFraction)} of ${band.band} is within SWR ${facts.maxSwr}, and the antenna stands where it should: a match can widen it.`,
       next: 'match',
       band: band.band,
     },
   ];
 }
 
-function placeFindings(summary: Summary, band: BandUse, facts: FindingFacts): readonly Finding[] {
+/** How the antenna stands to a band or segment: place of its resonance, and resistance there. */
+export function aimFindings(summary: Summary, aim: Aim, facts: FindingFacts): readonly Finding[] {
   const throughLine =
     summary.plane === 'measured' &&
     facts.lineFlags.some((flag) => flag.code === 'line_moves_resonance');
-  if (throughLine || summary.phase !== 'signed') return byMinimum(summary, band, facts);
-  return byResonance(summary, band, facts);
+  if (throughLine || summary.phase !== 'signed') return byMinimum(summary, aim, facts);
+  return byResonance(summary, aim, facts);
 }
 
-function byResonance(summary: Summary, band: BandUse, facts: FindingFacts): readonly Finding[] {
-  const resonance = nearestResonance(summary.resonances, band);
+function byResonance(summary: Summary, aim: Aim, facts: FindingFacts): readonly Finding[] {
+  const resonance = nearestResonance(summary.resonances, aim);
   if (resonance === null) {
     return [
       {
-        code: 'no_resonance_near_band',
-        detail: `No resonance lies near ${band.band}. Sweep wider, or match the antenna as it is.`,
+        code: 'no_resonance_near',
+        detail: `No resonance lies near ${aim.name}. Sweep wider, or match the antenna as it is.`,
         next: 'match',
-        band: band.band,
+        band: aim.name,
       },
     ];
   }
-  const place = placed('resonance', 'resonance', resonance, band, facts);
-  return [...place, ...resistanceFinding(resonance, summary.referenceOhm, band, facts)];
+  const place = placed('resonance', 'resonance', resonance, aim, facts);
+  return [...place, ...resistanceFinding(resonance, summary.referenceOhm, aim, facts)];
 }
 
 /** Seen through a line the least SWR stays near the antenna's own, a resonance does not. */
-function byMinimum(summary: Summary, band: BandUse, facts: FindingFacts): readonly Finding[] {
+function byMinimum(summary: Summary, aim: Aim, facts: FindingFacts): readonly Finding[] {
   const near = summary.swrMinima.filter(
-    (minimum) => !minimum.atEdge && isNear(minimum.frequencyHz, band),
+    (minimum) => !minimum.atEdge && isNear(minimum.frequencyHz, aim),
   );
   const minimum = near.reduce<(typeof near)[number] | null>(
-    (best, each) => (best === null || distance(each, band) < distance(best, band) ? each : best),
+    (best, each) => (best === null || distance(each, aim) < distance(best, aim) ? each : best),
     null,
   );
-  if (minimum === null) return [];
-  const place = placed('swr_minimum', 'the least SWR', minimum, band, facts);
+  if (minimum === null) {
+    return [
+      {
+        code: 'no_minimum_near',
+        detail: `The SWR has no minimum near ${aim.name}. Sweep wider, or match the antenna as it is.`,
+        next: 'match',
+        band: aim.name,
+      },
+    ];
+  }
+  const place = placed('swr_minimum', 'the least SWR', minimum, aim, facts);
   if (minimum.swr <= facts.maxSwr) return place;
   return [
     ...place,
@@ -87,7 +107,7 @@ function byMinimum(summary: Summary, band: BandUse, facts: FindingFacts): readon
       code: 'minimum_above_limit',
       detail: `Even at its least, ${minimum.swr.toFixed(1)} at ${mhz(minimum.frequencyHz)} MHz, the SWR is above ${facts.maxSwr}: a match, not a trim.`,
       next: 'match',
-      band: band.band,
+      band: aim.name,
     },
   ];
 }
@@ -97,12 +117,12 @@ function placed(
   code: 'resonance' | 'swr_minimum',
   name: string,
   at: { readonly frequencyHz: number; readonly frequencyU95Hz: number | null },
-  band: BandUse,
+  aim: Aim,
   facts: FindingFacts,
 ): readonly Finding[] {
   const halfWidth = at.frequencyU95Hz ?? 0;
-  const below = band.lowHz - at.frequencyHz;
-  const above = at.frequencyHz - band.highHz;
+  const below = aim.lowHz - at.frequencyHz;
+  const above = at.frequencyHz - aim.highHz;
   if (below <= halfWidth && above <= halfWidth) return [];
   const isBelow = below > halfWidth;
   const trim = trimBehaviour(facts.kind);
@@ -114,10 +134,10 @@ function placed(
   }[trim];
   return [
     {
-      code: `${code}_${isBelow ? 'below' : 'above'}_band`,
-      detail: `${capital(name)} is ${khz(isBelow ? below : above)} kHz ${isBelow ? 'below' : 'above'} ${band.band}: ${action}.`,
+      code: `${code}_${isBelow ? 'below' : 'above'}`,
+      detail: `${capital(name)} is ${khz(isBelow ? below : above)} kHz ${isBelow ? 'below' : 'above'} ${aim.name}: ${action}.`,
       next: 'trim',
-      band: band.band,
+      band: aim.name,
     },
   ];
 }
@@ -125,7 +145,7 @@ function placed(
 function resistanceFinding(
   resonance: Resonance,
   referenceOhm: number,
-  band: BandUse,
+  aim: Aim,
   facts: FindingFacts,
 ): readonly Finding[] {
   const { resistanceOhm } = resonance;
@@ -137,27 +157,31 @@ function resistanceFinding(
       code: resistanceOhm < referenceOhm ? 'resistance_low' : 'resistance_high',
       detail: `R at resonance is ${resistanceOhm.toPrecision(2)} ohm: a match, not a trim, brings it to ${referenceOhm} ohm.`,
       next: 'match',
-      band: band.band,
+      band: aim.name,
     },
   ];
 }
 
-function nearestResonance(resonances: readonly Resonance[], band: BandUse): Resonance | null {
+function nearestResonance(resonances: readonly Resonance[], aim: Aim): Resonance | null {
   return resonances
-    .filter((resonance) => resonance.kind === 'series' && isNear(resonance.frequencyHz, band))
+    .filter((resonance) => resonance.kind === 'series' && isNear(resonance.frequencyHz, aim))
     .reduce<Resonance | null>(
-      (best, each) => (best === null || distance(each, band) < distance(best, band) ? each : best),
+      (best, each) => (best === null || distance(each, aim) < distance(best, aim) ? each : best),
       null,
     );
 }
 
 /** Distance to the band in hertz, 0 inside it. */
-function distance(at: { readonly frequencyHz: number }, band: BandUse): number {
-  return Math.max(0, band.lowHz - at.frequencyHz, at.frequencyHz - band.highHz);
+function distance(at: { readonly frequencyHz: number }, aim: Aim): number {
+  return Math.max(0, aim.lowHz - at.frequencyHz, at.frequencyHz - aim.highHz);
 }
 
-function isNear(hz: number, band: BandUse): boolean {
-  return distance({ frequencyHz: hz }, band) <= (MEANT_FOR * (band.lowHz + band.highHz)) / 2;
+function isNear(hz: number, aim: Aim): boolean {
+  return distance({ frequencyHz: hz }, aim) <= (MEANT_FOR * (aim.lowHz + aim.highHz)) / 2;
+}
+
+function percent(fraction: number): string {
+  return `${(100 * fraction).toFixed(0)} %`;
 }
 
 function capital(text: string): string {

@@ -15,8 +15,15 @@ export interface Finding {
   readonly code: string;
   readonly detail: string;
   readonly next: NextStep;
-  /** The band it concerns; null for the whole sweep. */
+  /** The band or segment it concerns; null for the whole sweep. */
   readonly band: string | null;
+}
+
+/** A part of the spectrum that a resonance should lie in. */
+export interface Aim {
+  readonly name: string;
+  readonly lowHz: number;
+  readonly highHz: number;
 }
 
 /** What is known of the antenna beside its sweep. */
@@ -25,6 +32,8 @@ export interface FindingFacts {
   readonly maxSwr: number;
   /** Bands that it is meant for; empty: every band of the report. */
   readonly designBands: readonly string[];
+  /** Segments it is meant for inside its bands, for instance where its keeper works most. */
+  readonly aims: readonly Aim[];
   /** What the line does to the answer; see `lineReport`. */
   readonly lineFlags: readonly QualityFlag[];
 }

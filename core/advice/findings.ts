@@ -1,6 +1,6 @@
 import type { Summary, UsableSpan } from '../analysis/summary.ts';
 import type { UsableReport } from '../bands/usable-report.ts';
-import { bandFindings } from './band-findings.ts';
+import { aimFindings, bandFindings } from './band-findings.ts';
 import { type Finding, type FindingFacts, khz, mhz } from './finding.ts';
 
 /** A sweep this much wider than its middle should show an antenna's SWR rise (common practice). */
@@ -22,7 +22,11 @@ export function findings(
   const bands = (usable?.bands ?? []).filter(
     (band) => facts.designBands.length === 0 || facts.designBands.includes(band.band),
   );
-  return [...whole, ...bands.flatMap((band) => bandFindings(summary, band, facts))];
+  return [
+    ...whole,
+    ...bands.flatMap((band) => bandFindings(summary, band, facts)),
+    ...facts.aims.flatMap((aim) => aimFindings(summary, aim, facts)),
+  ];
 }
 
 function wholeSweep(summary: Summary, facts: FindingFacts): readonly Finding[] {

@@ -6,7 +6,13 @@ import type { BandUse, UsableReport, UsableVerdict } from '../../../core/bands/u
 import { evenly, impedanceSweep, resonator } from '../line/builders.ts';
 import { plainSummary } from '../line/plain-summary.ts';
 
-const facts: FindingFacts = { kind: 'dipole', maxSwr: 2, designBands: ['40m'], lineFlags: [] };
+const facts: FindingFacts = {
+  kind: 'dipole',
+  maxSwr: 2,
+  designBands: ['40m'],
+  aims: [],
+  lineFlags: [],
+};
 const moved = [{ code: 'line_moves_resonance', detail: 'The line is long.' }];
 
 /** A summary of a resonator, as it stands at the feed point. */
@@ -65,7 +71,7 @@ describe('an antenna that is right', () => {
 describe('a resonance beside its band', () => {
   it('below it asks for shortening, with the distance', () => {
     const [only] = told(antenna(50, 6.93e6));
-    expect(only).toMatchObject({ code: 'resonance_below_band', next: 'trim' });
+    expect(only).toMatchObject({ code: 'resonance_below', next: 'trim' });
     expect(only.detail).toBe('Resonance is 70 kHz below 40m: shorten it.');
   });
 
@@ -87,7 +93,7 @@ describe('a resonance beside its band', () => {
     const unsure: Resonance = { ...summary.resonances[0], frequencyU95Hz: 2000 };
     expect(codes(told({ ...summary, resonances: [unsure] }))).toEqual(['band_wider_than_antenna']);
     const unknown: Resonance = { ...unsure, frequencyU95Hz: null };
-    expect(codes(told({ ...summary, resonances: [unknown] }))).toEqual(['resonance_below_band']);
+    expect(codes(told({ ...summary, resonances: [unknown] }))).toEqual(['resonance_below']);
   });
 
   it('is the nearest of several', () => {
@@ -101,7 +107,7 @@ describe('a resonance beside its band', () => {
     const summary = antenna(50, 7.1e6);
     const far = { ...summary.resonances[0], frequencyHz: 5e6 };
     const [only] = told({ ...summary, resonances: [far] });
-    expect(only).toMatchObject({ code: 'no_resonance_near_band', next: 'match' });
+    expect(only).toMatchObject({ code: 'no_resonance_near', next: 'match' });
   });
 });
 
@@ -113,7 +119,7 @@ describe('the resistance at resonance', () => {
   });
 
   it('far above it is one as well, beside a trim where both are wrong', () => {
-    expect(codes(told(antenna(180, 7.3e6)))).toEqual(['resonance_above_band', 'resistance_high']);
+    expect(codes(told(antenna(180, 7.3e6)))).toEqual(['resonance_above', 'resistance_high']);
   });
 
   it('that is unknown gives no finding', () => {
@@ -128,7 +134,7 @@ describe('a sweep through a line', () => {
 
   it('is judged by its least SWR, not by the resonance that the line moved', () => {
     const list = told(shack(antenna(40, 6.93e6)), 'partly_usable', { lineFlags: moved });
-    expect(codes(list)).toEqual(['swr_minimum_below_band']);
+    expect(codes(list)).toEqual(['swr_minimum_below']);
     expect(list[0].detail).toContain('The least SWR is 70 kHz below 40m');
   });
 
@@ -146,7 +152,7 @@ describe('a sweep through a line', () => {
   it('without a minimum near the band has nothing to say of the place', () => {
     const summary = shack(antenna(40, 7.1e6));
     const list = told({ ...summary, swrMinima: [] }, 'partly_usable', { lineFlags: moved });
-    expect(codes(list)).toEqual(['band_wider_than_antenna']);
+    expect(codes(list)).toEqual(['no_minimum_near']);
   });
 
   it('takes the nearest of several minima', () => {
@@ -184,7 +190,7 @@ describe('findings of the whole sweep', () => {
 
   it('ask for phase where it was not measured, and judge by the least SWR', () => {
     const summary: Summary = { ...antenna(40, 6.93e6), phase: 'none', resonances: [] };
-    expect(codes(told(summary))).toEqual(['phase_not_measured', 'swr_minimum_below_band']);
+    expect(codes(told(summary))).toEqual(['phase_not_measured', 'swr_minimum_below']);
   });
 
   it('tell least SWR and resonance apart where they differ', () => {
@@ -194,6 +200,28 @@ describe('findings of the whole sweep', () => {
     expect(first.detail).toContain('60 kHz below');
     expect(told({ ...summary, resonanceOffsetHz: 40e3 }, 'usable')[0].detail).toContain('above');
     expect(codes(told({ ...summary, resonanceOffsetHz: 5e3 }, 'usable'))).toEqual(['band_usable']);
+  });
+});
+
+describe('a segment that the antenna is meant for', () => {
+  const aims = [{ name: 'the lower 40 kHz', lowHz: 7e6, highHz: 7.04e6 }];
+
+  it('is judged beside its band', () => {
+    const list = told(antenna(50, 7.11e6), 'usable', { aims });
+    expect(codes(list)).toEqual(['band_usable', 'resonance_above']);
+    expect(list[1]).toMatchObject({ band: 'the lower 40 kHz', next: 'trim' });
+    expect(list[1].detail).toBe('Resonance is 70 kHz above the lower 40 kHz: lengthen it.');
+  });
+
+  it('is not spoken of where the antenna stands right for it', () => {
+    expect(codes(told(antenna(50, 7.02e6), 'usable', { aims }))).toEqual(['band_usable']);
+  });
+});
+
+describe('a band that was swept in part', () => {
+  it('is to be swept as a whole before anything else is said', () => {
+    const [only] = told(antenna(50, 7.1e6), 'partly_swept');
+    expect(only).toMatchObject({ code: 'band_partly_swept', next: 'sweep_again' });
   });
 });
 

@@ -127,7 +127,10 @@ export function sweepRoutes(app: App, service: Service): void {
       const file = await service.store.readSweepFile(record.clubId, record.id);
       if (file === null) throw new Problem('not-found');
       return reply
-        .header('content-disposition', `attachment; filename="${fileNameOf(record)}"`)
+        .header(
+          'content-disposition',
+          `attachment; filename="${downloadName(record, extensionOf(record.measured))}"`,
+        )
         .header('content-security-policy', "sandbox; default-src 'none'")
         .header('repr-digest', digestField(Buffer.from(fileSha256, 'hex')))
         .type('application/octet-stream')
@@ -137,9 +140,10 @@ export function sweepRoutes(app: App, service: Service): void {
 }
 
 /** A name that tells sweeps apart in a folder: when, and the start of the file's SHA-256. */
-function fileNameOf({ facts, measured, receivedAt }: SweepRecord): string {
+export function downloadName(record: SweepRecord, extension: string): string {
+  const { facts, measured, receivedAt } = record;
   const day = (facts.measuredAt ?? receivedAt).slice(0, 10);
-  return safeFileName(`sweep-${day}-${measured.fileSha256.slice(0, 8)}`, extensionOf(measured));
+  return safeFileName(`sweep-${day}-${measured.fileSha256.slice(0, 8)}`, extension);
 }
 
 function extensionOf({ format, port }: SweepRecord['measured']): string {

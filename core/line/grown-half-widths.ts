@@ -7,22 +7,29 @@ export interface SummaryPair {
 }
 
 /**
- * The summary with each half-width grown by what the pairs differ from it, as a root sum of squares.
- * A half-width that was unknown stays unknown; one becomes unknown where a pair has no counterpart.
+ * The summary with each half-width grown by what the pairs differ from `base`, as a root sum of
+ * squares. `base` is the summary itself, or one of fewer of its points if the pairs were made of
+ * those. A half-width that was unknown stays unknown; one becomes unknown where base or a pair has no
+ * counterpart.
  */
-export function growHalfWidths(summary: Summary, pairs: readonly SummaryPair[]): Summary {
-  const minimumOf = (minimum: SwrMinimum) => grownMinimum(minimum, pairs);
+export function growHalfWidths(
+  summary: Summary,
+  base: Summary,
+  pairs: readonly SummaryPair[],
+): Summary {
+  const family: Family = { base, pairs };
+  const minimumOf = (minimum: SwrMinimum) => grownMinimum(minimum, family);
   return {
     ...summary,
     minimumSwr: summary.minimumSwr === null ? null : minimumOf(summary.minimumSwr),
     swrMinima: summary.swrMinima.map(minimumOf),
-    resonances: summary.resonances.map((resonance) => grownResonance(resonance, pairs)),
-    spans: summary.spans.map((span) => grownSpan(span, pairs)),
+    resonances: summary.resonances.map((resonance) => grownResonance(resonance, family)),
+    spans: summary.spans.map((span) => grownSpan(span, family)),
   };
 }
 
-function grownMinimum(minimum: SwrMinimum, pairs: readonly SummaryPair[]): SwrMinimum {
-  const others = counterparts(pairs, (summary) =>
+function grownMinimum(minimum: SwrMinimum, family: Family): SwrMinimum {
+  const others = counterparts(family, (summary) =>
     nearest(minimum.frequencyHz, [
       ...summary.swrMinima,
       ...(summary.minimumSwr === null ? [] : [summary.minimumSwr]),
@@ -30,18 +37,13 @@ function grownMinimum(minimum: SwrMinimum, pairs: readonly SummaryPair[]): SwrMi
   );
   return {
     ...minimum,
-    frequencyU95Hz: grown(
-      minimum.frequencyU95Hz,
-      minimum.frequencyHz,
-      others,
-      (o) => o.frequencyHz,
-    ),
-    swrU95: grown(minimum.swrU95, minimum.swr, others, (o) => o.swr),
+    frequencyU95Hz: grown(minimum.frequencyU95Hz, others, (o) => o.frequencyHz),
+    swrU95: grown(minimum.swrU95, others, (o) => o.swr),
   };
 }
 
-function grownResonance(resonance: Resonance, pairs: readonly SummaryPair[]): Resonance {
-  const others = counterparts(pairs, (summary) =>
+function grownResonance(resonance: Resonance, family: Family): Resonance {
+  const others = counterparts(family, (summary) =>
     nearest(
       resonance.frequencyHz,
       summary.resonances.filter((other) => other.kind === resonance.kind),
@@ -49,54 +51,52 @@ function grownResonance(resonance: Resonance, pairs: readonly SummaryPair[]): Re
   );
   return {
     ...resonance,
-    frequencyU95Hz: grown(
-      resonance.frequencyU95Hz,
-      resonance.frequencyHz,
-      others,
-      (o) => o.frequencyHz,
-    ),
-    resistanceU95Ohm: grown(
-      resonance.resistanceU95Ohm,
-      resonance.resistanceOhm,
-      others,
-      (o) => o.resistanceOhm,
-    ),
-    swrU95: grown(resonance.swrU95, resonance.swr, others, (o) => o.swr),
-    qU95: grown(resonance.qU95, resonance.q, others, (o) => o.q),
+    frequencyU95Hz: grown(resonance.frequencyU95Hz, others, (o) => o.frequencyHz),
+    resistanceU95Ohm: grown(resonance.resistanceU95Ohm, others, (o) => o.resistanceOhm),
+    swrU95: grown(resonance.swrU95, others, (o) => o.swr),
+    qU95: grown(resonance.qU95, others, (o) => o.q),
   };
 }
 
-function grownSpan(span: UsableSpan, pairs: readonly SummaryPair[]): UsableSpan {
-  const others = counterparts(pairs, (summary) => overlapping(span, summary.spans));
+function grownSpan(span: UsableSpan, family: Family): UsableSpan {
+  const others = counterparts(family, (summary) => overlapping(span, summary.spans));
   return {
     ...span,
-    lowU95Hz: span.lowOpen
-      ? span.lowU95Hz
-      : grown(span.lowU95Hz, span.lowHz, others, (o) => o.lowHz),
-    highU95Hz: span.highOpen
-      ? span.highU95Hz
-      : grown(span.highU95Hz, span.highHz, others, (o) => o.highHz),
+    lowU95Hz: span.lowOpen ? span.lowU95Hz : grown(span.lowU95Hz, others, (o) => o.lowHz),
+    highU95Hz: span.highOpen ? span.highU95Hz : grown(span.highU95Hz, others, (o) => o.highHz),
   };
 }
 
-type Counterparts<T> = readonly (readonly [plus: T | null, minus: T | null])[];
+interface Family {
+  readonly base: Summary;
+  readonly pairs: readonly SummaryPair[];
+}
+
+/** The same item in the other summaries; null where one does not have it. */
+interface Counterparts<T> {
+  readonly base: T | null;
+  readonly pairs: readonly (readonly [plus: T | null, minus: T | null])[];
+}
 
 function counterparts<T>(
-  pairs: readonly SummaryPair[],
+  { base, pairs }: Family,
   find: (summary: Summary) => T | null,
 ): Counterparts<T> {
-  return pairs.map(({ plus, minus }) => [find(plus), find(minus)] as const);
+  return {
+    base: find(base),
+    pairs: pairs.map(({ plus, minus }) => [find(plus), find(minus)] as const),
+  };
 }
 
 function grown<T>(
   halfWidth: number | null,
-  value: number | null,
   others: Counterparts<T>,
   read: (other: T) => number | null,
 ): number | null {
+  const value = others.base === null ? null : read(others.base);
   if (halfWidth === null || value === null) return null;
   let sum = halfWidth * halfWidth;
-  for (const pair of others) {
+  for (const pair of others.pairs) {
     let largest = 0;
     for (const other of pair) {
       const moved = other === null ? null : read(other);

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { summarise } from '../../../core/analysis/summarise.ts';
 import { findCable } from '../../../core/line/cables.ts';
 import { feedPointSummary } from '../../../core/line/feed-point-summary.ts';
 import { growHalfWidths } from '../../../core/line/grown-half-widths.ts';
@@ -57,6 +58,32 @@ describe('a summary at the feed point', () => {
     expect(summary.cautions).toEqual([]);
   });
 
+  it("assumes a half-width of the analyzer's where none is stated, and says so", () => {
+    const answer = accepted(feedPointSummary(measured, line, null, plainSummary)).summary;
+    expect(answer.assumptions.map((each) => each.code)).toEqual([
+      'choke_transparent',
+      'reflection_half_width_assumed',
+    ]);
+  });
+
+  it('by the summary of the service finds the antenna behind the line within its half-widths', () => {
+    const few = impedanceSweep(evenly(6.6e6, 7.6e6, 201), resonator(38, 7.1e6, 12));
+    const off = lineOf(section({ ...coax, velocityFactor: 0.663 }, 17.2, { lengthU95M: 0.2 }));
+    const there = accepted(fromFeedPoint(few, off));
+    const answer = accepted(feedPointSummary(there, line, null, summarise)).summary;
+    const [resonance] = answer.resonances;
+    expect(answer.resonances).toHaveLength(1);
+    expect(resonance.frequencyU95Hz).toBeGreaterThan(1e3);
+    expect(Math.abs(resonance.frequencyHz - 7.1e6)).toBeLessThan(resonance.frequencyU95Hz ?? 0);
+    expect(Math.abs((resonance.resistanceOhm ?? 0) - 38)).toBeLessThan(
+      resonance.resistanceU95Ohm ?? 0,
+    );
+    const exact = accepted(
+      feedPointSummary(accepted(fromFeedPoint(few, line)), line, null, summarise),
+    );
+    expect(exact.summary.resonances[0].frequencyHz).toBeCloseTo(7.1e6, 0);
+  });
+
   it('is that of the antenna exactly where the line is known exactly', () => {
     const exact = lineOf(section(exactCable({ k1: 0.6 }), 17.3));
     const there = accepted(fromFeedPoint(antenna, exact));
@@ -66,6 +93,16 @@ describe('a summary at the feed point', () => {
       plainSummary(antenna).resonances[0].frequencyHz,
       3,
     );
+  });
+
+  it('of a long sweep has the half-widths of a thinner one', () => {
+    const many = impedanceSweep(evenly(6.6e6, 7.6e6, 4001), resonator(38, 7.1e6, 12));
+    const there = accepted(fromFeedPoint(many, line));
+    const answer = accepted(feedPointSummary(there, line, 0.002, plainSummary)).summary;
+    const ratio =
+      (answer.resonances[0].frequencyU95Hz ?? 0) / (summary.resonances[0].frequencyU95Hz ?? 1);
+    expect(ratio).toBeCloseTo(1, 3);
+    expect(answer.span.points).toBe(4001);
   });
 
   it('says first of all what makes it worthless', () => {
@@ -92,11 +129,15 @@ describe('half-widths grown by pairs of summaries', () => {
 
   it('become unknown where a pair has no counterpart', () => {
     const bare = { ...summary, minimumSwr: null, swrMinima: [], resonances: [], spans: [] };
-    const grown = growHalfWidths(summary, [{ plus: bare, minus: bare }]);
+    const grown = growHalfWidths(summary, summary, [{ plus: bare, minus: bare }]);
     expect(grown.minimumSwr?.frequencyU95Hz).toBeNull();
     expect(grown.resonances[0].frequencyU95Hz).toBeNull();
     expect(grown.spans[0].lowU95Hz).toBeNull();
-    expect(growHalfWidths(bare, [{ plus: summary, minus: summary }]).minimumSwr).toBeNull();
+    const noBase = growHalfWidths(summary, bare, []);
+    expect(noBase.resonances[0].frequencyU95Hz).toBeNull();
+    expect(
+      growHalfWidths(bare, summary, [{ plus: summary, minus: summary }]).minimumSwr,
+    ).toBeNull();
   });
 
   it('add up as a root sum of squares', () => {
@@ -108,7 +149,7 @@ describe('half-widths grown by pairs of summaries', () => {
       })),
     });
     const pair = { plus: moved(300), minus: moved(-200) };
-    const grown = growHalfWidths(summary, [pair, { plus: moved(-400), minus: moved(0) }]);
+    const grown = growHalfWidths(summary, summary, [pair, { plus: moved(-400), minus: moved(0) }]);
     expect(grown.resonances[0].frequencyU95Hz).toBeCloseTo(Math.hypot(100, 300, 400), 6);
   });
 
@@ -126,7 +167,7 @@ describe('half-widths grown by pairs of summaries', () => {
       { ...span, lowHz: span.lowHz - 500, highHz: span.lowHz - 450 },
     ];
     const other = { ...summary, resonances: others, spans };
-    const grown = growHalfWidths(summary, [{ plus: other, minus: other }]);
+    const grown = growHalfWidths(summary, summary, [{ plus: other, minus: other }]);
     expect(grown.resonances[0].frequencyU95Hz).toBeCloseTo(Math.hypot(100, 30), 6);
     expect(grown.spans[0].lowU95Hz).toBeCloseTo(Math.hypot(100, 400), 6);
   });
@@ -138,7 +179,7 @@ describe('half-widths grown by pairs of summaries', () => {
         { ...summary.spans[0], lowOpen: true, lowU95Hz: null, highOpen: true, highU95Hz: null },
       ],
     };
-    const grown = growHalfWidths(open, [{ plus: summary, minus: summary }]);
+    const grown = growHalfWidths(open, open, [{ plus: summary, minus: summary }]);
     expect(grown.spans[0]).toMatchObject({ lowU95Hz: null, highU95Hz: null });
   });
 });

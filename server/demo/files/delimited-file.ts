@@ -8,7 +8,7 @@ export const resistanceReactanceText: WriteSweepFile = ({
   referenceOhm,
 }) => ({
   extension: '.csv',
-  columns: 'frequency:MHz,resistance,reactance',
+  columns: 'frequency:MHz,resistance,reactance,reference=50',
   bytes: textBytes([
     'Frequency (MHz);R (ohm);X (ohm)',
     ...frequencyHz.map((hz, i) => {
@@ -25,7 +25,7 @@ export const resistanceUnsignedText: WriteSweepFile = ({
   referenceOhm,
 }) => ({
   extension: '.csv',
-  columns: 'frequency:MHz,resistance,reactance_magnitude',
+  columns: 'frequency:MHz,resistance,reactance_magnitude,reference=50',
   bytes: textBytes([
     'Frequency (MHz);R (ohm);|X| (ohm)',
     ...frequencyHz.map((hz, i) => {
@@ -38,7 +38,7 @@ export const resistanceUnsignedText: WriteSweepFile = ({
 /** Tabs: frequency in kHz and SWR alone. */
 export const swrText: WriteSweepFile = ({ frequencyHz, reflection }) => ({
   extension: '.txt',
-  columns: 'frequency:kHz,swr',
+  columns: 'frequency:kHz,swr,reference=50',
   bytes: textBytes([
     'kHz\tSWR',
     ...frequencyHz.map((hz, i) => `${(hz / 1e3).toFixed(3)}\t${swrOf(reflection[i]).toFixed(3)}`),

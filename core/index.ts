@@ -1,4 +1,16 @@
+export type { AntennaKind } from './advice/antenna-kind.ts';
 export { standingCautions } from './advice/cautions.ts';
+export type { Aim, Finding, FindingFacts, NextStep } from './advice/finding.ts';
+export { findings } from './advice/findings.ts';
+export { type HotSpot, type HotSpotRequest, type HotSpots, hotSpots } from './advice/hot-spots.ts';
+export type { BandMatch } from './advice/match/band-swr.ts';
+export type { ComponentQ, MatchElement } from './advice/match/element.ts';
+export { type MatchAdvice, type MatchOption, matchOptions } from './advice/match/match-options.ts';
+export type { MatchKind, MatchRequest } from './advice/match/match-request.ts';
+export { feedPointStress, lineStress, powerCautions } from './advice/power.ts';
+export { type RadiatorKind, radiatorOf } from './advice/radiator.ts';
+export { trimAdvice } from './advice/trim.ts';
+export type { TrimAdvice, TrimRequest } from './advice/trim-request.ts';
 export { type BandsOfOptions, bandsOf, licencesOf, type PlanBand } from './bands/bands-of.ts';
 export {
   type BandName,
@@ -23,6 +35,16 @@ export type {
   UsableReport,
   UsableVerdict,
 } from './bands/usable-report.ts';
+export { type BothEnds, bothEnds, type LineReport, lineReport } from './line/both-ends.ts';
+export { type Cable, fitCable, type StatedCable } from './line/cable.ts';
+export { type CatalogueCable, cables, findCable } from './line/cables.ts';
+export { checkLine } from './line/check/check-line.ts';
+export type { LineCheck, LineUnderTest } from './line/check/checked-line.ts';
+export { compareLineChecks } from './line/check/compare-checks.ts';
+export type { Conditioning, Standing } from './line/conditioning.ts';
+export { type FeedLine, type FeedLineSection, resolveFeedLine } from './line/feed-line.ts';
+export { type FeedPointSummary, feedPointSummary } from './line/feed-point-summary.ts';
+export { fromFeedPoint, matchedLossDb, toFeedPoint } from './line/line.ts';
 export { fail, ok, type Result } from './result.ts';
 export {
   type ComplexSweep,

@@ -4,6 +4,7 @@ import { ClosingLine } from './tests/support/closing-line.ts';
 export default defineConfig({
   test: {
     include: ['tests/**/*.test.ts'],
+    globalSetup: ['tests/support/build-once.ts'],
     reporters: ['default', new ClosingLine()],
     coverage: {
       provider: 'v8',

@@ -256,6 +256,9 @@ export interface Store {
   readSweepPoints(clubId: string, id: string): Promise<StoredPoints | null>;
   readSummary(clubId: string, id: string, analysisVersion: string): Promise<StoredSummary | null>;
 
+  /** Makes a verified copy of everything in a new file; never half of one. */
+  backup(path: string): Promise<void>;
+
   /** Resolves if reader and writer both answer. */
   ready(): Promise<void>;
   /** Waits for accepted writes, then closes. */

@@ -1,0 +1,70 @@
+import { StoreError } from '../port.ts';
+import type { Connection } from './connection.ts';
+import { type Failure, failureOf } from './errors.ts';
+import type { WriteActs } from './write-acts.ts';
+
+/** One act waiting for the writer. */
+export interface Job {
+  readonly id: number;
+  readonly act: keyof WriteActs;
+  readonly args: readonly unknown[];
+}
+
+export type JobResult =
+  | { readonly id: number; readonly value: unknown }
+  | { readonly id: number; readonly failure: Failure };
+
+/** Acts that SQLite does not let run inside a transaction. */
+const aloneActs: ReadonlySet<keyof WriteActs> = new Set(['copyTo', 'checkpoint']);
+
+/**
+ * Runs waiting jobs and answers them once they are durable: all in one IMMEDIATE transaction, each
+ * in a savepoint, so that one commit (one flush to disk) serves all and one failing job takes no
+ * other with it. Where a failure ends the transaction itself, each job is tried alone.
+ */
+export function runTogether(
+  connection: Connection,
+  acts: WriteActs,
+  jobs: readonly Job[],
+): readonly JobResult[] {
+  const grouped = jobs.filter(({ act }) => !aloneActs.has(act));
+  const alone = jobs.filter(({ act }) => aloneActs.has(act));
+  const together = grouped.length === 0 ? [] : runInOne(connection, acts, grouped);
+  return [...together, ...alone.map((job) => attempt(acts, job))];
+}
+
+function runInOne(connection: Connection, acts: WriteActs, jobs: readonly Job[]): JobResult[] {
+  try {
+    connection.exec('BEGIN IMMEDIATE');
+    const results = jobs.map((job) => inSavepoint(connection, acts, job));
+    connection.exec('COMMIT');
+    return results;
+  } catch (error) {
+    // A full disk may have ended the transaction already.
+    if (connection.inTransaction) connection.exec('ROLLBACK');
+    if (jobs.length > 1) return jobs.flatMap((job) => runInOne(connection, acts, [job]));
+    const failure = failureOf(error);
+    return jobs.map(({ id }) => ({ id, failure }));
+  }
+}
+
+function inSavepoint(connection: Connection, acts: WriteActs, job: Job): JobResult {
+  connection.exec('SAVEPOINT job');
+  const result = attempt(acts, job);
+  if ('failure' in result) {
+    const { kind, message } = result.failure;
+    if (!connection.inTransaction) throw new StoreError(kind, message);
+    connection.exec('ROLLBACK TO job');
+  }
+  connection.exec('RELEASE job');
+  return result;
+}
+
+function attempt(acts: WriteActs, { id, act, args }: Job): JobResult {
+  try {
+    const run = acts[act] as (...args: readonly unknown[]) => unknown;
+    return { id, value: run(...args) };
+  } catch (error) {
+    return { id, failure: failureOf(error) };
+  }
+}

@@ -1,0 +1,139 @@
+import type { ClubRecord, EditableKind, PageRequest, TokenRecord } from '../port.ts';
+import type { Codec } from './compression.ts';
+import type { Connection } from './connection.ts';
+import { type ResourceRow, resourceColumns, type SweepRow, sweepColumns } from './rows.ts';
+
+export interface FileRow {
+  readonly sha256: Buffer;
+  readonly bytes: number;
+  readonly codec: Codec;
+  readonly body: Buffer;
+}
+
+export interface SummaryRow {
+  readonly summary: Buffer;
+  readonly usable: Buffer;
+}
+
+/** The clauses of the lists; a test holds each against its query plan. */
+export const listQueries = {
+  resources: `SELECT ${resourceColumns} FROM resource
+    WHERE club_id = @clubId AND kind = @kind AND (key, id) > (@key, @id) ORDER BY key, id LIMIT @limit`,
+  resourcesOfSite: `SELECT ${resourceColumns} FROM resource
+    WHERE club_id = @clubId AND kind = @kind AND site_id = @siteId AND (key, id) > (@key, @id)
+    ORDER BY key, id LIMIT @limit`,
+  sweeps: `SELECT ${sweepColumns}
+    WHERE sweep_current.club_id = @clubId AND antenna_id = @antennaId
+      AND (sort_at, sweep_current.sweep_id) < (@sortAt, @id)
+    ORDER BY sort_at DESC, sweep_current.sweep_id DESC LIMIT @limit`,
+} as const;
+
+/** Later than any time, so that a first page begins at the newest. */
+const afterAllTimes = '~';
+
+/** Every question that is asked of the file, prepared once on a connection that only reads. */
+export class Reader {
+  private readonly connection: Connection;
+  private readonly prepared;
+
+  constructor(connection: Connection) {
+    this.connection = connection;
+    this.prepared = prepareAll(connection);
+  }
+
+  clubs(): ClubRecord[] {
+    return this.prepared.clubs.all().map((row) => ({ ...row, invented: row.invented === 1 }));
+  }
+
+  token(secretSha256: Uint8Array): TokenRecord | null {
+    return this.prepared.token.get(secretSha256) ?? null;
+  }
+
+  resource(kind: EditableKind, clubId: string, idOrKey: string): ResourceRow | null {
+    const { resourceById, resourceByKey } = this.prepared;
+    const found = resourceById.get(clubId, kind, idOrKey);
+    return found ?? resourceByKey.get(clubId, kind, idOrKey) ?? null;
+  }
+
+  /** One row more than the page holds, if there is one. */
+  resources(
+    kind: EditableKind,
+    clubId: string,
+    { limit, after }: PageRequest,
+    siteId: string | undefined,
+  ): ResourceRow[] {
+    const [key, id] = after ?? ['', ''];
+    const asked = { clubId, kind, key, id, limit: limit + 1 };
+    if (siteId === undefined) return this.prepared.resources.all(asked);
+    return this.prepared.resourcesOfSite.all({ ...asked, siteId });
+  }
+
+  sweep(clubId: string, id: string): SweepRow | null {
+    return this.prepared.sweep.get(clubId, id) ?? null;
+  }
+
+  sweepByFile(clubId: string, sha256: Uint8Array): SweepRow | null {
+    return this.prepared.sweepByFile.get(clubId, sha256) ?? null;
+  }
+
+  /** One row more than the page holds, if there is one. */
+  sweeps(clubId: string, antennaId: string, { limit, after }: PageRequest): SweepRow[] {
+    const [sortAt, id] = after ?? [afterAllTimes, ''];
+    return this.prepared.sweeps.all({ clubId, antennaId, sortAt, id, limit: limit + 1 });
+  }
+
+  file(clubId: string, sweepId: string): FileRow | null {
+    return this.prepared.file.get(clubId, sweepId) ?? null;
+  }
+
+  points(clubId: string, sweepId: string): Buffer | null {
+    return this.prepared.points.get(clubId, sweepId)?.points ?? null;
+  }
+
+  summary(clubId: string, sweepId: string, analysisVersion: string): SummaryRow | null {
+    return this.prepared.summary.get(clubId, sweepId, analysisVersion) ?? null;
+  }
+
+  close(): void {
+    this.connection.close();
+  }
+}
+
+type ClubRow = Omit<ClubRecord, 'invented'> & { readonly invented: number };
+
+function prepareAll(connection: Connection) {
+  const prepare = <Row>(sql: string) => connection.prepare<unknown[], Row>(sql);
+  return {
+    clubs: prepare<ClubRow>(
+      'SELECT id, key, name, invented, created_at AS createdAt FROM club ORDER BY key',
+    ),
+    token: prepare<TokenRecord>(
+      `SELECT id, club_id AS clubId, member_id AS memberId, label, created_at AS createdAt
+       FROM token WHERE secret_sha256 = ?`,
+    ),
+    resourceById: prepare<ResourceRow>(
+      `SELECT ${resourceColumns} FROM resource WHERE club_id = ? AND kind = ? AND id = ?`,
+    ),
+    resourceByKey: prepare<ResourceRow>(
+      `SELECT ${resourceColumns} FROM resource WHERE club_id = ? AND kind = ? AND key = ?`,
+    ),
+    resources: prepare<ResourceRow>(listQueries.resources),
+    resourcesOfSite: prepare<ResourceRow>(listQueries.resourcesOfSite),
+    sweep: prepare<SweepRow>(`SELECT ${sweepColumns} WHERE sweep.club_id = ? AND sweep.id = ?`),
+    sweepByFile: prepare<SweepRow>(
+      `SELECT ${sweepColumns} WHERE sweep.club_id = ? AND sweep.file_sha256 = ?`,
+    ),
+    sweeps: prepare<SweepRow>(listQueries.sweeps),
+    file: prepare<FileRow>(
+      `SELECT sha256, bytes, codec, body FROM sweep
+       JOIN file ON file.club_id = sweep.club_id AND file.sha256 = sweep.file_sha256
+       WHERE sweep.club_id = ? AND sweep.id = ?`,
+    ),
+    points: prepare<{ readonly points: Buffer }>(
+      'SELECT points FROM sweep WHERE club_id = ? AND id = ?',
+    ),
+    summary: prepare<SummaryRow>(
+      'SELECT summary, usable FROM summary WHERE club_id = ? AND sweep_id = ? AND analysis_version = ?',
+    ),
+  };
+}

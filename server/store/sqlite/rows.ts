@@ -1,0 +1,53 @@
+import type { Editable, EditableKind, EditableKinds, SweepRecord } from '../port.ts';
+
+export interface ResourceRow {
+  readonly clubId: string;
+  readonly id: string;
+  readonly key: string;
+  readonly revision: number;
+  readonly createdAt: string;
+  readonly updatedAt: string;
+  readonly facts: string;
+}
+
+/** Columns of a `ResourceRow`, for SELECT and RETURNING. */
+export const resourceColumns =
+  'club_id AS clubId, id, key, revision, created_at AS createdAt, updated_at AS updatedAt, facts';
+
+export interface SweepRow {
+  readonly clubId: string;
+  readonly id: string;
+  readonly receivedAt: string;
+  readonly uploadedBy: string;
+  readonly measured: string;
+  readonly facts: string;
+  readonly sortAt: string;
+}
+
+/** Columns and tables of a `SweepRow` with the facts that hold, for SELECT. */
+export const sweepColumns = `sweep.club_id AS clubId, sweep.id AS id, received_at AS receivedAt,
+  uploaded_by AS uploadedBy, measured, sweep_facts.facts AS facts, sort_at AS sortAt
+  FROM sweep_current
+  JOIN sweep ON sweep.club_id = sweep_current.club_id AND sweep.id = sweep_current.sweep_id
+  JOIN sweep_facts ON sweep_facts.club_id = sweep_current.club_id
+    AND sweep_facts.sweep_id = sweep_current.sweep_id AND sweep_facts.revision = sweep_current.revision`;
+
+/** A row as the record that callers know. */
+export function toEditable<K extends EditableKind>(row: ResourceRow): Editable<EditableKinds[K]> {
+  const { clubId, id, key, revision, createdAt, updatedAt } = row;
+  const facts: EditableKinds[K] = JSON.parse(row.facts);
+  return { id, clubId, key, revision, createdAt, updatedAt, facts };
+}
+
+/** A row as the record that callers know. */
+export function toSweepRecord(row: SweepRow): SweepRecord {
+  const { id, clubId, receivedAt, uploadedBy } = row;
+  return {
+    id,
+    clubId,
+    receivedAt,
+    uploadedBy,
+    facts: JSON.parse(row.facts),
+    measured: JSON.parse(row.measured),
+  };
+}

@@ -1,0 +1,199 @@
+import { createHash } from 'node:crypto';
+import {
+  type Actor,
+  type AddSweepOutcome,
+  type ClubRecord,
+  type Editable,
+  type EditableKind,
+  type EditableKinds,
+  type NewSweep,
+  type Page,
+  type PageRequest,
+  type Store,
+  type StoredPoints,
+  type StoredSummary,
+  StoreError,
+  type SweepRecord,
+  type TokenRecord,
+} from '../port.ts';
+import { pack, packText, unpack, unpackText } from './compression.ts';
+import { storeErrorOf } from './errors.ts';
+import { packPoints, unpackPoints } from './points-codec.ts';
+import type { Reader } from './reader.ts';
+import { toEditable, toSweepRecord } from './rows.ts';
+import type { Writer } from './writer.ts';
+
+/** The Store port over one SQLite file: one writer in its thread, one reader here. */
+export class SqliteStore implements Store {
+  private readonly reader: Reader;
+  private readonly writer: Writer;
+
+  constructor(reader: Reader, writer: Writer) {
+    this.reader = reader;
+    this.writer = writer;
+  }
+
+  async addClub(
+    club: ClubRecord,
+    token: TokenRecord & { readonly secretSha256: Uint8Array },
+  ): Promise<void> {
+    const { secretSha256, ...record } = token;
+    await this.writer.run('addClub', club, record, secretSha256);
+  }
+
+  async listClubs(): Promise<readonly ClubRecord[]> {
+    return this.read((reader) => reader.clubs());
+  }
+
+  async findToken(secretSha256: Uint8Array): Promise<TokenRecord | null> {
+    return this.read((reader) => reader.token(secretSha256));
+  }
+
+  async addEditable<K extends EditableKind>(
+    kind: K,
+    actor: Actor,
+    fresh: { readonly id: string; readonly key: string; readonly facts: EditableKinds[K] },
+  ): Promise<Editable<EditableKinds[K]>> {
+    const { id, key, facts } = fresh;
+    const siteId = siteOf(facts);
+    const packed = { kind, actor, id, key, siteId, facts: JSON.stringify(facts) };
+    return toEditable<K>(await this.writer.run('addResource', packed));
+  }
+
+  async findEditable<K extends EditableKind>(
+    kind: K,
+    clubId: string,
+    idOrKey: string,
+  ): Promise<Editable<EditableKinds[K]> | null> {
+    const row = this.read((reader) => reader.resource(kind, clubId, idOrKey));
+    return row === null ? null : toEditable<K>(row);
+  }
+
+  async listEditables<K extends EditableKind>(
+    kind: K,
+    clubId: string,
+    page: PageRequest,
+    filter: { readonly siteId?: string } = {},
+  ): Promise<Page<Editable<EditableKinds[K]>>> {
+    const rows = this.read((reader) => reader.resources(kind, clubId, page, filter.siteId));
+    return pageOf(rows, page, toEditable<K>, ({ key, id }) => [key, id]);
+  }
+
+  async editEditable<K extends EditableKind>(
+    kind: K,
+    actor: Actor,
+    id: string,
+    revision: number,
+    next: { readonly key: string; readonly facts: EditableKinds[K] },
+  ): Promise<Editable<EditableKinds[K]>> {
+    const { key, facts } = next;
+    const siteId = siteOf(facts);
+    const packed = { kind, actor, id, revision, key, siteId, facts: JSON.stringify(facts) };
+    return toEditable<K>(await this.writer.run('editResource', packed));
+  }
+
+  async addSweep({ record, file, points, summary }: NewSweep): Promise<AddSweepOutcome> {
+    const [packedFile, packedSummary, packedUsable] = await Promise.all([
+      pack(file),
+      packText(summary.summaryJson),
+      packText(summary.usableJson),
+    ]);
+    const { outcome, row } = await this.writer.run('addSweep', {
+      record,
+      file: packedFile,
+      points: packPoints(points),
+      analysisVersion: summary.analysisVersion,
+      summary: packedSummary,
+      usable: packedUsable,
+    });
+    const kept = toSweepRecord(row);
+    if (outcome === 'added') return { outcome, record: kept };
+    const isSame = kept.facts.antennaId === record.facts.antennaId;
+    return { outcome: isSame ? 'same' : 'elsewhere', record: kept };
+  }
+
+  async findSweepByFile(clubId: string, fileSha256: string): Promise<SweepRecord | null> {
+    const sha256 = Buffer.from(fileSha256, 'hex');
+    const row = this.read((reader) => reader.sweepByFile(clubId, sha256));
+    return row === null ? null : toSweepRecord(row);
+  }
+
+  async findSweep(clubId: string, id: string): Promise<SweepRecord | null> {
+    const row = this.read((reader) => reader.sweep(clubId, id));
+    return row === null ? null : toSweepRecord(row);
+  }
+
+  async listSweeps(
+    clubId: string,
+    antennaId: string,
+    page: PageRequest,
+  ): Promise<Page<SweepRecord>> {
+    const rows = this.read((reader) => reader.sweeps(clubId, antennaId, page));
+    return pageOf(rows, page, toSweepRecord, ({ sortAt, id }) => [sortAt, id]);
+  }
+
+  async readSweepFile(clubId: string, id: string): Promise<Uint8Array | null> {
+    const row = this.read((reader) => reader.file(clubId, id));
+    if (row === null) return null;
+    const bytes = await unpack(row, row.bytes);
+    if (createHash('sha256').update(bytes).digest().equals(row.sha256)) return bytes;
+    throw new StoreError('corrupt', `The file of sweep ${id} is not what was sent.`);
+  }
+
+  async readSweepPoints(clubId: string, id: string): Promise<StoredPoints | null> {
+    const packed = this.read((reader) => reader.points(clubId, id));
+    return packed === null ? null : unpackPoints(packed);
+  }
+
+  async readSummary(
+    clubId: string,
+    id: string,
+    analysisVersion: string,
+  ): Promise<StoredSummary | null> {
+    const row = this.read((reader) => reader.summary(clubId, id, analysisVersion));
+    if (row === null) return null;
+    const [summaryJson, usableJson] = await Promise.all([
+      unpackText(row.summary),
+      unpackText(row.usable),
+    ]);
+    return { analysisVersion, summaryJson, usableJson };
+  }
+
+  async backup(path: string): Promise<void> {
+    await this.writer.run('copyTo', path);
+  }
+
+  async ready(): Promise<void> {
+    this.read((reader) => reader.clubs());
+    await this.writer.run('checkpoint');
+  }
+
+  async close(): Promise<void> {
+    this.reader.close();
+    await this.writer.close();
+  }
+
+  private read<Row>(ask: (reader: Reader) => Row): Row {
+    try {
+      return ask(this.reader);
+    } catch (error) {
+      throw storeErrorOf(error);
+    }
+  }
+}
+
+function siteOf(facts: EditableKinds[EditableKind]): string | null {
+  return 'siteId' in facts ? facts.siteId : null;
+}
+
+function pageOf<Row, Item>(
+  rows: readonly Row[],
+  { limit }: PageRequest,
+  toItem: (row: Row) => Item,
+  keyOf: (row: Row) => readonly [string, string],
+): Page<Item> {
+  const shown = rows.slice(0, limit);
+  const last = shown.at(-1);
+  const hasMore = rows.length > limit && last !== undefined;
+  return { items: shown.map(toItem), next: hasMore ? keyOf(last) : null };
+}

@@ -1,0 +1,59 @@
+import { createHash } from 'node:crypto';
+import { closeSync, fsyncSync, openSync, renameSync, rmSync } from 'node:fs';
+import { dirname } from 'node:path';
+import { inflateRawSync } from 'node:zlib';
+import Database from 'better-sqlite3';
+import { StoreError } from '../port.ts';
+import type { Codec } from './compression.ts';
+import type { Connection } from './connection.ts';
+
+interface FileRow {
+  readonly sha256: Buffer;
+  readonly bytes: number;
+  readonly codec: Codec;
+  readonly body: Buffer;
+}
+
+/**
+ * Copies the database online into a new file: under another name until it is checked and on disk,
+ * so that a file of the asked name is never half a copy. Throws `corrupt`.
+ */
+export function makeVerifiedCopy(connection: Connection, path: string): void {
+  const unfinished = `${path}.part`;
+  rmSync(unfinished, { force: true });
+  connection.prepare('VACUUM INTO ?').run(unfinished);
+  verifyCopy(unfinished);
+  flush(unfinished);
+  renameSync(unfinished, path);
+  flush(dirname(path));
+}
+
+function flush(path: string): void {
+  const handle = openSync(path, 'r');
+  fsyncSync(handle);
+  closeSync(handle);
+}
+
+/**
+ * Checks a copy of the database as a whole: its structure, that no row lacks its parent, and every
+ * file against its SHA-256. Throws `corrupt`.
+ */
+export function verifyCopy(path: string): void {
+  const copy = new Database(path, { readonly: true, fileMustExist: true });
+  try {
+    const integrity: unknown = copy.pragma('integrity_check', { simple: true });
+    if (integrity !== 'ok') throw new StoreError('corrupt', `The copy is damaged: ${integrity}.`);
+    const orphans = copy.prepare('SELECT count(*) FROM pragma_foreign_key_check').pluck().get();
+    if (orphans !== 0)
+      throw new StoreError('corrupt', `The copy has ${orphans} rows without parents.`);
+    const files = copy.prepare<[], FileRow>('SELECT sha256, bytes, codec, body FROM file');
+    for (const { sha256, bytes, codec, body } of files.iterate()) {
+      const file =
+        codec === 'none' ? body : inflateRawSync(body, { maxOutputLength: Math.max(1, bytes) });
+      if (createHash('sha256').update(file).digest().equals(sha256)) continue;
+      throw new StoreError('corrupt', `The file ${sha256.toString('hex')} in the copy is damaged.`);
+    }
+  } finally {
+    copy.close();
+  }
+}

@@ -1,0 +1,164 @@
+import {
+  type Actor,
+  type ClubRecord,
+  type EditableKind,
+  StoreError,
+  type SweepRecord,
+  type TokenRecord,
+} from '../port.ts';
+import type { Packed } from './compression.ts';
+import type { Connection } from './connection.ts';
+import { type ResourceRow, resourceColumns, type SweepRow, sweepColumns } from './rows.ts';
+import { makeVerifiedCopy } from './verified-copy.ts';
+
+/** A sweep packed for the writer. */
+export interface PackedSweep {
+  readonly record: SweepRecord;
+  readonly file: Packed;
+  readonly points: Uint8Array;
+  readonly analysisVersion: string;
+  /** Deflated texts. */
+  readonly summary: Uint8Array;
+  readonly usable: Uint8Array;
+}
+
+export interface FreshResource {
+  readonly kind: EditableKind;
+  readonly actor: Actor;
+  readonly id: string;
+  readonly key: string;
+  readonly siteId: string | null;
+  readonly facts: string;
+}
+
+export interface EditedResource extends FreshResource {
+  /** The revision that the edit was made from. */
+  readonly revision: number;
+}
+
+/** What the writer does, each whole or not at all. Arguments and results pass between threads. */
+export interface WriteActs {
+  addClub(club: ClubRecord, token: TokenRecord, secretSha256: Uint8Array): null;
+  addResource(fresh: FreshResource): ResourceRow;
+  editResource(edited: EditedResource): ResourceRow;
+  addSweep(sweep: PackedSweep): { readonly outcome: 'added' | 'known'; readonly row: SweepRow };
+  /** A verified copy of the whole database in a new file. */
+  copyTo(path: string): null;
+  checkpoint(): null;
+}
+
+/** Prepares the acts on the writer's connection. */
+export function writeActs(connection: Connection): WriteActs {
+  const insertClub = connection.prepare(
+    'INSERT INTO club (id, key, name, invented, created_at) VALUES (?, ?, ?, ?, ?)',
+  );
+  const insertToken = connection.prepare(
+    'INSERT INTO token (id, club_id, member_id, label, secret_sha256, created_at) VALUES (?, ?, ?, ?, ?, ?)',
+  );
+  const insertResource = connection.prepare<unknown[], ResourceRow>(
+    `INSERT INTO resource (club_id, kind, id, key, site_id, revision, created_at, updated_at, facts)
+     VALUES (@clubId, @kind, @id, @key, @siteId, 1, @at, @at, @facts) RETURNING ${resourceColumns}`,
+  );
+  const updateResource = connection.prepare<unknown[], ResourceRow>(
+    `UPDATE resource SET key = @key, site_id = @siteId, revision = revision + 1, updated_at = @at, facts = @facts
+     WHERE club_id = @clubId AND kind = @kind AND id = @id AND revision = @revision RETURNING ${resourceColumns}`,
+  );
+  const insertResourceRevision = connection.prepare(
+    `INSERT INTO resource_revision (club_id, kind, id, revision, key, facts, at, member_id)
+     VALUES (@clubId, @kind, @id, @revision, @key, @facts, @at, @memberId)`,
+  );
+  const insertFile = connection.prepare(
+    'INSERT INTO file (club_id, sha256, bytes, codec, body) VALUES (?, ?, ?, ?, ?) ON CONFLICT DO NOTHING',
+  );
+  const insertSweep = connection.prepare(
+    'INSERT INTO sweep (club_id, id, received_at, uploaded_by, file_sha256, measured, points) VALUES (?, ?, ?, ?, ?, ?, ?)',
+  );
+  const insertFacts = connection.prepare(
+    'INSERT INTO sweep_facts (club_id, sweep_id, revision, facts, at, member_id) VALUES (?, ?, 1, ?, ?, ?)',
+  );
+  const insertCurrent = connection.prepare(
+    'INSERT INTO sweep_current (club_id, sweep_id, revision, antenna_id, sort_at) VALUES (?, ?, 1, ?, ?)',
+  );
+  const insertSummary = connection.prepare(
+    'INSERT INTO summary (club_id, sweep_id, analysis_version, summary, usable) VALUES (?, ?, ?, ?, ?)',
+  );
+  const insertEvent = connection.prepare(
+    'INSERT INTO event (club_id, kind, subject_id, at, member_id) VALUES (?, ?, ?, ?, ?)',
+  );
+  const selectByFile = connection.prepare<unknown[], SweepRow>(
+    `SELECT ${sweepColumns} WHERE sweep.club_id = ? AND sweep.file_sha256 = ?`,
+  );
+
+  const withKeyChecked = (key: string, act: () => ResourceRow | undefined) => {
+    try {
+      return act();
+    } catch (error) {
+      if (!isUniqueKey(error)) throw error;
+      throw new StoreError('conflict', `The key ${key} is in use.`, 'key', error);
+    }
+  };
+  const keepRevision = (kind: EditableKind, actor: Actor, row: ResourceRow) => {
+    const { at, memberId } = actor;
+    const { clubId, id, revision, key, facts } = row;
+    insertResourceRevision.run({ clubId, kind, id, revision, key, facts, at, memberId });
+  };
+
+  return {
+    addClub(club, token, secretSha256) {
+      const { id, key, name, invented, createdAt } = club;
+      insertClub.run(id, key, name, invented ? 1 : 0, createdAt);
+      insertToken.run(token.id, id, token.memberId, token.label, secretSha256, token.createdAt);
+      insertEvent.run(id, 'club_added', id, createdAt, token.memberId);
+      return null;
+    },
+    addResource({ kind, actor, id, key, siteId, facts }) {
+      const { clubId, at, memberId } = actor;
+      const row = withKeyChecked(key, () =>
+        insertResource.get({ clubId, kind, id, key, siteId, at, facts }),
+      );
+      if (row === undefined) throw new StoreError('unavailable', 'The insert gave no row.');
+      keepRevision(kind, actor, row);
+      insertEvent.run(clubId, `${kind}_added`, id, at, memberId);
+      return row;
+    },
+    editResource({ kind, actor, id, key, siteId, facts, revision }) {
+      const { clubId, at, memberId } = actor;
+      const row = withKeyChecked(key, () =>
+        updateResource.get({ clubId, kind, id, key, siteId, at, facts, revision }),
+      );
+      if (row === undefined) {
+        throw new StoreError('stale', `Revision ${revision} of ${id} is not the present one.`);
+      }
+      keepRevision(kind, actor, row);
+      insertEvent.run(clubId, `${kind}_edited`, id, at, memberId);
+      return row;
+    },
+    addSweep({ record, file, points, analysisVersion, summary, usable }) {
+      const { id, clubId, receivedAt, uploadedBy, facts, measured } = record;
+      const sha256 = Buffer.from(measured.fileSha256, 'hex');
+      const known = selectByFile.get(clubId, sha256);
+      if (known !== undefined) return { outcome: 'known', row: known };
+      insertFile.run(clubId, sha256, measured.fileBytes, file.codec, file.body);
+      insertSweep.run(clubId, id, receivedAt, uploadedBy, sha256, JSON.stringify(measured), points);
+      insertFacts.run(clubId, id, JSON.stringify(facts), receivedAt, uploadedBy);
+      insertCurrent.run(clubId, id, facts.antennaId, facts.measuredAt ?? receivedAt);
+      insertSummary.run(clubId, id, analysisVersion, summary, usable);
+      insertEvent.run(clubId, 'sweep_added', id, receivedAt, uploadedBy);
+      const row = selectByFile.get(clubId, sha256);
+      if (row === undefined) throw new StoreError('unavailable', 'The sweep was not kept.');
+      return { outcome: 'added', row };
+    },
+    copyTo(path) {
+      makeVerifiedCopy(connection, path);
+      return null;
+    },
+    checkpoint() {
+      connection.pragma('wal_checkpoint(PASSIVE)');
+      return null;
+    },
+  };
+}
+
+function isUniqueKey(error: unknown): boolean {
+  return error instanceof Error && /UNIQUE constraint failed: .*resource\.key/.test(error.message);
+}

@@ -1,0 +1,83 @@
+import { Worker } from 'node:worker_threads';
+import { StoreError } from '../port.ts';
+import type { Failure } from './errors.ts';
+import type { JobResult } from './group-commit.ts';
+import type { WriteActs } from './write-acts.ts';
+import type { WriterOptions } from './writer-thread.ts';
+
+interface Waiting {
+  readonly resolve: (value: never) => void;
+  readonly reject: (error: StoreError) => void;
+}
+
+/** The main thread's side of the writer: hands over acts and waits for them to be durable. */
+export class Writer {
+  private readonly worker: Worker;
+  private readonly waiting = new Map<number, Waiting>();
+  private readonly exited: Promise<void>;
+  private nextId = 1;
+  private isClosed = false;
+
+  private constructor(worker: Worker) {
+    this.worker = worker;
+    worker.on('message', (result: JobResult) => this.settle(result));
+    this.exited = new Promise((resolve) => {
+      worker.once('exit', () => {
+        this.failAll('The writer has ended.');
+        resolve();
+      });
+    });
+    worker.on('error', (error) => this.failAll(`The writer failed: ${error.message}`));
+  }
+
+  /** Starts the thread; resolves once the file is open and its schema up to date. */
+  static async start(entry: URL, options: WriterOptions): Promise<Writer> {
+    const writer = new Writer(new Worker(entry, { workerData: options }));
+    await new Promise<never>((resolve, reject) => writer.waiting.set(0, { resolve, reject }));
+    return writer;
+  }
+
+  /** How many acts are waiting for their commit. */
+  get depth(): number {
+    return this.waiting.size;
+  }
+
+  /** Resolves with the act's result once it is on disk. Throws `StoreError`. */
+  run<Act extends keyof WriteActs>(
+    act: Act,
+    ...args: Parameters<WriteActs[Act]>
+  ): Promise<ReturnType<WriteActs[Act]>> {
+    if (this.isClosed) return Promise.reject(new StoreError('unavailable', 'The store is closed.'));
+    const id = this.nextId++;
+    return new Promise((resolve, reject) => {
+      this.waiting.set(id, { resolve, reject });
+      this.worker.postMessage({ id, act, args });
+    });
+  }
+
+  /** Lets the acts handed over finish, then ends the thread. */
+  async close(): Promise<void> {
+    if (!this.isClosed) {
+      this.isClosed = true;
+      this.worker.postMessage('close');
+    }
+    await this.exited;
+  }
+
+  private settle(result: JobResult): void {
+    const waiting = this.waiting.get(result.id);
+    this.waiting.delete(result.id);
+    if ('failure' in result) waiting?.reject(errorOf(result.failure));
+    else waiting?.resolve(result.value as never);
+  }
+
+  private failAll(message: string): void {
+    this.isClosed = true;
+    for (const { reject } of this.waiting.values()) reject(new StoreError('unavailable', message));
+    this.waiting.clear();
+  }
+}
+
+function errorOf({ kind, message, field }: Failure): StoreError {
+  return new StoreError(kind, message, field ?? undefined);
+}

@@ -1,0 +1,193 @@
+import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import type { PageRequest, Store } from '../../../server/store/port.ts';
+import {
+  actorOf,
+  analyzerFacts,
+  antennaFacts,
+  at,
+  idOf,
+  newSweep,
+  siteFacts,
+} from '../../support/store-records.ts';
+
+export interface OpenedStore {
+  readonly store: Store;
+  close(): Promise<void>;
+}
+
+const club = idOf(1);
+const otherClub = idOf(2);
+const firstPage: PageRequest = { limit: 10, after: null };
+
+/** What every adapter of the port must do; `open` makes an empty store. */
+export function describeStore(name: string, open: () => Promise<OpenedStore>): void {
+  describe(`the store port over ${name}`, () => {
+    let opened: OpenedStore;
+    let store: Store;
+    beforeEach(async () => {
+      opened = await open();
+      store = opened.store;
+      for (const [id, key, secret] of [
+        [club, 'ours', 1],
+        [otherClub, 'theirs', 2],
+      ] as const) {
+        await store.addClub(
+          { id, key, name: key, invented: true, createdAt: at },
+          {
+            id: idOf(100 + secret),
+            clubId: id,
+            memberId: idOf(900),
+            label: 'first',
+            createdAt: at,
+            secretSha256: new Uint8Array(32).fill(secret),
+          },
+        );
+      }
+    });
+    afterEach(() => opened.close());
+
+    it('finds a token by the hash of its secret and by nothing else', async () => {
+      expect(await store.findToken(new Uint8Array(32).fill(2))).toMatchObject({
+        clubId: otherClub,
+      });
+      expect(await store.findToken(new Uint8Array(32).fill(3))).toBeNull();
+    });
+
+    it('lists its clubs', async () => {
+      expect((await store.listClubs()).map(({ key }) => key)).toEqual(['ours', 'theirs']);
+    });
+
+    it('finds what was added by id and by key, and not for another club', async () => {
+      const fresh = { id: idOf(10), key: 'field', facts: siteFacts };
+      const added = await store.addEditable('sites', actorOf(club), fresh);
+      expect(added).toMatchObject({ revision: 1, createdAt: at, updatedAt: at, facts: siteFacts });
+      expect(await store.findEditable('sites', club, 'field')).toEqual(added);
+      expect(await store.findEditable('sites', club, idOf(10))).toEqual(added);
+      expect(await store.findEditable('sites', otherClub, idOf(10))).toBeNull();
+      expect(await store.findEditable('analyzers', club, 'field')).toBeNull();
+    });
+
+    it('refuses a key in use within its kind and club, and leaves nothing behind', async () => {
+      await store.addEditable('sites', actorOf(club), { id: idOf(10), key: 'a', facts: siteFacts });
+      const twin = { id: idOf(11), key: 'a', facts: siteFacts };
+      await expect(store.addEditable('sites', actorOf(club), twin)).rejects.toMatchObject({
+        kind: 'conflict',
+        field: 'key',
+      });
+      expect(await store.findEditable('sites', club, idOf(11))).toBeNull();
+      await store.addEditable('sites', actorOf(otherClub), twin);
+      const other = { id: idOf(12), key: 'a', facts: analyzerFacts };
+      await store.addEditable('analyzers', actorOf(club), other);
+    });
+
+    it('edits from the present revision alone', async () => {
+      const fresh = { id: idOf(10), key: 'a', facts: siteFacts };
+      await store.addEditable('sites', actorOf(club), fresh);
+      const next = { key: 'b', facts: { ...siteFacts, note: 'fenced' } };
+      const edited = await store.editEditable('sites', actorOf(club), idOf(10), 1, next);
+      expect(edited).toMatchObject({ revision: 2, key: 'b', facts: { note: 'fenced' } });
+      await expect(
+        store.editEditable('sites', actorOf(club), idOf(10), 1, next),
+      ).rejects.toMatchObject({ kind: 'stale' });
+      await expect(
+        store.editEditable('sites', actorOf(otherClub), idOf(10), 2, next),
+      ).rejects.toMatchObject({ kind: 'stale' });
+    });
+
+    it('lets one of two racing edits win', async () => {
+      const fresh = { id: idOf(10), key: 'a', facts: siteFacts };
+      await store.addEditable('sites', actorOf(club), fresh);
+      const edits = ['b', 'c', 'd'].map((key) =>
+        store.editEditable('sites', actorOf(club), idOf(10), 1, { key, facts: siteFacts }),
+      );
+      const outcomes = await Promise.allSettled(edits);
+      expect(outcomes.filter(({ status }) => status === 'fulfilled')).toHaveLength(1);
+    });
+
+    it('pages by key without losing or repeating any, and by site', async () => {
+      const keys = ['a', 'b', 'c', 'd', 'e'];
+      for (const [i, key] of keys.entries()) {
+        const facts = antennaFacts(idOf(i % 2));
+        await store.addEditable('antennas', actorOf(club), { id: idOf(20 + i), key, facts });
+      }
+      const seen: string[] = [];
+      let after: PageRequest['after'] = null;
+      do {
+        const page = await store.listEditables('antennas', club, { limit: 2, after });
+        seen.push(...page.items.map(({ key }) => key));
+        after = page.next;
+      } while (after !== null);
+      expect(seen).toEqual(keys);
+      const ofSite = await store.listEditables('antennas', club, firstPage, { siteId: idOf(1) });
+      expect(ofSite.items.map(({ key }) => key)).toEqual(['b', 'd']);
+      expect(ofSite.next).toBeNull();
+    });
+
+    it('keeps a sweep whole: record, file, points to the last bit, and answers', async () => {
+      const sweep = newSweep(club, idOf(30), idOf(20), '# Hz S RI R 50\n');
+      expect(await store.addSweep(sweep)).toEqual({ outcome: 'added', record: sweep.record });
+      expect(await store.findSweep(club, idOf(30))).toEqual(sweep.record);
+      expect(Buffer.from((await store.readSweepFile(club, idOf(30))) ?? [])).toEqual(
+        Buffer.from(sweep.file),
+      );
+      expect(await store.readSweepPoints(club, idOf(30))).toEqual(sweep.points);
+      expect(await store.readSummary(club, idOf(30), '1')).toEqual(sweep.summary);
+      expect(await store.readSummary(club, idOf(30), '2')).toBeNull();
+    });
+
+    it('tells nothing of a sweep to another club', async () => {
+      await store.addSweep(newSweep(club, idOf(30), idOf(20), 'x'));
+      const { fileSha256 } = newSweep(club, idOf(30), idOf(20), 'x').record.measured;
+      expect(await store.findSweep(otherClub, idOf(30))).toBeNull();
+      expect(await store.findSweepByFile(otherClub, fileSha256)).toBeNull();
+      expect(await store.readSweepFile(otherClub, idOf(30))).toBeNull();
+      expect(await store.readSweepPoints(otherClub, idOf(30))).toBeNull();
+      expect(await store.readSummary(otherClub, idOf(30), '1')).toBeNull();
+      expect((await store.listSweeps(otherClub, idOf(20), firstPage)).items).toEqual([]);
+    });
+
+    it('answers the same bytes with the first record, and says if they are another antenna’s', async () => {
+      const first = newSweep(club, idOf(30), idOf(20), 'same');
+      await store.addSweep(first);
+      const again = await store.addSweep(newSweep(club, idOf(31), idOf(20), 'same'));
+      expect(again).toEqual({ outcome: 'same', record: first.record });
+      const elsewhere = await store.addSweep(newSweep(club, idOf(32), idOf(21), 'same'));
+      expect(elsewhere).toEqual({ outcome: 'elsewhere', record: first.record });
+      const theirs = await store.addSweep(newSweep(otherClub, idOf(33), idOf(21), 'same'));
+      expect(theirs.outcome).toBe('added');
+    });
+
+    it('makes one record of fifty equal uploads at once', async () => {
+      const uploads = Array.from({ length: 50 }, (_, i) =>
+        store.addSweep(newSweep(club, idOf(100 + i), idOf(20), 'equal')),
+      );
+      const outcomes = await Promise.all(uploads);
+      expect(outcomes.filter(({ outcome }) => outcome === 'added')).toHaveLength(1);
+      expect(new Set(outcomes.map(({ record }) => record.id)).size).toBe(1);
+      expect((await store.listSweeps(club, idOf(20), firstPage)).items).toHaveLength(1);
+    });
+
+    it('lists sweeps newest first by when they were measured, else received', async () => {
+      const times = ['2026-05-01T00:00:00.000Z', '2025-05-01T00:00:00.000Z', null];
+      for (const [i, measuredAt] of times.entries()) {
+        const sweep = newSweep(club, idOf(30 + i), idOf(20), `sweep ${i}`);
+        const facts = { ...sweep.record.facts, measuredAt };
+        await store.addSweep({ ...sweep, record: { ...sweep.record, facts } });
+      }
+      const page = await store.listSweeps(club, idOf(20), { limit: 2, after: null });
+      expect(page.items.map(({ id }) => id)).toEqual([idOf(32), idOf(30)]);
+      const rest = await store.listSweeps(club, idOf(20), { limit: 2, after: page.next });
+      expect(rest.items.map(({ id }) => id)).toEqual([idOf(31)]);
+      expect(rest.next).toBeNull();
+    });
+
+    it('is ready while it is open, and unavailable afterwards', async () => {
+      await store.ready();
+      await store.close();
+      await expect(store.ready()).rejects.toMatchObject({ kind: 'unavailable' });
+      await expect(
+        store.addEditable('sites', actorOf(club), { id: idOf(1), key: 'z', facts: siteFacts }),
+      ).rejects.toMatchObject({ kind: 'unavailable' });
+    });
+  });
+}

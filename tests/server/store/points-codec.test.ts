@@ -1,0 +1,57 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { packPoints, unpackPoints } from '../../../server/store/sqlite/points-codec.ts';
+
+const finite = fc.double({ noNaN: true, noDefaultInfinity: true });
+
+describe('packed points', () => {
+  it('come back bit for bit, whatever the numbers', () => {
+    fc.assert(
+      fc.property(fc.array(fc.tuple(finite, finite, finite), { minLength: 1 }), (rows) => {
+        const points = {
+          frequencyHz: Float64Array.from(rows, ([f]) => f),
+          reflectionRe: Float64Array.from(rows, ([, re]) => re),
+          reflectionIm: Float64Array.from(rows, ([, , im]) => im),
+          reflectionMagnitude: null,
+        };
+        expect(unpackPoints(packPoints(points))).toEqual(points);
+      }),
+    );
+  });
+
+  it('keep the sign of a negative zero', () => {
+    const points = {
+      frequencyHz: Float64Array.of(1, 2),
+      reflectionRe: null,
+      reflectionIm: null,
+      reflectionMagnitude: Float64Array.of(0, -0),
+    };
+    const [, zero] = unpackPoints(packPoints(points)).reflectionMagnitude ?? [];
+    expect(Object.is(zero, -0)).toBe(true);
+  });
+
+  it('are small where numbers have few places, as in files', () => {
+    const frequencyHz = Float64Array.from({ length: 401 }, (_, i) => 14_000_000 + 2500 * i);
+    const reflectionRe = frequencyHz.map((f) => Number(Math.sin(f / 1e5).toFixed(5)));
+    const reflectionIm = frequencyHz.map((f) => Number(Math.cos(f / 1e5).toFixed(5)));
+    const packed = packPoints({
+      frequencyHz,
+      reflectionRe,
+      reflectionIm,
+      reflectionMagnitude: null,
+    });
+    expect(packed.length).toBeLessThan(401 * 9);
+    expect(packed.length).toBeGreaterThan(401);
+  });
+
+  it('that were cut off are told as corrupt', () => {
+    const points = {
+      frequencyHz: Float64Array.of(1, 2.5, 1e300),
+      reflectionRe: null,
+      reflectionIm: null,
+      reflectionMagnitude: Float64Array.of(0.1, 0.2, 0.3),
+    };
+    const packed = packPoints(points);
+    expect(() => unpackPoints(packed.subarray(0, packed.length - 1))).toThrow(/end before/);
+  });
+});

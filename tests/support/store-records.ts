@@ -1,0 +1,92 @@
+import { createHash } from 'node:crypto';
+import type {
+  Actor,
+  AnalyzerFacts,
+  AntennaFacts,
+  NewSweep,
+  SiteFacts,
+} from '../../server/store/port.ts';
+
+/** Records as the store takes them, for tests of the store itself. */
+
+export const at = '2026-06-01T12:00:00.000Z';
+
+/** An id that sorts as its number does. */
+export function idOf(number: number): string {
+  return `01970000-0000-7000-8000-${String(number).padStart(12, '0')}`;
+}
+
+export function actorOf(clubId: string): Actor {
+  return { clubId, memberId: idOf(900), at };
+}
+
+export const siteFacts: SiteFacts = {
+  name: 'Field',
+  latitudeDeg: null,
+  longitudeDeg: null,
+  elevationM: 120,
+  note: '',
+  invented: true,
+};
+
+export const analyzerFacts: AnalyzerFacts = { name: 'Bench unit', note: '', invented: true };
+
+export function antennaFacts(siteId: string): AntennaFacts {
+  return {
+    siteId,
+    name: 'Dipole',
+    kind: 'dipole',
+    designBands: ['20m'],
+    plan: 'itu-r1',
+    licence: null,
+    maxSwr: 2,
+    referenceOhm: 50,
+    feedLine: null,
+    note: '',
+    invented: true,
+  };
+}
+
+/** A sweep of three points whose file holds the text. */
+export function newSweep(clubId: string, id: string, antennaId: string, text: string): NewSweep {
+  const file = new TextEncoder().encode(text);
+  return {
+    record: {
+      id,
+      clubId,
+      receivedAt: at,
+      uploadedBy: idOf(900),
+      facts: {
+        antennaId,
+        analyzerId: null,
+        measuredAt: null,
+        conditions: null,
+        note: '',
+        plane: 'measured',
+        invented: true,
+      },
+      measured: {
+        fileSha256: createHash('sha256').update(file).digest('hex'),
+        fileBytes: file.length,
+        fileName: 'a.s1p',
+        format: 'touchstone-1',
+        columns: null,
+        port: null,
+        phase: 'signed',
+        referenceOhm: 50,
+        points: 3,
+        lowHz: 14e6,
+        highHz: 14.2e6,
+        assumptionsJson: '[]',
+      },
+    },
+    file,
+    points: {
+      frequencyHz: Float64Array.of(14e6, 14.1e6, 14.2e6),
+      reflectionRe: Float64Array.of(0.1, -0.25, 1 / 3),
+      reflectionIm: Float64Array.of(-0.5, 0, 0.123456),
+      reflectionMagnitude: null,
+    },
+    summary: { analysisVersion: '1', summaryJson: '{"a":1}', usableJson: '{"b":2}' },
+  };
+}

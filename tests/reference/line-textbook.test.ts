@@ -3,6 +3,7 @@ import { attenuationDbPer100M, fitAttenuation } from '../../core/line/attenuatio
 import { findCable } from '../../core/line/cables.ts';
 import { fromFeedPoint } from '../../core/line/line.ts';
 import { handbookTotalLossDb, lossThroughLine, swrAtLoad } from '../../core/line/loss-with-swr.ts';
+import { propagation } from '../../core/line/propagation.ts';
 import {
   accepted,
   exactCable,
@@ -76,6 +77,49 @@ describe('a line between a resonant antenna and the analyzer', () => {
     const z = impedanceOf(accepted(fromFeedPoint(sweep, line)), 0);
     expect(z.re).toBeCloseTo(40, 9);
     expect(z.im).toBeCloseTo(30, 9);
+  });
+});
+
+describe('the complex impedance of a lossy line', () => {
+  // J. Bird, Electrical Circuit Theory and Technology, problem 44.10 (statement read, recomputed):
+  // 8 ohm, 3 mH, 7.5 nF, 0.25 uS per km at 1 kHz -> gamma 0.00627307887796 + j0.0304239365419 per km,
+  // Z0 646.304012645 - j129.690118966 ohm
+  it('is that of a published telephone line, from its attenuation, speed and conductance', () => {
+    const omega = 2 * Math.PI * 1000;
+    const alpha = 0.00627307887796 / 1000;
+    const beta = 0.0304239365419 / 1000;
+    const highFrequencyOhm = beta / (omega * 7.5e-12);
+    const dielectric = (0.25e-9 * highFrequencyOhm) / 2;
+    const dbPer100M = (100 * 20) / Math.LN10;
+    const cable = exactCable({
+      characteristicOhm: highFrequencyOhm,
+      velocityFactor: omega / (beta * LIGHT),
+      k1: (dbPer100M * (alpha - dielectric)) / Math.sqrt(1e-3),
+      k2: (dbPer100M * dielectric) / 1e-3,
+    });
+    const line = propagation(cable, 1000);
+    expect(line.alpha).toBeCloseTo(alpha, 16);
+    expect(line.beta).toBeCloseTo(beta, 16);
+    expect(line.characteristic.re).toBeCloseTo(646.304012645, 5);
+    expect(line.characteristic.im).toBeCloseTo(-129.690118966, 5);
+  });
+});
+
+describe('an open line', () => {
+  it.each([
+    // f1 = c VF/(4 l), spacing c VF/(2 l): recomputed
+    [0.66, 15.24, 3.24578448622047e6],
+    [0.66, 20, 2.4732877785e6],
+    [0.85, 30, 2.12352991083333e6],
+    [1, 10, 7.49481145e6],
+  ])('of VF %d and %d m is a short at %d Hz and at three times that', (vf, lengthM, hz) => {
+    const line = lineOf(section(exactCable({ velocityFactor: vf }), lengthM));
+    const open = impedanceSweep(Float64Array.of(hz, 3 * hz), () => ({ re: 1e12, im: 0 }));
+    const input = accepted(fromFeedPoint(open, line));
+    for (const i of [0, 1]) {
+      expect(input.reflectionRe[i]).toBeCloseTo(-1, 9);
+      expect(input.reflectionIm[i]).toBeCloseTo(0, 8);
+    }
   });
 });
 

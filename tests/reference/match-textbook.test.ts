@@ -95,11 +95,9 @@ describe('L-networks', () => {
   });
 
   it('of a load of the target resistance need one part, and none for the target itself', () => {
-    const [, ...rest] = lNetworks({ re: 50, im: 30 }, 50).map((each) => lElements(each, hz).length);
-    expect(rest).toContain(1);
-    expect(lNetworks({ re: 50, im: 0 }, 50).map((each) => lElements(each, hz).length)).toEqual([
-      0, 0,
-    ]);
+    const parts = (load: Complex) => lNetworks(load, 50).map((each) => lElements(each, hz).length);
+    expect(parts({ re: 50, im: 30 }).sort()).toEqual([1, 2]);
+    expect(parts({ re: 50, im: 0 })).toEqual([0]);
   });
 });
 

@@ -34,13 +34,12 @@ function shuntAtLoad(load: Complex, targetOhm: number): readonly LNetwork[] {
   });
 }
 
-/** X = -+sqrt(R(Z0 - R)) - XL; B = -+sqrt((Z0 - R)/R)/Z0. */
+/** X = -+sqrt(R(Z0 - R)) - XL; B = -+sqrt((Z0 - R)/R)/Z0. At R = Z0 the other topology has it all. */
 function seriesAtLoad(load: Complex, targetOhm: number): readonly LNetwork[] {
   const { re: r, im: x } = load;
-  if (r > targetOhm) return [];
+  if (r >= targetOhm) return [];
   const root = Math.sqrt(r * (targetOhm - r));
-  const signs = root === 0 ? [0] : [1, -1];
-  return signs.map((sign) => ({
+  return [1, -1].map((sign) => ({
     topology: 'series_at_load',
     seriesReactanceOhm: sign * root - x,
     shuntSusceptanceS: (sign * Math.sqrt((targetOhm - r) / r)) / targetOhm,

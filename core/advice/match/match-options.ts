@@ -106,8 +106,9 @@ export function matchOptions(sweep: Sweep, request: MatchRequest): Result<MatchA
   });
 }
 
-/** A transformer is offered only where it does better than nothing. */
-function serves({ kind, exact }: MatchOption, unmatched: BandMatch): boolean {
+/** A transformer is offered only where it does better than nothing, nothing never. */
+function serves({ kind, elements, exact }: MatchOption, unmatched: BandMatch): boolean {
+  if (elements.length === 0) return false;
   return (
     kind !== 'transformer' ||
     exact.usableWidthHz > unmatched.usableWidthHz ||

@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { bandMatch, throughNetwork } from '../../../../core/advice/match/band-swr.ts';
 import type { MatchElement } from '../../../../core/advice/match/element.ts';
@@ -125,6 +126,44 @@ describe('a match that cannot be made', () => {
     expect(refusalOf(matchOptions({ ...low, phase: 'unsigned' }, request))).toBe('phase_needed');
     const active = reflectionSweep(evenly(7e6, 7.2e6, 5), () => ({ re: 1.2, im: 0 }));
     expect(refusalOf(matchOptions(active, request))).toBe('load_not_passive');
+  });
+});
+
+describe('any passive antenna', () => {
+  it('gets options with parts, an SWR of 1 or more everywhere, and never a figure that is none', () => {
+    fc.assert(
+      fc.property(
+        fc.array(
+          fc.tuple(
+            fc.double({ min: 0, max: 1, noNaN: true }),
+            fc.double({ min: 0, max: 7, noNaN: true }),
+          ),
+          { minLength: 2, maxLength: 12 },
+        ),
+        (polar) => {
+          const sweep = reflectionSweep(evenly(7e6, 7.2e6, polar.length), (hz) => {
+            const [size, angle] = polar[Math.round(((hz - 7e6) / 0.2e6) * (polar.length - 1))];
+            return { re: size * Math.cos(angle), im: size * Math.sin(angle) };
+          });
+          const result = matchOptions(sweep, { ...request, targetOhm: 75 });
+          if (!result.ok) return expect(result.error.code).toBe('load_not_passive');
+          for (const { elements, exact, nearest } of result.value.options) {
+            expect(elements.length).toBeGreaterThan(0);
+            for (const match of [exact, nearest]) {
+              for (const swr of match.swr) expect(swr).toBeGreaterThanOrEqual(1);
+              expect(match.designLossDb).toBeGreaterThanOrEqual(0);
+              expect(match.usableWidthHz).toBeGreaterThanOrEqual(0);
+              expect(match.usableWidthHz).toBeLessThanOrEqual(0.2e6 + 1);
+            }
+          }
+        },
+      ),
+    );
+  });
+
+  it('that is matched already needs none', () => {
+    const matched = reflectionSweep(evenly(7e6, 7.2e6, 5), () => ({ re: 0, im: 0 }));
+    expect(accepted(matchOptions(matched, request)).options).toEqual([]);
   });
 });
 

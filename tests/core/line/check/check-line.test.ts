@@ -217,6 +217,9 @@ describe('a noisy line check', () => {
       const end = check.discontinuities.find((place) => place.kind === 'end');
       if (Math.abs((end?.distanceM ?? 0) - 20) <= (end?.distanceU95M ?? 0)) within++;
       expect(check.discontinuities).toHaveLength(1);
+      const off = Math.abs((check.electricalLengthM ?? 0) - 20 / 0.66);
+      expect(off).toBeLessThan(check.electricalLengthU95M ?? 0);
+      expect(check.electricalLengthU95M).toBeLessThan(0.1);
     }
     expect(within / runs).toBeGreaterThan(0.85);
   });

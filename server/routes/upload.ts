@@ -1,5 +1,6 @@
 import type { FastifyReply, FastifyRequest } from 'fastify';
 import { z } from 'zod';
+import { columnsGrammar } from '../../core/formats/delimited/columns-grammar.ts';
 import { actorOf } from '../auth/bearer.ts';
 import type { App } from '../http/app-type.ts';
 import { checkContentDigest, digestField, sha256 } from '../http/digests.ts';
@@ -16,6 +17,12 @@ import { planeSchema } from '../wire/summary.ts';
 import { sweepWithSummaryJson, sweepWithSummarySchema } from '../wire/sweep.ts';
 import { findOrRefuse, resolveReference } from './editables.ts';
 
+const columnsDescription = `What the columns of delimited text hold.
+
+\`\`\`
+${columnsGrammar}
+\`\`\``;
+
 const querystring = z.strictObject({
   measured_at: timeInputSchema.optional(),
   analyzer: idOrKeySchema.optional(),
@@ -26,11 +33,7 @@ const querystring = z.strictObject({
     .meta({ examples: ['wet ground, 4 degrees'] }),
   note: z.string().max(2000).default(''),
   plane: planeSchema.default('measured'),
-  columns: z
-    .string()
-    .max(2000)
-    .optional()
-    .meta({ description: 'What the columns of delimited text hold.' }),
+  columns: z.string().max(2000).optional().meta({ description: columnsDescription }),
   port: z
     .enum(['1', '2'])
     .transform((port) => (port === '1' ? 1 : 2))

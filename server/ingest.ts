@@ -1,7 +1,7 @@
 import { readSweep } from '../core/formats/read-sweep.ts';
 import type { ReadError, ReadLimits, ReadSweep } from '../core/formats/read-types.ts';
 import { fail, ok, type Result } from '../core/result.ts';
-import { basisOf, summaryOf, usableOf } from './reports.ts';
+import { analyseOn, basisOf, summaryOf, usableOf } from './reports.ts';
 import type {
   AntennaRecord,
   NewSweep,
@@ -57,10 +57,11 @@ function derivedFrom(
   { sweep, assumptions }: ReadSweep,
 ): StoredSummary {
   const basis = basisOf(antenna.facts, record);
+  const analysis = analyseOn(basis, sweep);
   return {
     analysisVersion: basis.analysisVersion,
-    summaryJson: JSON.stringify(summaryOf(record, sweep, assumptions, basis)),
-    usableJson: JSON.stringify(usableOf(record, sweep, basis)),
+    summaryJson: JSON.stringify(summaryOf(record, analysis, assumptions, basis)),
+    usableJson: JSON.stringify(usableOf(record, analysis, basis)),
   };
 }
 

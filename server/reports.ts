@@ -1,7 +1,8 @@
 import { standingCautions } from '../core/advice/cautions.ts';
-import { swrCurve } from '../core/analysis/refined-swr.ts';
+import { type Analysis, analyse } from '../core/analysis/analysis.ts';
+import { curveOf } from '../core/analysis/refined-swr.ts';
 import { renormaliseSweep } from '../core/analysis/renormalise-sweep.ts';
-import { analysisVersion, summarise } from '../core/analysis/summarise.ts';
+import { analysisVersion, summariseAnalysis } from '../core/analysis/summarise.ts';
 import { findPlan } from '../core/bands/plans.ts';
 import { usableBands } from '../core/bands/usable.ts';
 import type { Assumption } from '../core/formats/read-types.ts';
@@ -50,26 +51,29 @@ export async function reportBasisOf(service: Service, record: SweepRecord): Prom
   return basisOf(antenna.facts, record);
 }
 
-/** The summary of a sweep as it is sent. */
+/** The analysis from which both the summary and the report on this basis are read. */
+export function analyseOn({ referenceOhm }: ReportBasis, sweep: Sweep): Analysis {
+  return analyse(renormaliseSweep(sweep, referenceOhm));
+}
+
+/** The summary of a sweep as it is sent; `analysis` is that on this basis. */
 export function summaryOf(
   record: SweepRecord,
-  sweep: Sweep,
+  analysis: Analysis,
   assumptions: readonly Assumption[],
-  basis: ReportBasis,
+  { plane }: ReportBasis,
 ) {
-  const { plane, referenceOhm } = basis;
-  const summary = summarise(sweep, { plane, referenceOhm, assumptions });
+  const summary = summariseAnalysis(analysis, { plane, assumptions });
   const cautions = [...summary.cautions, ...standingCautions];
   return summaryToWire(identityOf(record), { ...summary, cautions });
 }
 
-/** The usable-band report of a sweep as it is sent. */
-export function usableOf(record: SweepRecord, sweep: Sweep, basis: ReportBasis) {
-  const { referenceOhm, maxSwr, licence, designBands } = basis;
+/** The usable-band report of a sweep as it is sent; `analysis` is that on this basis. */
+export function usableOf(record: SweepRecord, analysis: Analysis, basis: ReportBasis) {
+  const { maxSwr, licence, designBands } = basis;
   const plan = findPlan(basis.plan);
   if (plan === null) throw new Error(`The plan ${basis.plan} is gone.`);
-  const curve = swrCurve(renormaliseSweep(sweep, referenceOhm));
-  const report = usableBands(curve, plan, { maxSwr, licence, designBands });
+  const report = usableBands(curveOf(analysis), plan, { maxSwr, licence, designBands });
   return usableToWire(identityOf(record), basis, report);
 }
 
@@ -81,9 +85,9 @@ export async function summaryText(
 ): Promise<string> {
   const stored = await service.store.readSummary(record.clubId, record.id, basis.analysisVersion);
   if (stored !== null && holds(stored.summaryJson, summaryMark(basis))) return stored.summaryJson;
-  const sweep = await readSweepOf(service, record);
+  const analysis = analyseOn(basis, await readSweepOf(service, record));
   const assumptions: Assumption[] = JSON.parse(record.measured.assumptionsJson);
-  return JSON.stringify(summaryOf(record, sweep, assumptions, basis));
+  return JSON.stringify(summaryOf(record, analysis, assumptions, basis));
 }
 
 /** The report as JSON: the stored text if it was made on this basis, else computed. */
@@ -94,7 +98,8 @@ export async function usableText(
 ): Promise<string> {
   const stored = await service.store.readSummary(record.clubId, record.id, basis.analysisVersion);
   if (stored !== null && holds(stored.usableJson, toSnakeCase(basis))) return stored.usableJson;
-  return JSON.stringify(usableOf(record, await readSweepOf(service, record), basis));
+  const analysis = analyseOn(basis, await readSweepOf(service, record));
+  return JSON.stringify(usableOf(record, analysis, basis));
 }
 
 /** The points of a record as a sweep. */

@@ -28,8 +28,16 @@ const usualLimits = [1.5, 2, 3];
 /** The resonance and minimum-SWR summary of a sweep. */
 export function summarise(sweep: Sweep, options: SummariseOptions = {}): Summary {
   const asked = renormaliseSweep(sweep, options.referenceOhm ?? sweep.referenceOhm);
-  const analysis = analyse(asked);
+  return summariseAnalysis(analyse(asked), options);
+}
+
+/** The same of a sweep that was analysed already, against the reference it was analysed against. */
+export function summariseAnalysis(
+  analysis: Analysis,
+  options: Omit<SummariseOptions, 'referenceOhm'> = {},
+): Summary {
   const { plane = 'measured', assumptions = [], swrLimits = usualLimits } = options;
+  const { sweep: asked } = analysis;
   const resonances = resonancesOf(analysis);
   const swrMinima = analysis.minima.flatMap((turn) => swrMinimumAt(analysis, turn) ?? []);
   const minimumSwr = lowest(swrMinima);

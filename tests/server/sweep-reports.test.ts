@@ -1,5 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { readSweepOf, reportBasisOf, summaryOf } from '../../server/reports.ts';
+import { analyseOn, readSweepOf, reportBasisOf, summaryOf } from '../../server/reports.ts';
 import { addAntenna, resonatorFile, upload } from '../support/club-records.ts';
 import { makeTestApp, type TestApp, testUrl } from '../support/test-app.ts';
 
@@ -49,7 +49,8 @@ describe('a summary', () => {
     const sweep = await readSweepOf(club.service, record);
     const basis = await reportBasisOf(club.service, record);
     const assumptions = JSON.parse(record.measured.assumptionsJson);
-    const computed = JSON.stringify(summaryOf(record, sweep, assumptions, basis));
+    const analysis = analyseOn(basis, sweep);
+    const computed = JSON.stringify(summaryOf(record, analysis, assumptions, basis));
     expect(stored.body).toBe(computed);
   });
 

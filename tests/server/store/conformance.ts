@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
-import type { PageRequest, Store } from '../../../server/store/port.ts';
+import type { AntennaRecord, Page, PageRequest, Store } from '../../../server/store/port.ts';
 import {
   actorOf,
   analyzerFacts,
@@ -113,7 +113,10 @@ export function describeStore(name: string, open: () => Promise<OpenedStore>): v
       const seen: string[] = [];
       let after: PageRequest['after'] = null;
       do {
-        const page = await store.listEditables('antennas', club, { limit: 2, after });
+        const page: Page<AntennaRecord> = await store.listEditables('antennas', club, {
+          limit: 2,
+          after,
+        });
         seen.push(...page.items.map(({ key }) => key));
         after = page.next;
       } while (after !== null);

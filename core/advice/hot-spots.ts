@@ -4,10 +4,12 @@ import { LIGHT_M_PER_S } from '../line/propagation.ts';
 import { fail, ok, type Result } from '../result.ts';
 import { powerCautions } from './power.ts';
 import {
+  compareResistance,
   type ExpectedResistance,
   expectedResistance,
   isMonopole,
   type RadiatorKind,
+  type ResistanceComparison,
   usualArm,
 } from './radiator.ts';
 
@@ -45,6 +47,8 @@ export interface HotSpots {
   readonly spots: readonly HotSpot[];
   readonly expected: ExpectedResistance;
   readonly measuredResistanceOhm: number | null;
+  /** Measured beside expected; null where nothing was measured at the feed point. */
+  readonly comparison: ResistanceComparison | null;
   readonly source: string;
   readonly assumptions: readonly Assumption[];
   readonly cautions: readonly Caution[];
@@ -101,6 +105,8 @@ export function hotSpots(request: HotSpotRequest): Result<HotSpots, HotSpotError
     spots: spots(armM, wavelengthM, arm),
     expected,
     measuredResistanceOhm: feedResistanceOhm,
+    comparison:
+      feedResistanceOhm === null ? null : compareResistance(radiator, expected, feedResistanceOhm),
     source:
       'sinusoidal current distribution of thin antennas (C. A. Balanis, Antenna Theory, sec. 4.5)',
     assumptions: assumptions(request, armM, radiusM, resistanceOhm),

@@ -100,3 +100,30 @@ export function expectedResistance(kind: RadiatorKind, armWavelengths: number): 
     }
   }
 }
+
+/** A measured feed resistance beside the expected one. */
+export interface ResistanceComparison {
+  readonly standing: 'below' | 'within' | 'above';
+  readonly detail: string;
+}
+
+/** Says on which side of theory a measured feed resistance lies, and what usually makes it so. */
+export function compareResistance(
+  kind: RadiatorKind,
+  expected: ExpectedResistance,
+  measuredOhm: number,
+): ResistanceComparison {
+  const { lowOhm, highOhm } = expected;
+  const said = `Measured are ${measuredOhm.toPrecision(3)} ohm, theory expects ${lowOhm.toPrecision(2)} to ${highOhm.toPrecision(3)} ohm`;
+  if (measuredOhm < lowOhm) {
+    return {
+      standing: 'below',
+      detail: `${said}: low height, conductors close by or loading lower it.`,
+    };
+  }
+  if (measuredOhm <= highOhm) return { standing: 'within', detail: `${said}: as it should be.` };
+  const cause = isMonopole(kind)
+    ? 'most of the rest is loss in ground and radials'
+    : 'loss in coils and ground, the height above ground or a longer conductor raise it';
+  return { standing: 'above', detail: `${said}: ${cause}.` };
+}

@@ -12,6 +12,8 @@ export interface TrimRequest {
   readonly targetHz: number;
   /** Of the whole resonant conductor, metres; null if not known. */
   readonly lengthM: number | null;
+  /** The frequency was seen through a line that moves resonances. */
+  readonly throughLine: boolean;
   /** Before and after earlier work on this antenna; its own sensitivity is used where it shows. */
   readonly history: readonly TrimPair[];
 }

@@ -18,7 +18,7 @@ export interface TrimError {
  * only if every dimension scales), and else none but a small trial.
  */
 export function trimAdvice(request: TrimRequest): Result<TrimAdvice, TrimError> {
-  const { fromHz, fromU95Hz, targetHz, lengthM, kind } = request;
+  const { fromHz, targetHz, lengthM } = request;
   if (!(fromHz > 0 && targetHz > 0 && Number.isFinite(fromHz / targetHz))) {
     return fail({
       code: 'frequency_not_positive',
@@ -31,16 +31,32 @@ export function trimAdvice(request: TrimRequest): Result<TrimAdvice, TrimError> 
       detail: 'A length is a positive number of metres.',
     });
   }
+  const advice = chosen(request);
+  return ok(
+    request.throughLine && request.goal === 'resonance'
+      ? { ...advice, cautions: [seenThroughLine, ...advice.cautions] }
+      : advice,
+  );
+}
+
+function chosen(request: TrimRequest): TrimAdvice {
+  const { fromHz, fromU95Hz, targetHz, kind } = request;
   const changeHz = targetHz - fromHz;
-  if (Math.abs(changeHz) <= (fromU95Hz ?? 0)) return ok(leave(request));
+  if (Math.abs(changeHz) <= (fromU95Hz ?? 0)) return leave(request);
   const sensitivity = trimSensitivity(request.history);
-  if (sensitivity !== null && isTelling(sensitivity)) return ok(byHistory(request, sensitivity));
+  if (sensitivity !== null && isTelling(sensitivity)) return byHistory(request, sensitivity);
   const cautions = sensitivity === null ? [] : [untelling(sensitivity)];
   const behaviour = trimBehaviour(kind);
   const withinRule = Math.abs(targetHz / fromHz - 1) <= RULE_LIMIT;
-  if (behaviour === 'bare' && withinRule) return ok(bySimpleRule(request, sensitivity, cautions));
-  return ok(byTrial(request, sensitivity, cautions));
+  if (behaviour === 'bare' && withinRule) return bySimpleRule(request, sensitivity, cautions);
+  return byTrial(request, sensitivity, cautions);
 }
+
+const seenThroughLine: Caution = {
+  code: 'resonance_seen_through_line',
+  detail:
+    "This resonance was seen through a line and is not the antenna's own. Trim by the feed point, or by the least SWR.",
+};
 
 /** A sensitivity counts where longer means lower, beyond its half-width. */
 function isTelling({ hzPerM, u95HzPerM }: TrimSensitivity): boolean {

@@ -118,3 +118,18 @@ function resolveSection(
   }
   return ok({ cable, lengthM, lengthU95M: lengthU95M ?? LENGTH_SPREAD * lengthM, extraLossDb });
 }
+
+/** What is assumed of the loss of a line's cables outside the frequencies of their data. */
+export function extrapolatedLoss(
+  line: FeedLine,
+  lowHz: number,
+  highHz: number,
+): readonly Assumption[] {
+  const cables = new Set(line.sections.map((section) => section.cable));
+  return [...cables]
+    .filter(({ attenuation }) => lowHz < attenuation.lowHz || highHz > attenuation.highHz)
+    .map(({ name, attenuation }) => ({
+      code: 'cable_loss_extrapolated',
+      detail: `Loss of ${name} is known from ${attenuation.lowHz / 1e6} to ${attenuation.highHz / 1e6} MHz; beyond, the law k1 sqrt(f) + k2 f is followed.`,
+    }));
+}

@@ -3,7 +3,7 @@ import type { Assumption } from '../formats/read-types.ts';
 import { ok, type Result } from '../result.ts';
 import type { Sweep } from '../sweep.ts';
 import { type Conditioning, judgeRemoval } from './conditioning.ts';
-import type { FeedLine } from './feed-line.ts';
+import { extrapolatedLoss, type FeedLine } from './feed-line.ts';
 import { growHalfWidths, type SummaryPair } from './grown-half-widths.ts';
 import { type LineError, toFeedPoint } from './line.ts';
 import { removeLine } from './removal-half-width.ts';
@@ -59,7 +59,12 @@ export function feedPointSummary(
   const summary: Summary = {
     ...grown,
     plane: 'feed_point',
-    assumptions: [...grown.assumptions, ...line.assumptions, ...halfWidthAssumed],
+    assumptions: [
+      ...grown.assumptions,
+      ...line.assumptions,
+      ...extrapolatedLoss(line, grown.span.lowHz, grown.span.highHz),
+      ...halfWidthAssumed,
+    ],
     cautions: [...conditioning.reasons, ...grown.cautions],
   };
   return ok({ summary, conditioning });

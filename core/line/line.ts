@@ -93,7 +93,8 @@ function shifted(
 
 /**
  * In place: to the section's own complex impedance by (G + k)/(1 + k G), k = (R - Zc)/(R + Zc),
- * along it by e^(+-2 gamma l) (D. M. Pozar, Microwave Engineering, sec. 2.3 and 2.7), and back.
+ * along it by e^(+-2 gamma l) (D. M. Pozar, Microwave Engineering, sec. 2.3 and 2.7), and back. The
+ * extra loss acts on the wave like a matched attenuator, wherever in the section it sits.
  */
 function shiftThrough(
   section: LineSection,

@@ -1,7 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import type { AntennaKind } from '../../../core/advice/antenna-kind.ts';
 import { type HotSpotRequest, hotSpots } from '../../../core/advice/hot-spots.ts';
-import { expectedResistance, radiatorOf } from '../../../core/advice/radiator.ts';
+import {
+  expectedResistance,
+  type RadiatorKind,
+  radiatorOf,
+} from '../../../core/advice/radiator.ts';
 import { dipoleImpedance } from '../../../server/demo/models/induced-emf.ts';
 import { accepted, refusalOf } from '../line/builders.ts';
 
@@ -139,6 +143,33 @@ describe('the feed resistance that theory expects', () => {
   });
 });
 
+describe('a measured feed resistance beside theory', () => {
+  const compared = (change: Partial<HotSpotRequest>) => spotsOf(change).comparison;
+
+  it('is below, within or above it', () => {
+    expect(compared({ feedResistanceOhm: 40 })?.standing).toBe('below');
+    expect(compared({ feedResistanceOhm: 66 })?.standing).toBe('within');
+    expect(compared({ feedResistanceOhm: 95 })?.standing).toBe('above');
+    expect(compared({ feedResistanceOhm: null })).toBeNull();
+  });
+
+  it('above that of a vertical over radials points to loss in the ground', () => {
+    const vertical = compared({ radiator: 'quarter_wave_over_radials', feedResistanceOhm: 55 });
+    expect(vertical).toMatchObject({ standing: 'above' });
+    expect(vertical?.detail).toContain('loss in ground and radials');
+  });
+
+  it('far above that of a loaded short dipole points to its coils', () => {
+    const loaded = compared({
+      radiator: 'loaded_short_dipole',
+      frequencyHz: 3.65e6,
+      armM: 5,
+      feedResistanceOhm: 14,
+    });
+    expect(loaded?.detail).toContain('loss in coils');
+  });
+});
+
 describe('kinds of antenna', () => {
   it.each<[AntennaKind, string | null]>([
     ['dipole', 'half_wave_dipole'],
@@ -146,10 +177,18 @@ describe('kinds of antenna', () => {
     ['vertical_with_radials', 'quarter_wave_over_radials'],
     ['five_eighths_vertical', 'five_eighths_vertical'],
     ['loaded_dipole', 'loaded_short_dipole'],
+    ['loop', null],
     ['trap_dipole', null],
     ['beam', null],
   ])('%s has the distribution of %s', (kind, radiator) => {
     expect(radiatorOf(kind)).toBe(radiator);
+  });
+
+  it('have a usual length where none is stated', () => {
+    const arm = (radiator: RadiatorKind) => spotsOf({ radiator }).armM / wavelengthM;
+    expect(arm('half_wave_dipole')).toBeCloseTo(0.25, 12);
+    expect(arm('five_eighths_vertical')).toBeCloseTo(0.625, 12);
+    expect(arm('loaded_short_dipole')).toBeCloseTo(0.125, 12);
   });
 
   it('that are taken for something say so', () => {

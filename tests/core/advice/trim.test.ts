@@ -12,6 +12,7 @@ const dipole: TrimRequest = {
   fromU95Hz: 5e3,
   targetHz: 14.175e6,
   lengthM: 10.2,
+  throughLine: false,
   history: [],
 };
 const trim = (change: Partial<TrimRequest>) => accepted(trimAdvice({ ...dipole, ...change }));
@@ -80,6 +81,14 @@ describe('a bare wire that resonates too low', () => {
     expect(advice).toMatchObject({ method: 'trial', lengthChangeM: null });
     expect(advice.trialChangeM).toBeCloseTo(-0.01 * 10.2, 12);
     expect(advice.detail).toContain('more than 5 %');
+  });
+
+  it('through a line is warned of its resonance, not of its least SWR', () => {
+    const [first] = trim({ throughLine: true }).cautions;
+    expect(first.code).toBe('resonance_seen_through_line');
+    const minimum = trim({ throughLine: true, goal: 'swr_minimum' });
+    expect(codes(minimum.cautions)).not.toContain('resonance_seen_through_line');
+    expect(minimum.goal).toBe('swr_minimum');
   });
 
   it('within the half-width of its measurement is left alone', () => {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { findCable } from '../../../core/line/cables.ts';
-import { resolveFeedLine } from '../../../core/line/feed-line.ts';
+import { extrapolatedLoss, resolveFeedLine } from '../../../core/line/feed-line.ts';
 import { accepted, refusalOf } from './builders.ts';
 
 const stated = {
@@ -55,5 +55,21 @@ describe('a stated feed line', () => {
     expect(line.assumptions.map((assumption) => assumption.code)).toEqual([
       'line_length_half_width_assumed',
     ]);
+  });
+});
+
+describe('the loss of a cable outside its data', () => {
+  const line = accepted(resolveFeedLine([stated, stated], findCable));
+
+  it('is said to be extrapolated, once for each cable', () => {
+    const [only, ...rest] = extrapolatedLoss(line, 7e6, 7.2e6);
+    expect(only.code).toBe('cable_loss_extrapolated');
+    expect(only.detail).toContain('10 to 850 MHz');
+    expect(rest).toEqual([]);
+    expect(extrapolatedLoss(line, 14e6, 1.3e9)).toHaveLength(1);
+  });
+
+  it('is not spoken of inside them', () => {
+    expect(extrapolatedLoss(line, 14e6, 14.35e6)).toEqual([]);
   });
 });

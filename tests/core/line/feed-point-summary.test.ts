@@ -53,7 +53,10 @@ describe('a summary at the feed point', () => {
 
   it('leaves unknown half-widths unknown and carries what was assumed', () => {
     expect(summary.resonances[0].qU95).toBeNull();
-    expect(summary.assumptions.map((each) => each.code)).toEqual(['choke_transparent']);
+    expect(summary.assumptions.map((each) => each.code)).toEqual([
+      'choke_transparent',
+      'cable_loss_extrapolated',
+    ]);
     expect(conditioning.impedance).toBe('good');
     expect(summary.cautions).toEqual([]);
   });
@@ -62,6 +65,7 @@ describe('a summary at the feed point', () => {
     const answer = accepted(feedPointSummary(measured, line, null, plainSummary)).summary;
     expect(answer.assumptions.map((each) => each.code)).toEqual([
       'choke_transparent',
+      'cable_loss_extrapolated',
       'reflection_half_width_assumed',
     ]);
   });

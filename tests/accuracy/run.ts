@@ -10,7 +10,7 @@ import { summaryEstimator } from './summary-estimator.ts';
 import { tableOf } from './table.ts';
 
 const REPORT_SEED = 20_261_201;
-const CASES = 4000;
+const CASES = 3000;
 const QUICK_CASES = 400;
 
 const usage = `npm run accuracy -- [--json FILE] [--seed N] [--cases N] [--family NAME] [--quick] [--case N]

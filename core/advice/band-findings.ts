@@ -1,10 +1,12 @@
 import type { Resonance, Summary } from '../analysis/summary.ts';
 import type { BandUse } from '../bands/usable-report.ts';
-import { trimBehaviour } from './antenna-kind.ts';
+import { type AntennaKind, trimBehaviour } from './antenna-kind.ts';
 import { type Aim, type Finding, type FindingFacts, khz, mhz } from './finding.ts';
 
 /** A resonance this far off, as a fraction, is not the one that was meant for a band. */
 const MEANT_FOR = 0.2;
+/** Kinds whose working resonance may be a parallel one: high impedance, or coupled to the feed. */
+const PARALLEL_KINDS: readonly AntennaKind[] = ['end_fed', 'small_loop', 'other'];
 
 /** What to do about one band, by the resonance or, through a line, by the least SWR. */
 export function bandFindings(
@@ -65,7 +67,7 @@ export function aimFindings(summary: Summary, aim: Aim, facts: FindingFacts): re
 }
 
 function byResonance(summary: Summary, aim: Aim, facts: FindingFacts): readonly Finding[] {
-  const resonance = nearestResonance(summary.resonances, aim);
+  const resonance = nearestResonance(summary.resonances, aim, facts.kind);
   if (resonance === null) {
     return [
       {
@@ -162,9 +164,15 @@ function resistanceFinding(
   ];
 }
 
-function nearestResonance(resonances: readonly Resonance[], aim: Aim): Resonance | null {
+function nearestResonance(
+  resonances: readonly Resonance[],
+  aim: Aim,
+  kind: AntennaKind,
+): Resonance | null {
+  const either = PARALLEL_KINDS.includes(kind);
   return resonances
-    .filter((resonance) => resonance.kind === 'series' && isNear(resonance.frequencyHz, aim))
+    .filter((resonance) => either || resonance.kind === 'series')
+    .filter((resonance) => isNear(resonance.frequencyHz, aim))
     .reduce<Resonance | null>(
       (best, each) => (best === null || distance(each, aim) < distance(best, aim) ? each : best),
       null,

@@ -67,7 +67,9 @@ export function matchOptions(sweep: Sweep, request: MatchRequest): Result<MatchA
   if (loads.frequencyHz.length < 2) {
     return fail({ code: 'band_not_swept', detail: 'Fewer than two points lie inside the band.' });
   }
-  const designHz = request.designHz ?? Math.sqrt(lowHz * highHz);
+  const { frequencyHz } = loads;
+  const middleHz = Math.sqrt(frequencyHz[0] * frequencyHz[frequencyHz.length - 1]);
+  const designHz = request.designHz ?? middleHz;
   const load = loadAt(loads, designHz);
   if (load === null) {
     return fail({
@@ -98,7 +100,7 @@ export function matchOptions(sweep: Sweep, request: MatchRequest): Result<MatchA
     place: request.place,
     designHz,
     load,
-    frequencyHz: loads.frequencyHz,
+    frequencyHz,
     unmatched,
     options: options.filter((option) => serves(option, unmatched)).sort(better),
     assumptions: assumptions(request),

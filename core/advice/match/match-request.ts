@@ -16,7 +16,7 @@ export interface MatchRequest {
   readonly highHz: number;
   readonly maxSwr: number;
   readonly targetOhm: number;
-  /** Null: the geometric middle of the band. */
+  /** Null: the geometric middle of what was swept of the band. */
   readonly designHz: number | null;
   readonly componentQ: ComponentQ;
   /** Of the main line, from which distances and stubs are cut. */

@@ -1,6 +1,19 @@
 import type { Caution } from '../../analysis/summary.ts';
 import type { LineCheck, LocatedDiscontinuity } from './checked-line.ts';
 
+/** What of a check is compared, so that a record may keep less than the whole. */
+export interface ComparableCheck
+  extends Pick<LineCheck, 'electricalLengthM' | 'electricalLengthU95M' | 'separableM'> {
+  readonly discontinuities: readonly LocatedDiscontinuity[];
+  readonly loss: SmoothLoss | null;
+}
+
+interface SmoothLoss {
+  readonly frequencyHz: ArrayLike<number>;
+  readonly smoothLossDb: ArrayLike<number>;
+  readonly smoothU95Db: number;
+}
+
 /** A line gained loss if it grew by this part of the earlier at least (common practice, no source). */
 const TELLING_GAIN = 0.1;
 /** A reflection changed if it did so by this much. */
@@ -11,7 +24,10 @@ const TELLING_CHANGE = 0.03;
  * `line_fault_new`, `line_fault_gone`, `line_fault_moved`, `line_fault_grew`. The shared velocity
  * factor cancels, so that places are compared by noise and resolution alone.
  */
-export function compareLineChecks(earlier: LineCheck, later: LineCheck): readonly Caution[] {
+export function compareLineChecks(
+  earlier: ComparableCheck,
+  later: ComparableCheck,
+): readonly Caution[] {
   return [
     ...gainedLoss(earlier, later),
     ...changedLength(earlier, later),
@@ -19,7 +35,7 @@ export function compareLineChecks(earlier: LineCheck, later: LineCheck): readonl
   ];
 }
 
-function gainedLoss(earlier: LineCheck, later: LineCheck): readonly Caution[] {
+function gainedLoss(earlier: ComparableCheck, later: ComparableCheck): readonly Caution[] {
   if (earlier.loss === null || later.loss === null) return [];
   const low = Math.max(earlier.loss.frequencyHz[0], later.loss.frequencyHz[0]);
   const high = Math.min(topHz(earlier.loss.frequencyHz), topHz(later.loss.frequencyHz));
@@ -37,7 +53,7 @@ function gainedLoss(earlier: LineCheck, later: LineCheck): readonly Caution[] {
   ];
 }
 
-function changedLength(earlier: LineCheck, later: LineCheck): readonly Caution[] {
+function changedLength(earlier: ComparableCheck, later: ComparableCheck): readonly Caution[] {
   const before = earlier.electricalLengthM;
   const after = later.electricalLengthM;
   if (before === null || after === null) return [];
@@ -55,7 +71,7 @@ function changedLength(earlier: LineCheck, later: LineCheck): readonly Caution[]
   ];
 }
 
-function faults(earlier: LineCheck, later: LineCheck): readonly Caution[] {
+function faults(earlier: ComparableCheck, later: ComparableCheck): readonly Caution[] {
   const before = onLine(earlier);
   const after = onLine(later);
   const reach = Math.max(earlier.separableM, later.separableM);
@@ -117,16 +133,18 @@ function nearest(
   return best;
 }
 
-function onLine(check: LineCheck): readonly LocatedDiscontinuity[] {
+function onLine(check: ComparableCheck): readonly LocatedDiscontinuity[] {
   return check.discontinuities.filter((place) => place.kind === 'on_line');
 }
 
-function smoothAt(loss: NonNullable<LineCheck['loss']>, hz: number): number {
-  const upper = loss.frequencyHz.findIndex((f) => f >= hz);
-  return loss.smoothLossDb[upper];
+/** Of the first point at or above a frequency inside the sweep; the smooth loss hardly moves in one step. */
+function smoothAt({ frequencyHz, smoothLossDb }: SmoothLoss, hz: number): number {
+  let upper = 0;
+  while (frequencyHz[upper] < hz) upper++;
+  return smoothLossDb[upper];
 }
 
-function topHz(frequencyHz: Float64Array): number {
+function topHz(frequencyHz: ArrayLike<number>): number {
   return frequencyHz[frequencyHz.length - 1];
 }
 

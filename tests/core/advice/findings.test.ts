@@ -103,6 +103,14 @@ describe('a resonance beside its band', () => {
     expect(told({ ...summary, resonances })[0].detail).toContain('50 kHz above');
   });
 
+  it('of a dipole is a series one, of an end-fed wire it may be a parallel one', () => {
+    const summary = antenna(50, 6.93e6);
+    const parallel: Resonance = { ...summary.resonances[0], kind: 'parallel' };
+    const turned = { ...summary, resonances: [parallel] };
+    expect(codes(told(turned))).toEqual(['no_resonance_near']);
+    expect(codes(told(turned, 'partly_usable', { kind: 'end_fed' }))).toEqual(['resonance_below']);
+  });
+
   it('too far away is none of that band', () => {
     const summary = antenna(50, 7.1e6);
     const far = { ...summary.resonances[0], frequencyHz: 5e6 };

@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { findCable } from '../../../../core/line/cables.ts';
 import { checkLine } from '../../../../core/line/check/check-line.ts';
@@ -245,5 +246,40 @@ describe('the analyzer end', () => {
     );
     expect(behind.discontinuities[0].distanceM).toBeCloseTo(-0.4, 2);
     expect(behind.discontinuities[0].kind).toBe('near_end');
+  });
+});
+
+describe('any sweep at all', () => {
+  it('is refused with a code or answered with finite figures', () => {
+    fc.assert(
+      fc.property(
+        fc.integer({ min: 1, max: 2 ** 30 }),
+        fc.integer({ min: 16, max: 90 }),
+        fc.double({ min: 0, max: 1.2, noNaN: true }),
+        fc.constantFrom('open' as const, 'short' as const, 'loaded' as const),
+        fc.constantFrom('rectangular' as const, 'hann' as const, 'kaiser_3pi' as const),
+        (seed, points, size, farEnd, window) => {
+          const random = new Random(seed);
+          const sweep = reflectionSweep(evenly(1e6, 60e6, points), () => ({
+            re: random.uniform(-size, size),
+            im: random.uniform(-size, size),
+          }));
+          const result = checkLine(sweep, test({ farEnd, window, lengthM: 15 }));
+          if (!result.ok) {
+            expect(['no_end_found', 'sweep_too_coarse']).toContain(result.error.code);
+            return;
+          }
+          const { discontinuities, lengthM, lengthU95M, trace, reflectionFloor } = result.value;
+          for (const value of [lengthM ?? 0, lengthU95M ?? 0, reflectionFloor]) {
+            expect(Number.isFinite(value)).toBe(true);
+          }
+          for (const place of discontinuities) {
+            expect(place.distanceM).toBeLessThanOrEqual(trace.aliasFreeM);
+            expect(place.magnitude).toBeGreaterThanOrEqual(reflectionFloor * 0.99);
+            expect(Number.isFinite(place.distanceU95M)).toBe(true);
+          }
+        },
+      ),
+    );
   });
 });

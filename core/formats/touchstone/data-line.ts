@@ -48,7 +48,7 @@ export class DataLineReader {
       if (code === exclamation) break;
       const value = scanner.read(at, shift);
       const after = scanner.end < end ? text.charCodeAt(scanner.end) : space;
-      if (value === value && (after === space || after === tab || after === exclamation)) {
+      if (!Number.isNaN(value) && (after === space || after === tab || after === exclamation)) {
         table.push(value);
         at = scanner.end;
       } else {

@@ -176,10 +176,28 @@ class SectionReader {
       );
     }
     const { tolerated } = this.numbers;
+    const pointLine = tolerated.commaLine === null ? null : firstRowWithPoint(this.text, network);
+    if (pointLine !== null) {
+      const detail = `Some numbers have a comma (line ${tolerated.commaLine}), others a point (line ${pointLine}): which is the decimal mark cannot be told.`;
+      const remedy = 'Write all numbers with a decimal point and without thousands marks.';
+      return refuse('decimal_mixed', detail, remedy, { line: tolerated.commaLine ?? pointLine });
+    }
     if (keywords !== null && keywords.phase !== 'ended') {
       const detail = 'The file does not close with `[End]`; it was taken as whole.';
       this.assumptions.push({ code: 'end_missing', detail, line: this.walker.number });
     }
     return ok({ keywords, option, network, tolerated, assumptions: this.assumptions });
   }
+}
+
+/** Line of the first row that has a point before its comment; null if none has. */
+function firstRowWithPoint(text: string, table: NumberTable): number | null {
+  for (let row = 0; row < table.rowCount; row++) {
+    for (let at = table.textStart[row]; at < text.length; at++) {
+      const code = text.charCodeAt(at);
+      if (code === 46) return table.lineNumber[row];
+      if (code === 10 || code === 13 || code === 33) break;
+    }
+  }
+  return null;
 }

@@ -1,13 +1,10 @@
 import { studentQuantile } from '../record/statistics/distributions.ts';
-import type { RationalForm } from './rational-basis.ts';
-import {
-  fitRational,
-  numbersIn,
-  type RationalFit,
-  type Samples,
-  unknownsOf,
-} from './rational-fit.ts';
-import { sharpestPole } from './rational-value.ts';
+import { compress } from './compress.ts';
+import { differenceNoise } from './difference-noise.ts';
+import { numbersIn, type RationalForm, unknownsOf } from './rational-basis.ts';
+import { fitRational, type RationalFit } from './rational-fit.ts';
+import { fitValueAt, sharpestPole } from './rational-value.ts';
+import { type Samples, type WeightedSamples, weighSamples } from './samples.ts';
 
 /** One of the fits that stand for the samples, with its share; the shares add up to 1. */
 export interface WeightedFit {
@@ -34,11 +31,14 @@ const arithmeticFloor = 1e-12;
 const patience = 3;
 /** Fits whose weight beside the best one's is less than this are left out. */
 const leastWeight = 0.02;
+/** A pole nearer than a step may stand for one noisy point: it must explain so much more than noise. */
 const sharpPolePenalty = 40;
 
 interface Scored {
   readonly fit: RationalFit;
   readonly score: number;
+  /** Sum of the squared residuals of all samples. */
+  readonly squares: number;
 }
 
 /**
@@ -50,58 +50,84 @@ export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | n
   const count = samples.re.length;
   if (count < fewestSamples) return null;
   const numbers = numbersIn(form, count);
+  const { frequencyHz } = samples;
+  const compressed = compress(samples, differenceNoise(samples.re, samples.im));
+  const weighed = weighSamples(
+    compressed,
+    compressed.weight,
+    frequencyHz[0],
+    frequencyHz[count - 1],
+  );
+  const stepHz = (frequencyHz[count - 1] - frequencyHz[0]) / (count - 1);
   const scored: Scored[] = [];
   let best = Number.POSITIVE_INFINITY;
   let failures = 0;
+  let before: RationalFit | null = null;
   for (let degree = 0; degree <= highestDegree && failures < patience; degree++) {
     if (unknownsOf(degree) + 2 > numbers) break;
-    const fit = fitRational(samples, form, degree);
-    if (fit === null || fit.triangle === null) {
+    const fit = fitRational(weighed, form, degree, before?.denominator ?? null);
+    if (fit === null) {
       failures += 1;
       continue;
     }
-    const score = scoreOf(fit, numbers) + pairPenalty(fit, samples);
-    scored.push({ fit, score });
+    before = fit;
+    const squares = fit.squares + compressed.squaresInside;
+    let score = scoreOf(squares, degree, numbers);
+    if (
+      score < best + 2 * Math.log(1 / leastWeight) &&
+      sharpestPole(fit, weighed.frequencyHz, stepHz) > 1
+    )
+      score += sharpPolePenalty;
+    scored.push({ fit, score, squares });
     failures = score < best ? 0 : failures + 1;
     best = Math.min(best, score);
-    if (fit.squares < numbers * arithmeticFloor ** 2) break;
+    if (squares < numbers * arithmeticFloor ** 2) break;
   }
-  return scored.length === 0 ? null : judged(scored, best, numbers);
+  return scored.length === 0 ? null : judged(scored, best, numbers, weighed);
 }
 
-function scoreOf(fit: RationalFit, numbers: number): number {
-  const squares = Math.max(fit.squares, numbers * arithmeticFloor ** 2);
-  return numbers * Math.log(squares / numbers) + unknownsOf(fit.degree) * Math.log(numbers);
+function scoreOf(squares: number, degree: number, numbers: number): number {
+  const floor = numbers * arithmeticFloor ** 2;
+  return (
+    numbers * Math.log(Math.max(squares, floor) / numbers) + unknownsOf(degree) * Math.log(numbers)
+  );
 }
 
-/** A pole nearer than a step may stand for one noisy point: it must explain far more than noise. */
-function pairPenalty(fit: RationalFit, { frequencyHz }: Samples): number {
-  return sharpestPole(fit, frequencyHz) > 1 ? sharpPolePenalty : 0;
-}
-
-function judged(scored: readonly Scored[], best: number, numbers: number): ChosenFits {
+function judged(
+  scored: readonly Scored[],
+  best: number,
+  numbers: number,
+  samples: WeightedSamples,
+): ChosenFits {
   const shares = scored
-    .map(({ fit, score }) => ({ fit, weight: Math.exp((best - score) / 2) }))
+    .map(({ fit, score, squares }) => ({ fit, squares, weight: Math.exp((best - score) / 2) }))
     .filter(({ weight }) => weight > leastWeight);
   const total = shares.reduce((sum, { weight }) => sum + weight, 0);
   const members = shares.map(({ fit, weight }) => ({ fit, weight: weight / total }));
-  const { fit } = members.reduce((a, b) => (b.weight > a.weight ? b : a));
+  const { fit, squares } = shares.reduce((a, b) => (b.weight > a.weight ? b : a));
   const freedom = numbers - unknownsOf(fit.degree);
-  const correlation = neighbourCorrelation(fit);
-  const isTiny = fit.squares < numbers * (10 * arithmeticFloor) ** 2;
+  const isTiny = squares < numbers * (10 * arithmeticFloor) ** 2;
   return {
     members,
-    noise: Math.sqrt(fit.squares / freedom),
+    noise: Math.sqrt(squares / freedom),
     factor95: studentQuantile(0.975, freedom),
-    isWhite: isTiny || correlation < 3 / Math.sqrt(numbers),
+    isWhite: isTiny || isWhite(fit, samples),
   };
 }
 
-/** Correlation of each residual with the next. */
-function neighbourCorrelation({ residualRe, residualIm, squares }: RationalFit): number {
-  let sum = 0;
-  for (let i = 1; i < residualRe.length; i++) {
-    sum += residualRe[i - 1] * residualRe[i] + residualIm[i - 1] * residualIm[i];
+/** Whether each residual tells no more of the next than chance does. */
+function isWhite(fit: RationalFit, { frequencyHz, re, im, weight }: WeightedSamples): boolean {
+  let products = 0;
+  let squares = 0;
+  let [beforeRe, beforeIm] = [0, 0];
+  for (let i = 0; i < re.length; i++) {
+    const value = fitValueAt(fit, frequencyHz[i]);
+    const root = Math.sqrt(weight[i]);
+    const errorRe = root * (value.re - re[i]);
+    const errorIm = root * (value.im - im[i]);
+    products += beforeRe * errorRe + beforeIm * errorIm;
+    squares += errorRe ** 2 + errorIm ** 2;
+    [beforeRe, beforeIm] = [errorRe, errorIm];
   }
-  return squares > 0 ? sum / squares : 0;
+  return products < (3 * squares) / Math.sqrt(numbersIn(fit.form, re.length));
 }

@@ -1,6 +1,6 @@
 import { type ChosenFits, chooseFits } from './model-choice.ts';
 import { frequencyScale, type RationalForm } from './rational-basis.ts';
-import type { RationalFit, Samples } from './rational-fit.ts';
+import type { RationalFit } from './rational-fit.ts';
 import {
   type Functional,
   fitValueAt,
@@ -8,6 +8,7 @@ import {
   type RationalValue,
   spreadAt,
 } from './rational-value.ts';
+import type { Samples } from './samples.ts';
 
 /** A stretch of the sweep, from sample to sample, with the functions that stand for it. */
 export interface ModelPiece extends Omit<ChosenFits, 'isWhite'> {
@@ -83,21 +84,20 @@ function straightLine({ frequencyHz, re, im }: Samples, form: RationalForm, i: n
     frequencyHz[k] === 0 ? 0 : (im[k] * scale.centreHz) / frequencyHz[k];
   const even = [(re[i] + re[i + 1]) / 2, (re[i + 1] - re[i]) / 2];
   const odd = [(oddAt(i) + oddAt(i + 1)) / 2, (oddAt(i + 1) - oddAt(i)) / 2];
-  const numerator = form === 'square' ? even : [even[0], odd[0], even[1], odd[1]];
-  const degree = numerator.length - 1;
-  const denominator = new Float64Array(degree + 1);
-  denominator[0] = 1;
+  const isSquare = form === 'square';
+  const none = new Float64Array(2);
   const fit: RationalFit = {
     form,
-    degree,
+    degree: isSquare ? 1 : 3,
     scale,
-    numerator: Float64Array.from(numerator),
-    denominator,
+    numerator: {
+      even: Float64Array.from(even),
+      odd: isSquare ? new Float64Array(0) : Float64Array.from(odd),
+    },
+    denominator: { even: Float64Array.of(1, 0), odd: isSquare ? new Float64Array(0) : none },
     still: 0,
     triangle: null,
     squares: 0,
-    residualRe: new Float64Array(2),
-    residualIm: new Float64Array(2),
   };
   return { lowHz, highHz, members: [{ fit, weight: 1 }], noise: null, factor95: Number.NaN };
 }

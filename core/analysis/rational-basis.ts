@@ -1,6 +1,6 @@
 /**
- * `reflection`: what a network of real elements has, N(jω)/D(jω) with real coefficients, so that the
- * terms are turn by turn T_k(y) and jw T_k(y). `square`: a real function of ω², with terms T_k(y).
+ * `reflection`: what a network of real elements has, N(jω)/D(jω) with real coefficients: each series
+ * is E(y) + jw O(y), E and O real. `square`: a real function of ω², so that there is no O.
  */
 export type RationalForm = 'reflection' | 'square';
 
@@ -10,6 +10,12 @@ export interface FrequencyScale {
   /** Of 2u + u², u = f/centre - 1, which is w² - 1 without its loss of digits. */
   readonly middle: number;
   readonly half: number;
+}
+
+/** A series of Chebyshev polynomials in y: E(y) + jw O(y). */
+export interface Series {
+  readonly even: Float64Array;
+  readonly odd: Float64Array;
 }
 
 /** The scale for a sweep between two frequencies. */
@@ -30,26 +36,22 @@ export function scaledSquare(scale: FrequencyScale, frequencyHz: number): number
   return (squareLessOne(frequencyHz, scale.centreHz) - scale.middle) / scale.half;
 }
 
-/** Number of Chebyshev polynomials in the terms up to a degree. */
-export function polynomialsOf(form: RationalForm, degree: number): number {
+/** Number of even terms of a series of some degree. */
+export function evenTerms(form: RationalForm, degree: number): number {
   return form === 'square' ? degree + 1 : (degree >> 1) + 1;
 }
 
-/** T_k(y) of every frequency, k after k. */
-export function chebyshevColumns(
-  frequencyHz: Float64Array,
-  scale: FrequencyScale,
-  polynomials: number,
-): Float64Array {
-  const rows = frequencyHz.length;
-  const columns = new Float64Array(rows * polynomials);
-  for (let i = 0; i < rows; i++) {
-    const y = scaledSquare(scale, frequencyHz[i]);
-    columns[i] = 1;
-    if (polynomials > 1) columns[rows + i] = y;
-    for (let k = 2; k < polynomials; k++) {
-      columns[k * rows + i] = 2 * y * columns[(k - 1) * rows + i] - columns[(k - 2) * rows + i];
-    }
-  }
-  return columns;
+/** Number of odd terms of a series of some degree. */
+export function oddTerms(form: RationalForm, degree: number): number {
+  return form === 'square' ? 0 : (degree + 1) >> 1;
+}
+
+/** Number of real unknowns of a quotient of two series. */
+export function unknownsOf(degree: number): number {
+  return 2 * degree + 1;
+}
+
+/** Number of real measured numbers in so many samples. */
+export function numbersIn(form: RationalForm, samples: number): number {
+  return form === 'square' ? samples : 2 * samples;
 }

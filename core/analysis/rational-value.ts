@@ -1,6 +1,6 @@
-import { deviationOf } from './least-squares.ts';
-import { polynomialsOf, scaledSquare } from './rational-basis.ts';
-import { type RationalFit, unknownsOf } from './rational-fit.ts';
+import { deviationOf } from './cholesky.ts';
+import { type Series, scaledSquare, unknownsOf } from './rational-basis.ts';
+import type { RationalFit } from './rational-fit.ts';
 
 /** A fitted function at one frequency, with its derivatives by frequency (per hertz). */
 export interface RationalValue {
@@ -22,25 +22,22 @@ interface Jet {
   curvatureIm: number;
 }
 
-/** Value, slope and curvature of one series of terms. */
-function seriesAt(fit: RationalFit, coefficients: Float64Array, frequencyHz: number): Jet {
-  const { form, scale } = fit;
+/** Value, slope and curvature of one series. */
+function seriesAt(fit: RationalFit, { even, odd }: Series, frequencyHz: number): Jet {
+  const { scale } = fit;
   const w = frequencyHz / scale.centreHz;
   const y = scaledSquare(scale, frequencyHz);
-  const stride = form === 'square' ? 1 : 2;
   let [t, t1, t2] = [1, 0, 0];
   let [before, before1, before2] = [y, 1, 0];
   let [e, e1, e2, o, o1, o2] = [0, 0, 0, 0, 0, 0];
-  for (let k = 0; k < coefficients.length; k += stride) {
-    const even = coefficients[k];
-    e += even * t;
-    e1 += even * t1;
-    e2 += even * t2;
-    if (stride === 2 && k + 1 < coefficients.length) {
-      const odd = coefficients[k + 1];
-      o += odd * t;
-      o1 += odd * t1;
-      o2 += odd * t2;
+  for (let k = 0; k < even.length; k++) {
+    e += even[k] * t;
+    e1 += even[k] * t1;
+    e2 += even[k] * t2;
+    if (k < odd.length) {
+      o += odd[k] * t;
+      o1 += odd[k] * t1;
+      o2 += odd[k] * t2;
     }
     const next = 2 * y * t - before;
     const next1 = 2 * t + 2 * y * t1 - before1;
@@ -128,9 +125,10 @@ export function spreadAt(
   const gradient = new Float64Array(unknownsOf(degree));
   const { valueRe: ar, valueIm: ai, slopeRe: br, slopeIm: bi } = functional;
   const { re, im, slopeRe, slopeIm } = value;
+  const { even, odd } = denominator;
   const terms = termsAt(fit, frequencyHz);
-  let free = degree + 1;
-  for (let k = 0; k <= degree; k++) {
+  let free = even.length + odd.length;
+  for (let k = 0; k < even.length + odd.length; k++) {
     const [tr, ti, ur, ui] = terms.subarray(4 * k, 4 * k + 4);
     const nr = tr * ir - ti * ii;
     const ni = tr * ii + ti * ir;
@@ -148,21 +146,22 @@ export function spreadAt(
   return deviationOf(triangle, gradient);
 }
 
-/** Real and imaginary part of each term and of its slope per hertz, four numbers a term. */
-function termsAt({ form, degree, scale }: RationalFit, frequencyHz: number): Float64Array {
+/** Real and imaginary part of each term, even before odd, and of its slope per hertz: four numbers. */
+function termsAt({ denominator, scale }: RationalFit, frequencyHz: number): Float64Array {
+  const even = denominator.even.length;
+  const odd = denominator.odd.length;
   const w = frequencyHz / scale.centreHz;
   const y = scaledSquare(scale, frequencyHz);
   const g = (2 * w) / scale.half;
   const per = 1 / scale.centreHz;
-  const terms = new Float64Array(4 * (degree + 2));
+  const terms = new Float64Array(4 * (even + odd));
   let [t, t1, before, before1] = [1, 0, y, 1];
-  for (let p = 0; p < polynomialsOf(form, degree); p++) {
-    const even = 4 * (form === 'square' ? p : 2 * p);
-    terms[even] = t;
-    terms[even + 2] = per * t1 * g;
-    if (form === 'reflection' && 2 * p + 1 <= degree) {
-      terms[even + 5] = w * t;
-      terms[even + 7] = per * (t + w * t1 * g);
+  for (let k = 0; k < even; k++) {
+    terms[4 * k] = t;
+    terms[4 * k + 2] = per * t1 * g;
+    if (k < odd) {
+      terms[4 * (even + k) + 1] = w * t;
+      terms[4 * (even + k) + 3] = per * (t + w * t1 * g);
     }
     [before, before1, t, t1] = [t, t1, 2 * y * t - before, 2 * t + 2 * y * t1 - before1];
   }
@@ -170,18 +169,17 @@ function termsAt({ form, degree, scale }: RationalFit, frequencyHz: number): Flo
 }
 
 /**
- * Largest |D'/D| times the step, at the samples and midway between them: about the step over the
+ * Largest |D'/D| at some frequencies and midway between them, times a step: about the step over the
  * distance of the nearest pole from the real frequencies.
  */
-export function sharpestPole(fit: RationalFit, frequencyHz: Float64Array): number {
+export function sharpestPole(fit: RationalFit, frequencyHz: Float64Array, stepHz: number): number {
   let sharpest = 0;
   for (let i = 1; i < frequencyHz.length; i++) {
-    const stepHz = frequencyHz[i] - frequencyHz[i - 1];
-    for (let half = 1; half <= 2; half++) {
-      const d = seriesAt(fit, fit.denominator, frequencyHz[i] - (half - 1) * 0.5 * stepHz);
-      const square = (d.slopeRe * d.slopeRe + d.slopeIm * d.slopeIm) / (d.re * d.re + d.im * d.im);
-      sharpest = Math.max(sharpest, square * stepHz * stepHz);
+    for (const f of [frequencyHz[i], 0.5 * (frequencyHz[i] + frequencyHz[i - 1])]) {
+      const d = seriesAt(fit, fit.denominator, f);
+      const square = (d.slopeRe ** 2 + d.slopeIm ** 2) / (d.re ** 2 + d.im ** 2);
+      sharpest = Math.max(sharpest, square);
     }
   }
-  return Math.sqrt(sharpest);
+  return Math.sqrt(sharpest) * stepHz;
 }

@@ -23,8 +23,8 @@ export function reportOf({ exact, asInFiles }: BenchScores): BenchReport {
     resonance_rms_vs_model_fit: ratioFigure(asInFiles, 'resonance'),
     min_swr_rms_vs_model_fit: ratioFigure(asInFiles, 'min_swr_frequency'),
     coverage_95: coverageFigure(asInFiles),
-    resonance_missed: findingFigure(asInFiles, 'missed'),
-    resonance_invented: findingFigure(asInFiles, 'invented'),
+    resonance_missed: findingFigure([...exact, ...asInFiles], 'missed'),
+    resonance_invented: findingFigure([...exact, ...asInFiles], 'invented'),
     verdict_wrong: verdictFigure(asInFiles),
   };
 }

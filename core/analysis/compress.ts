@@ -8,9 +8,11 @@ export interface Compressed extends Samples {
 }
 
 /** A sweep of so many samples is not compressed. */
-const mostKeptWhole = 240;
+const mostKeptWhole = 200;
+/** A longer one is cut into so many blocks at first. */
+const firstBlocks = 48;
 /** A block of at most so many samples is not halved. */
-const smallestBlock = 12;
+const smallestBlock = 8;
 /** A block's scatter may exceed the noise by this many standard deviations of such a scatter. */
 const scatterLimit = 3;
 
@@ -27,10 +29,9 @@ export function compress(samples: Samples, noise: number): Compressed {
   if (count <= mostKeptWhole || noise === 0) {
     keepWhole(samples, 0, count, out);
   } else {
-    const blocks = Math.ceil(mostKeptWhole / 3);
-    for (let b = 0; b < blocks; b++) {
-      const from = Math.round((b * count) / blocks);
-      const to = Math.round(((b + 1) * count) / blocks);
+    for (let b = 0; b < firstBlocks; b++) {
+      const from = Math.round((b * count) / firstBlocks);
+      const to = Math.round(((b + 1) * count) / firstBlocks);
       block(samples, from, to, noise, out);
     }
   }

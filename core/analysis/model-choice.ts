@@ -1,6 +1,7 @@
 import { studentQuantile } from '../record/statistics/distributions.ts';
 import { compress } from './compress.ts';
 import { differenceNoise } from './difference-noise.ts';
+import { momentsFor } from './normal-equations.ts';
 import { numbersIn, type RationalForm, unknownsOf } from './rational-basis.ts';
 import { fitRational, type RationalFit } from './rational-fit.ts';
 import { fitValueAt, sharpestPole } from './rational-value.ts';
@@ -27,6 +28,8 @@ const highestDegree = 16;
 const fewestSamples = 5;
 /** Residuals below this are rounding of the arithmetic, whatever their pattern. */
 const arithmeticFloor = 1e-12;
+/** A fit whose residuals exceed the roughly known noise by this factor is not worth perfecting. */
+const explainedWithin = 3;
 /** Degrees that may fail to help before the search ends. */
 const patience = 3;
 /** Fits whose weight beside the best one's is less than this are left out. */
@@ -51,21 +54,34 @@ export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | n
   if (count < fewestSamples) return null;
   const numbers = numbersIn(form, count);
   const { frequencyHz } = samples;
-  const compressed = compress(samples, differenceNoise(samples.re, samples.im));
+  const roughNoise = differenceNoise(samples.re, samples.im);
+  const compressed = compress(samples, roughNoise);
   const weighed = weighSamples(
     compressed,
     compressed.weight,
     frequencyHz[0],
     frequencyHz[count - 1],
+    momentsFor(form, highestDegree),
   );
   const stepHz = (frequencyHz[count - 1] - frequencyHz[0]) / (count - 1);
+  const explained =
+    roughNoise > 0 ? explainedWithin ** 2 * roughNoise ** 2 * numbers : Number.POSITIVE_INFINITY;
   const scored: Scored[] = [];
   let best = Number.POSITIVE_INFINITY;
   let failures = 0;
   let before: RationalFit | null = null;
   for (let degree = 0; degree <= highestDegree && failures < patience; degree++) {
     if (unknownsOf(degree) + 2 > numbers) break;
-    const fit = fitRational(weighed, form, degree, before?.denominator ?? null);
+    const wanted = Number.isFinite(best)
+      ? squaresFor(best + 2 * Math.log(1 / leastWeight), degree, numbers)
+      : Number.POSITIVE_INFINITY;
+    const fit = fitRational(
+      weighed,
+      form,
+      degree,
+      before?.denominator ?? null,
+      Math.min(wanted, explained) - compressed.squaresInside,
+    );
     if (fit === null) {
       failures += 1;
       continue;
@@ -91,6 +107,11 @@ function scoreOf(squares: number, degree: number, numbers: number): number {
   return (
     numbers * Math.log(Math.max(squares, floor) / numbers) + unknownsOf(degree) * Math.log(numbers)
   );
+}
+
+/** The squares with which a degree would have a score. */
+function squaresFor(score: number, degree: number, numbers: number): number {
+  return numbers * Math.exp((score - unknownsOf(degree) * Math.log(numbers)) / numbers);
 }
 
 function judged(

@@ -32,84 +32,122 @@ export function sumMoments(
   count: number,
   asLinear: boolean,
 ): Moments {
-  const { re, im, weight, w, y } = samples;
+  const squares = fillPerSample(samples, numerator, denominator, asLinear);
   const rows = new Float64Array(7 * count);
+  for (let m = 0; m < count; m++) sumRows(samples, m, rows);
   const terms = (count + 1) >> 1;
   const gradient = new Float64Array(4 * terms);
-  const t = new Float64Array(count);
-  t[0] = 1;
+  if (!asLinear) for (let k = 0; k < terms; k++) sumGradient(samples, k, terms, gradient);
+  return { count, rows, gradient, squares };
+}
+
+/** The eleven numbers of every sample that the sums are made of; returns the residuals' squares. */
+function fillPerSample(
+  samples: WeightedSamples,
+  numerator: Series,
+  denominator: Series,
+  asLinear: boolean,
+): number {
+  const { re, im, weight, w, scratch } = samples;
+  const n = re.length;
+  scratch.fill(0, 0, 4 * n);
+  addSeries(samples, numerator.even, 0);
+  addSeries(samples, numerator.odd, n);
+  addSeries(samples, denominator.even, 2 * n);
+  addSeries(samples, denominator.odd, 3 * n);
   let squares = 0;
-  for (let i = 0; i < y.length; i++) {
+  for (let i = 0; i < n; i++) {
     const wi = w[i];
-    fillChebyshev(t, y[i]);
-    const nr = dot(numerator.even, t);
-    const ni = wi * dot(numerator.odd, t);
-    const dr = dot(denominator.even, t);
-    const di = wi * dot(denominator.odd, t);
-    const d2 = dr * dr + di * di;
-    const mr = (nr * dr + ni * di) / d2;
-    const mi = (ni * dr - nr * di) / d2;
-    const g = weight[i] / d2;
+    const nr = scratch[i];
+    const ni = wi * scratch[n + i];
+    const dr = scratch[2 * n + i];
+    const di = wi * scratch[3 * n + i];
+    const inverse = 1 / (dr * dr + di * di);
+    const mr = (nr * dr + ni * di) * inverse;
+    const mi = (ni * dr - nr * di) * inverse;
+    const g = weight[i] * inverse;
     const errorRe = re[i] - mr;
     const errorIm = im[i] - mi;
     squares += weight[i] * (errorRe * errorRe + errorIm * errorIm);
     const vr = asLinear ? re[i] : mr;
     const vi = asLinear ? im[i] : mi;
-    addMoments(rows, count, t, g, wi, vr, vi);
-    if (asLinear) continue;
+    const gw2 = g * wi * wi;
+    const v2 = vr * vr + vi * vi;
+    scratch[i] = g;
+    scratch[n + i] = gw2;
+    scratch[2 * n + i] = g * vr;
+    scratch[3 * n + i] = gw2 * vr;
+    scratch[4 * n + i] = g * wi * vi;
+    scratch[5 * n + i] = g * v2;
+    scratch[6 * n + i] = gw2 * v2;
     // conj(1/D) times the error, and conj(V) times that.
     const zr = g * (dr * errorRe - di * errorIm);
     const zi = g * (dr * errorIm + di * errorRe);
-    const ur = zr * vr + zi * vi;
-    const ui = zi * vr - zr * vi;
-    for (let k = 0; k < terms; k++) {
-      gradient[k] += t[k] * zr;
-      gradient[terms + k] += t[k] * wi * zi;
-      gradient[2 * terms + k] -= t[k] * ur;
-      gradient[3 * terms + k] -= t[k] * wi * ui;
-    }
+    scratch[7 * n + i] = zr;
+    scratch[8 * n + i] = wi * zi;
+    scratch[9 * n + i] = zr * vr + zi * vi;
+    scratch[10 * n + i] = wi * (zi * vr - zr * vi);
   }
-  return { count, rows, gradient, squares };
+  return squares;
 }
 
-function addMoments(
-  rows: Float64Array,
-  count: number,
-  t: Float64Array,
-  g: number,
-  w: number,
-  vr: number,
-  vi: number,
+function addSeries(
+  { chebyshev, scratch, re }: WeightedSamples,
+  coefficients: Float64Array,
+  into: number,
 ): void {
-  const gw2 = g * w * w;
-  const gr = g * vr;
-  const gw2r = gw2 * vr;
-  const gwi = g * w * vi;
-  const v2 = vr * vr + vi * vi;
-  const gv = g * v2;
-  const gw2v = gw2 * v2;
-  for (let m = 0; m < count; m++) {
-    const tm = t[m];
-    const at = 7 * m;
-    rows[at] += g * tm;
-    rows[at + 1] += gw2 * tm;
-    rows[at + 2] += gr * tm;
-    rows[at + 3] += gw2r * tm;
-    rows[at + 4] += gwi * tm;
-    rows[at + 5] += gv * tm;
-    rows[at + 6] += gw2v * tm;
+  const n = re.length;
+  for (let k = 0; k < coefficients.length; k++) {
+    const c = coefficients[k];
+    const t = k * n;
+    for (let i = 0; i < n; i++) scratch[into + i] += c * chebyshev[t + i];
   }
 }
 
-function fillChebyshev(t: Float64Array, y: number): void {
-  if (t.length > 1) t[1] = y;
-  for (let m = 2; m < t.length; m++) t[m] = 2 * y * t[m - 1] - t[m - 2];
+function sumRows({ chebyshev, scratch, re }: WeightedSamples, m: number, rows: Float64Array): void {
+  const n = re.length;
+  const at = m * n;
+  let [a, b, c, d, e, f, g] = [0, 0, 0, 0, 0, 0, 0];
+  for (let i = 0; i < n; i++) {
+    const t = chebyshev[at + i];
+    a += t * scratch[i];
+    b += t * scratch[n + i];
+    c += t * scratch[2 * n + i];
+    d += t * scratch[3 * n + i];
+    e += t * scratch[4 * n + i];
+    f += t * scratch[5 * n + i];
+    g += t * scratch[6 * n + i];
+  }
+  const into = 7 * m;
+  rows[into] = a;
+  rows[into + 1] = b;
+  rows[into + 2] = c;
+  rows[into + 3] = d;
+  rows[into + 4] = e;
+  rows[into + 5] = f;
+  rows[into + 6] = g;
 }
 
-function dot(a: Float64Array, t: Float64Array): number {
-  let sum = 0;
-  for (let k = 0; k < a.length; k++) sum += a[k] * t[k];
-  return sum;
+function sumGradient(
+  { chebyshev, scratch, re }: WeightedSamples,
+  k: number,
+  terms: number,
+  gradient: Float64Array,
+): void {
+  const n = re.length;
+  const at = k * n;
+  let [a, b, c, d] = [0, 0, 0, 0];
+  for (let i = 0; i < n; i++) {
+    const t = chebyshev[at + i];
+    a += t * scratch[7 * n + i];
+    b += t * scratch[8 * n + i];
+    c -= t * scratch[9 * n + i];
+    d -= t * scratch[10 * n + i];
+  }
+  gradient[k] = a;
+  gradient[terms + k] = b;
+  gradient[2 * terms + k] = c;
+  gradient[3 * terms + k] = d;
 }
 
 /**

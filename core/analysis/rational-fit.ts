@@ -27,10 +27,12 @@ export interface RationalFit {
   readonly squares: number;
 }
 
-const linearSteps = 4;
+const linearSteps = 2;
 const newtonSteps = 12;
 const halvings = 3;
 const settledBelow = 1e-6;
+/** Later steps are not hoped to gain more than so many times what the last one did. */
+const hopefulGains = 4;
 /** Weighted mean square below which residuals are rounding of the arithmetic. */
 const roundingSquare = 1e-30;
 
@@ -52,27 +54,21 @@ interface Task {
  * Fits by the iteration of C. K. Sanathanan and J. Koerner (IEEE Trans. Automatic Control 8(1),
  * 1963) and then by Gauss–Newton steps on the true residual, so that the answer is the least-squares
  * one and its covariance is known. Needs at least as many numbers as unknowns; null where it
- * degenerates. `weightedBy`: a denominator to begin the iteration with.
+ * degenerates. `weightedBy`: a denominator to begin the iteration with. `squaresWanted`: a fit that
+ * will not come down to this is given up early, with more squares than it could have.
  */
 export function fitRational(
   samples: WeightedSamples,
   form: RationalForm,
   degree: number,
   weightedBy: Series | null = null,
+  squaresWanted = Number.POSITIVE_INFINITY,
 ): RationalFit | null {
   const even = evenTerms(form, degree);
   const odd = oddTerms(form, degree);
   const task: Task = { samples, form, degree, even, odd };
   const start = linearStart(task, weightedBy);
-  return start === null ? null : polish(task, start);
-}
-
-/** Gauss–Newton steps from a fit to other samples on the same scale. */
-export function refit(samples: WeightedSamples, fit: RationalFit): RationalFit | null {
-  const { form, degree } = fit;
-  const even = evenTerms(form, degree);
-  const odd = oddTerms(form, degree);
-  return polish({ samples, form, degree, even, odd }, fit);
+  return start === null ? null : polish(task, start, squaresWanted);
 }
 
 /** The Sanathanan–Koerner iterate of least residual. */
@@ -176,7 +172,7 @@ function normalised({ numerator, denominator }: Quotient): Quotient {
 }
 
 /** Gauss–Newton steps while they help; one that does not is halved a few times and then given up. */
-function polish(task: Task, start: Quotient): RationalFit | null {
+function polish(task: Task, start: Quotient, squaresWanted: number): RationalFit | null {
   const { samples, form, degree, even, odd } = task;
   const count = momentsFor(form, degree);
   const at = ({ numerator, denominator }: Quotient) =>
@@ -194,10 +190,11 @@ function polish(task: Task, start: Quotient): RationalFit | null {
       there = null;
     }
     if (there === null) break;
-    const gain = 1 - next.squares / moments.squares;
+    const gain = moments.squares - next.squares;
     here = there;
     moments = next;
-    if (gain < settledBelow || moments.squares < roundingSquare) break;
+    if (gain < settledBelow * moments.squares || moments.squares < roundingSquare) break;
+    if (moments.squares - hopefulGains * gain > squaresWanted) break;
   }
   if (!Number.isFinite(moments.squares)) return null;
   const still = largest(here.denominator, even);

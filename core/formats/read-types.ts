@@ -18,6 +18,8 @@ export interface ReadError {
   /** One-based line and column of the decoded text. */
   readonly line?: number;
   readonly column?: number;
+  /** The request parameter at fault, where the file is not. */
+  readonly parameter?: 'columns' | 'port';
   /** For `columns_to_confirm`: the mapping to send back as `columns`, with the evidence for it. */
   readonly proposal?: ColumnsProposal;
 }

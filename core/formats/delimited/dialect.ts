@@ -1,0 +1,174 @@
+import { ok, type Result } from '../../result.ts';
+import type { ReadError } from '../read-types.ts';
+import { refuse } from '../touchstone/faults.ts';
+import { LineWalker } from '../touchstone/file-lines.ts';
+import { cellsOf, isCommentAt, looksNumeric, saysNoNumber } from './cells.ts';
+import type { DecimalMark, Delimiter } from './mapping.ts';
+import { unquote } from './unquoted.ts';
+
+/** How a delimited text is written. */
+export interface Dialect {
+  readonly delimiter: Delimiter;
+  readonly decimal: DecimalMark;
+  readonly hasQuotes: boolean;
+}
+
+type Told = { readonly [Part in 'delimiter' | 'decimal']: Dialect[Part] | null };
+
+const sampleHead = 40;
+const sampleMiddle = 40;
+const longestSampled = 2000;
+
+const delimiters: readonly Delimiter[] = ['semicolon', 'tab', 'comma', 'blanks'];
+
+/** A runner-up with more than this share of the winner's score leaves the choice open. */
+const tooClose = 0.8;
+
+/**
+ * Finds delimiter and decimal mark together: the pair under which the sampled rows are rows of
+ * numbers. What was told is not doubted. A tie is `dialect_ambiguous`, never a guess; no row of
+ * numbers under any pair is `no_points`.
+ */
+export function findDialect(text: string, told: Told): Result<Dialect, ReadError> {
+  const hasQuotes = text.includes('"');
+  const delimiter = told.delimiter ?? announcedDelimiter(text);
+  if (delimiter !== null && told.decimal !== null) {
+    return ok({ delimiter, decimal: told.decimal, hasQuotes });
+  }
+  const sample = sampleOf(text);
+  const possible = candidates(sample, { delimiter, decimal: told.decimal }, hasQuotes);
+  const scored = possible
+    .map((dialect) => ({ dialect, score: scoreOf(sample, dialect) }))
+    .filter(({ score }) => score > 0)
+    .sort((a, b) => b.score - a.score);
+  const [best, second] = scored;
+  if (best === undefined) return noRows();
+  const rival = scored.find(
+    ({ dialect, score }) =>
+      dialect.delimiter !== best.dialect.delimiter && score > tooClose * best.score,
+  );
+  if (rival !== undefined) return ambiguous(best.dialect, rival.dialect);
+  const isDecimalOpen =
+    second?.dialect.delimiter === best.dialect.delimiter && second.score === best.score;
+  if (!isDecimalOpen) return ok(best.dialect);
+  // No sampled number has a fraction: the rest of the text decides, and if it has none, none matters.
+  const decimal = text.includes(',') && !/\d\.\d/.test(text) ? 'comma' : 'point';
+  return ok({ ...best.dialect, decimal });
+}
+
+/** A first line `sep=;`, which spreadsheets write and obey. */
+function announcedDelimiter(text: string): Delimiter | null {
+  const announced = /^"?sep=([,;\t])"?[ \t]*(?:\r|\n|$)/i.exec(text.slice(0, 20))?.[1];
+  if (announced === undefined) return null;
+  if (announced === ',') return 'comma';
+  return announced === ';' ? 'semicolon' : 'tab';
+}
+
+/** Lines from the start and the middle of the text, without comments and what holds no digit. */
+function sampleOf(text: string): string[] {
+  const head = takeLines(text, 0, sampleHead);
+  if (head.end === text.length) return head.lines;
+  const middle = Math.max(head.end, text.length >> 1);
+  const rest = takeLines(text, middle, sampleMiddle + 1);
+  // The first line there may be the tail of a line.
+  return [...head.lines, ...(middle === head.end ? rest.lines : rest.lines.slice(1))];
+}
+
+function takeLines(
+  text: string,
+  from: number,
+  most: number,
+): { readonly lines: string[]; readonly end: number } {
+  const part = text.slice(from, from + most * longestSampled);
+  const walker = new LineWalker(part);
+  const lines: string[] = [];
+  while (lines.length < most && walker.advance()) {
+    const ink = walker.firstInk();
+    if (ink === walker.end || isCommentAt(part, ink, null)) continue;
+    lines.push(part.slice(walker.start, Math.min(walker.end, walker.start + longestSampled)));
+  }
+  const isWhole = lines.length < most && from + part.length === text.length;
+  return { lines, end: isWhole ? text.length : from + walker.end };
+}
+
+function candidates(sample: readonly string[], told: Told, hasQuotes: boolean): Dialect[] {
+  const found: Dialect[] = [];
+  const hasTab = sample.some((line) => line.includes('\t'));
+  const isPresent: Readonly<Record<Delimiter, boolean>> = {
+    semicolon: sample.some((line) => line.includes(';')),
+    tab: hasTab,
+    comma: sample.some((line) => line.includes(',')),
+    blanks: sample.some((line) => /\S[ \t]+\S/.test(line)),
+  };
+  for (const delimiter of delimiters) {
+    if (told.delimiter === null ? !isPresent[delimiter] : told.delimiter !== delimiter) continue;
+    for (const decimal of ['point', 'comma'] as const) {
+      if (told.decimal !== null && told.decimal !== decimal) continue;
+      if (decimal === 'comma' && delimiter === 'comma' && !hasQuotes) continue;
+      if (decimal === 'comma' && !isPresent.comma && told.decimal === null) continue;
+      found.push({ delimiter, decimal, hasQuotes });
+    }
+  }
+  return withoutBlanksBesideTabs(sample, found);
+}
+
+/** Tabs are blanks too: where they part the numbers, single blanks are not asked. */
+function withoutBlanksBesideTabs(sample: readonly string[], found: Dialect[]): Dialect[] {
+  const tabs = found.filter(({ delimiter }) => delimiter === 'tab');
+  const isTabbed = tabs.some((dialect) => scoreOf(sample, dialect) > sample.length / 2);
+  return isTabbed ? found.filter(({ delimiter }) => delimiter !== 'blanks') : found;
+}
+
+/** A row of numbers alone counts one; a row with other cells counts half the share of numbers. */
+function scoreOf(sample: readonly string[], dialect: Dialect): number {
+  let score = 0;
+  for (const cells of rowsOf(sample, dialect)) {
+    if (cells.length < 2) continue;
+    let numbers = 0;
+    let nothings = 0;
+    for (const cell of cells) {
+      if (looksNumeric(cell)) numbers += 1;
+      else if (saysNoNumber(cell)) nothings += 1;
+    }
+    if (numbers === 0) continue;
+    score += numbers + nothings === cells.length ? 1 : numbers / cells.length / 2;
+  }
+  return score;
+}
+
+/** The cells of a sample of lines from the start and the middle of a text. */
+export function sampleRows(text: string, dialect: Dialect): readonly string[][] {
+  return rowsOf(sampleOf(text), dialect);
+}
+
+/** The cells of lines under a dialect, decimals written with a point. */
+function rowsOf(lines: readonly string[], dialect: Dialect): readonly string[][] {
+  const { delimiter, decimal, hasQuotes } = dialect;
+  const plain = hasQuotes && lines.some((line) => line.includes('"'));
+  const unquoted = plain ? unquote(lines.join('\n'), delimiter) : null;
+  if (unquoted !== null && !unquoted.ok) return [];
+  const rows = unquoted === null ? lines : unquoted.value.split('\n');
+  const between = unquoted === null ? delimiter : 'tab';
+  const cells = rows.map((line) => cellsOf(line, between));
+  if (decimal === 'point') return cells;
+  return cells.map((row) => row.map((cell) => cell.replaceAll(',', '.')));
+}
+
+function noRows(): Result<never, ReadError> {
+  return refuse(
+    'no_points',
+    'The text has no row with a frequency and a value under any delimiter.',
+    'Send one row for each frequency, its numbers parted by commas, semicolons, tabs or blanks.',
+    { line: 1 },
+  );
+}
+
+function ambiguous(one: Dialect, other: Dialect): Result<never, ReadError> {
+  const written = ({ delimiter, decimal }: Dialect) => `${delimiter} with decimal ${decimal}`;
+  return refuse(
+    'dialect_ambiguous',
+    `The rows can be read as delimited by ${written(one)} or by ${written(other)}.`,
+    `Say which by \`columns\`: add \`delimiter=${one.delimiter},decimal=${one.decimal}\` or \`delimiter=${other.delimiter},decimal=${other.decimal}\`.`,
+    { line: 1 },
+  );
+}

@@ -72,7 +72,7 @@ export class DataLineReader {
   ): Result<number, ReadError> {
     const { tolerated } = this;
     const place = { line, column };
-    if (/^[+-]?(?:\d+\.?\d*|\.\d+)[dD][+-]?\d+$/.test(token)) {
+    if (/^[+-]?(?:\d+(?:\.\d*)?|\.\d+)[dD][+-]?\d+$/.test(token)) {
       tolerated.fortranLine ??= line;
       return ok(parseDecimal(token.replace(/[dD]/, 'e'), shift));
     }

@@ -7,7 +7,7 @@ import type { PlacedColumn } from './frame.ts';
 import { decimalShift } from './quantities.ts';
 
 const number = String.raw`[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?`;
-const fortran = /^[+-]?(?:\d+\.?\d*|\.\d+)[dD][+-]?\d+$/;
+const fortran = /^[+-]?(?:\d+(?:\.\d*)?|\.\d+)[dD][+-]?\d+$/;
 const withUnit = new RegExp(`^${number} ?(?:[a-zA-Z\u00b5\u03a9\u2126]{1,5}|%|\u00b0)$`);
 const complex = new RegExp(`^\\(?${number} ?(?:, ?|[+-] ?)[ij]?(?:\\d[\\d.eE+-]*)?[ij]?\\)?$`);
 const grouped = /^[+-]?\d{1,3}(?:['\u2019 \u00a0\u202f]\d{3})+(?:\.\d*)?$/;

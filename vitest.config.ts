@@ -4,6 +4,9 @@ import { ClosingLine } from './tests/support/closing-line.ts';
 export default defineConfig({
   test: {
     include: ['tests/**/*.test.ts'],
+    // Room for a busy machine: no test is judged by its time.
+    testTimeout: 120_000,
+    hookTimeout: 120_000,
     globalSetup: ['tests/support/build-once.ts'],
     reporters: ['default', new ClosingLine()],
     coverage: {

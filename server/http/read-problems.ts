@@ -5,9 +5,9 @@ import { Problem, type ProblemPlace, type ProblemSlug } from '../problems.ts';
 const slugs: Readonly<Record<string, ProblemSlug>> = {
   columns_to_confirm: 'columns-to-confirm',
   binary_file: 'unknown-file-kind',
-  kind_unknown: 'unknown-file-kind',
   too_many_bytes: 'too-large',
   too_many_points: 'too-large',
+  unknown_kind: 'unknown-file-kind',
 };
 
 /** The problem that tells a member why a file was refused, where, and what to do. */

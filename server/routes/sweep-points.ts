@@ -1,4 +1,6 @@
 import { z } from 'zod';
+import { writeSweepCsv } from '../../core/formats/delimited/write-sweep-csv.ts';
+import { writeSweepJson } from '../../core/formats/json/write-sweep-json.ts';
 import { writeTouchstone } from '../../core/formats/touchstone/write-touchstone.ts';
 import type { Sweep } from '../../core/sweep.ts';
 import { negotiate } from '../http/accept.ts';
@@ -10,7 +12,7 @@ import { readSweepOf } from '../reports.ts';
 import type { Service } from '../service.ts';
 import type { SweepRecord } from '../store/port.ts';
 import { readHeaders } from '../wire/common.ts';
-import { pointsCsv, pointsJson, pointsSchema } from '../wire/points.ts';
+import { pointsSchema } from '../wire/points.ts';
 import { answers, notModified } from '../wire/problem.ts';
 import { planeSchema } from '../wire/summary.ts';
 import { findProblems } from './editables.ts';
@@ -83,17 +85,11 @@ function formOf(accept: string | undefined): FormName {
   return formNames.find((name) => mediaTypes[name] === type) ?? 'json';
 }
 
-function textIn(form: FormName, record: SweepRecord, sweep: Sweep): string {
-  if (form === 'csv') return pointsCsv(sweep);
-  if (form === 'touchstone') return touchstoneOf(record, sweep);
-  const { phase, referenceOhm } = record.measured;
-  const { plane } = record.facts;
-  const head = { sweep_id: record.id, plane, phase, reference_ohm: referenceOhm };
-  return pointsJson(head, sweep);
-}
-
-function touchstoneOf(record: SweepRecord, sweep: Sweep): string {
-  const written = writeTouchstone(sweep, { comments: [`Sweep ${record.id}`] });
+function textIn(form: FormName, { id }: SweepRecord, sweep: Sweep): string {
+  const note = `Sweep ${id}`;
+  if (form === 'csv') return writeSweepCsv(sweep);
+  if (form === 'json') return writeSweepJson(sweep, { note });
+  const written = writeTouchstone(sweep, { comments: [note] });
   if (!written.ok) throw new Problem('phase-unknown', { detail: written.error.detail });
   return written.value;
 }

@@ -27,21 +27,22 @@ const points = (sweep: string, query = '', accept?: string) =>
 
 describe('the points of a sweep', () => {
   it('are JSON unless asked otherwise, one array for each quantity', async () => {
-    const answer = await points(id);
-    const { frequency_hz, reflection_re, reflection_im, ...rest } = answer.json();
+    const { frequency_hz, reflection_re, reflection_im, ...rest } = (await points(id)).json();
     expect(frequency_hz).toEqual([13_900_000, 14_037_500, 14_175_000, 14_312_500, 14_450_000]);
     // At resonance the resonator is 60 ohm: reflection 10/110.
     expect(reflection_re[2]).toBeCloseTo(10 / 110, 12);
     expect(reflection_im[2]).toBe(0);
-    expect(rest).toMatchObject({
-      sweep_id: id,
-      plane: 'measured',
-      phase: 'signed',
-      reference_ohm: 50,
-    });
-    for (const r of rest.resistance_ohm) expect(r).toBeCloseTo(60, 9);
-    expect(rest.reactance_ohm[0]).toBeCloseTo(-4e-4 * 275_000, 9);
-    expect(rest.swr[2]).toBeCloseTo(1.2, 12);
+    expect(rest).toMatchObject({ phase: 'signed', reference_ohm: 50 });
+  });
+
+  it.each(['json', 'touchstone'])('as %s read back as the same points', async (form) => {
+    const answer = await points(id, `?as=${form}`);
+    await addAntenna(club, { key: `copy-${form}` });
+    const url = `/v1/antennas/copy-${form}/sweeps`;
+    const copy = await club.call({ method: 'POST', url, payload: Buffer.from(answer.body) });
+    expect(copy.statusCode).toBe(201);
+    const [first, second] = [(await points(id)).json(), (await points(copy.json().id)).json()];
+    expect({ ...second, note: first.note }).toEqual(first);
   });
 
   it('are CSV with a header when asked by Accept or by name', async () => {
@@ -52,25 +53,20 @@ describe('the points of a sweep', () => {
     expect(byAccept.headers.vary).toMatch(/accept/i);
     const lines = byAccept.body.split('\r\n');
     expect(lines[0]).toBe(
-      'frequency_hz,reflection_re,reflection_im,swr,resistance_ohm,reactance_ohm',
+      'frequency_hz,reflection_re,reflection_im,resistance_ohm,reactance_ohm,swr',
     );
     expect(lines).toHaveLength(7);
-    expect(lines[3].split(',').slice(0, 2).map(Number)).toEqual([
-      14_175_000,
-      expect.closeTo(10 / 110, 12),
-    ]);
+    const [hz, re, im, r, x, swr] = lines[3].split(',').map(Number);
+    expect([hz, im, x]).toEqual([14_175_000, 0, 0]);
+    expect(re).toBeCloseTo(10 / 110, 12);
+    expect(r).toBeCloseTo(60, 9);
+    expect(swr).toBeCloseTo(1.2, 12);
   });
 
-  it('are Touchstone when asked, and read back as the same points', async () => {
+  it('are Touchstone as a download when asked by name', async () => {
     const answer = await points(id, '?as=touchstone');
     expect(answer.headers['content-type']).toBe('text/plain; charset=utf-8');
     expect(answer.headers['content-disposition']).toMatch(/^attachment; filename="[\w-]+\.s1p"$/);
-    await addAntenna(club, { key: 'copy' });
-    const url = '/v1/antennas/copy/sweeps';
-    const copy = await club.call({ method: 'POST', url, payload: Buffer.from(answer.body) });
-    expect(copy.statusCode).toBe(201);
-    const [first, second] = [await points(id), await points(copy.json().id)];
-    expect({ ...second.json(), sweep_id: id }).toEqual(first.json());
   });
 
   it('have a tag for each form', async () => {
@@ -94,13 +90,15 @@ describe('the points of a sweep', () => {
 
 describe('the points of a sweep that lacks the sign of the reactance', () => {
   it('say magnitude where only that is known', async () => {
-    const { reactance_magnitude_ohm, resistance_ohm, reactance_ohm, phase } = (
-      await points(unsigned)
-    ).json();
-    expect(phase).toBe('unsigned');
-    expect(reactance_ohm).toBeUndefined();
-    expect(resistance_ohm).toEqual([40, 50, 60].map((r) => expect.closeTo(r, 9)));
-    expect(reactance_magnitude_ohm).toEqual([10, 0, 10].map((x) => expect.closeTo(x, 9)));
+    expect((await points(unsigned)).json().phase).toBe('unsigned');
+    const [header, ...rows] = (await points(unsigned, '?as=csv')).body.trimEnd().split('\r\n');
+    const at = (name: string) => {
+      const column = header.split(',').indexOf(name);
+      return rows.map((row) => Number(row.split(',')[column]));
+    };
+    expect(header).not.toContain('reactance_ohm');
+    expect(at('resistance_ohm')).toEqual([40, 50, 60].map((r) => expect.closeTo(r, 9)));
+    expect(at('reactance_magnitude_ohm')).toEqual([10, 0, 10].map((x) => expect.closeTo(x, 9)));
   });
 
   it('cannot be Touchstone, which would claim a sign', async () => {
@@ -113,12 +111,13 @@ describe('the points of a sweep that lacks the sign of the reactance', () => {
 });
 
 describe('a sweep of SWR alone', () => {
-  it('has SWR and the magnitude of the reflection, and no impedance', async () => {
-    const { swr, reflection_magnitude, ...rest } = (await points(scalar)).json();
-    expect(swr).toEqual([2, 1.5, 2].map((s) => expect.closeTo(s, 12)));
+  it('has the magnitude of the reflection and no impedance', async () => {
+    const { reflection_magnitude, ...rest } = (await points(scalar)).json();
     // SWR 2 is a reflection of 1/3, SWR 1.5 one of 1/5 (any handbook).
     expect(reflection_magnitude).toEqual([1 / 3, 0.2, 1 / 3].map((r) => expect.closeTo(r, 12)));
-    expect(rest).not.toHaveProperty('resistance_ohm');
+    expect(rest).toMatchObject({ phase: 'none' });
+    const csv = (await points(scalar, '?as=csv')).body;
+    expect(csv.split('\r\n')[0]).toBe('frequency_hz,reflection_magnitude,swr');
   });
 
   it('is judged against the reference of its file only', async () => {

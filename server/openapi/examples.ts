@@ -106,7 +106,9 @@ function mediaOf(
   return part !== undefined && 'content' in part ? part.content?.[type] : undefined;
 }
 
+/** Cuts lists, and digits that another machine's arithmetic might not repeat. */
 function shortened(value: unknown): unknown {
+  if (typeof value === 'number' && !Number.isInteger(value)) return Number(value.toPrecision(7));
   if (Array.isArray(value)) return value.slice(0, longestList).map(shortened);
   if (typeof value !== 'object' || value === null) return value;
   return Object.fromEntries(Object.entries(value).map(([name, inner]) => [name, shortened(inner)]));

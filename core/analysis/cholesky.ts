@@ -6,19 +6,15 @@ export interface CholeskyFactor {
 }
 
 /** Below this part of its diagonal a pivot is rounding: its direction carries no information. */
-const dependentBelow = 1e-14;
+const dependentBelow = 3e-13;
 
 /**
  * Factors a symmetric positive definite matrix, of which the upper triangle is read (row k and column
- * j at `k + j * size`). A direction without information is held by a trace of its diagonal; `held`
- * counts them.
+ * j at `k + j * size`). A direction without information gets an infinite pivot, so that solutions
+ * leave it where it is and uncertainties leave it out.
  */
-export function choleskyFactor(
-  matrix: Float64Array,
-  size: number,
-): CholeskyFactor & { readonly held: number } {
+export function choleskyFactor(matrix: Float64Array, size: number): CholeskyFactor {
   const triangle = new Float64Array(size * size);
-  let held = 0;
   for (let j = 0; j < size; j++) {
     const column = j * size;
     for (let k = 0; k < j; k++) {
@@ -30,13 +26,10 @@ export function choleskyFactor(
     const diagonal = matrix[j + column];
     let rest = diagonal;
     for (let i = 0; i < j; i++) rest -= triangle[i + column] * triangle[i + column];
-    if (!(rest > dependentBelow * diagonal)) {
-      rest = dependentBelow * diagonal || 1;
-      held += 1;
-    }
-    triangle[j + column] = Math.sqrt(rest);
+    const isKnown = rest > dependentBelow * diagonal;
+    triangle[j + column] = isKnown ? Math.sqrt(rest) : Number.POSITIVE_INFINITY;
   }
-  return { size, triangle, held };
+  return { size, triangle };
 }
 
 /** Solves RᵀR x = b. */

@@ -18,18 +18,30 @@ export interface ChosenFits {
   readonly members: readonly WeightedFit[];
   /** Standard deviation of one number about the best fit; null if it can't be told. */
   readonly noise: number | null;
-  /** Student's factor for a 95 % interval. */
+  /**
+   * Student's factor for a 95 % interval; larger where neighbouring residuals hang together, as a mean
+   * of such numbers scatters more (first-order autoregression).
+   */
   readonly factor95: number;
+  /** Unknowns of the best fit. */
+  readonly unknowns: number;
   /** Neighbouring residuals do not hang together: the fit explains all but noise. */
   readonly isWhite: boolean;
+  /** The residuals are not much larger than the noise between neighbouring samples. */
+  readonly isExplained: boolean;
 }
 
 const highestDegree = 16;
 const fewestSamples = 5;
 /** Residuals below this are rounding of the arithmetic, whatever their pattern. */
 const arithmeticFloor = 1e-12;
-/** A fit whose residuals exceed the roughly known noise by this factor is not worth perfecting. */
+/** A fit whose residuals exceed the roughly known noise by this factor leaves something unexplained. */
 const explainedWithin = 3;
+/** One whose residuals exceed it, or this noise, by this factor is not worth perfecting. */
+const hopefulWithin = 30;
+const leastHopefulNoise = 1e-6;
+/** Below this a fit counts as exact: no file and no instrument knows better. */
+const exactBelow = 1e-9;
 /** Degrees that may fail to help before the search ends. */
 const patience = 3;
 /** Fits whose weight beside the best one's is less than this are left out. */
@@ -64,8 +76,7 @@ export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | n
     momentsFor(form, highestDegree),
   );
   const stepHz = (frequencyHz[count - 1] - frequencyHz[0]) / (count - 1);
-  const explained =
-    roughNoise > 0 ? explainedWithin ** 2 * roughNoise ** 2 * numbers : Number.POSITIVE_INFINITY;
+  const hopeful = numbers * (hopefulWithin * Math.max(roughNoise, leastHopefulNoise)) ** 2;
   const scored: Scored[] = [];
   let best = Number.POSITIVE_INFINITY;
   let failures = 0;
@@ -80,7 +91,7 @@ export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | n
       form,
       degree,
       before?.denominator ?? null,
-      Math.min(wanted, explained) - compressed.squaresInside,
+      Math.min(wanted, hopeful) - compressed.squaresInside,
     );
     if (fit === null) {
       failures += 1;
@@ -99,7 +110,7 @@ export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | n
     best = Math.min(best, score);
     if (squares < numbers * arithmeticFloor ** 2) break;
   }
-  return scored.length === 0 ? null : judged(scored, best, numbers, weighed);
+  return scored.length === 0 ? null : judged(scored, best, numbers, weighed, roughNoise);
 }
 
 function scoreOf(squares: number, degree: number, numbers: number): number {
@@ -119,6 +130,7 @@ function judged(
   best: number,
   numbers: number,
   samples: WeightedSamples,
+  roughNoise: number,
 ): ChosenFits {
   const shares = scored
     .map(({ fit, score, squares }) => ({ fit, squares, weight: Math.exp((best - score) / 2) }))
@@ -126,18 +138,27 @@ function judged(
   const total = shares.reduce((sum, { weight }) => sum + weight, 0);
   const members = shares.map(({ fit, weight }) => ({ fit, weight: weight / total }));
   const { fit, squares } = shares.reduce((a, b) => (b.weight > a.weight ? b : a));
-  const freedom = numbers - unknownsOf(fit.degree);
-  const isTiny = squares < numbers * (10 * arithmeticFloor) ** 2;
+  const unknowns = unknownsOf(fit.degree);
+  const freedom = numbers - unknowns;
+  const isTiny = squares < numbers * exactBelow ** 2;
+  const correlation = isTiny ? 0 : neighbourCorrelation(fit, samples);
+  const isWhite = correlation < 3 / Math.sqrt(numbersIn(fit.form, samples.re.length));
+  const student = studentQuantile(0.975, freedom);
   return {
     members,
+    unknowns,
     noise: Math.sqrt(squares / freedom),
-    factor95: studentQuantile(0.975, freedom),
-    isWhite: isTiny || isWhite(fit, samples),
+    factor95: isWhite ? student : student * Math.sqrt((1 + correlation) / (1 - correlation)),
+    isWhite,
+    isExplained: squares < explainedWithin ** 2 * roughNoise ** 2 * numbers,
   };
 }
 
-/** Whether each residual tells no more of the next than chance does. */
-function isWhite(fit: RationalFit, { frequencyHz, re, im, weight }: WeightedSamples): boolean {
+/** Correlation of each residual with the next, at most 0.9. */
+function neighbourCorrelation(
+  fit: RationalFit,
+  { frequencyHz, re, im, weight }: WeightedSamples,
+): number {
   let products = 0;
   let squares = 0;
   let [beforeRe, beforeIm] = [0, 0];
@@ -150,5 +171,5 @@ function isWhite(fit: RationalFit, { frequencyHz, re, im, weight }: WeightedSamp
     squares += errorRe ** 2 + errorIm ** 2;
     [beforeRe, beforeIm] = [errorRe, errorIm];
   }
-  return products < (3 * squares) / Math.sqrt(numbersIn(fit.form, re.length));
+  return squares === 0 ? 0 : Math.min(0.9, products / squares);
 }

@@ -1,7 +1,9 @@
+import { type InstrumentError, reflectionErrorBound } from './instrument-error.ts';
 import { type ChosenFits, chooseFits } from './model-choice.ts';
 import { frequencyScale, type RationalForm } from './rational-basis.ts';
 import type { RationalFit } from './rational-fit.ts';
 import {
+  addFitValues,
   type Functional,
   fitValueAt,
   functionalOf,
@@ -11,18 +13,21 @@ import {
 import type { Samples } from './samples.ts';
 
 /** A stretch of the sweep, from sample to sample, with the functions that stand for it. */
-export interface ModelPiece extends Omit<ChosenFits, 'isWhite'> {
+export interface ModelPiece extends Pick<ChosenFits, 'members' | 'noise' | 'factor95'> {
   readonly lowHz: number;
   readonly highHz: number;
 }
 
 /** The sweep as functions of frequency, piece after piece without gaps. */
 export interface PiecewiseModel {
+  readonly form: RationalForm;
   readonly pieces: readonly ModelPiece[];
+  /** What the analyzer may be off by; null if only noise is known. */
+  readonly instrument: InstrumentError | null;
 }
 
 /** A stretch is not halved below this many samples. */
-const fewestToHalve = 32;
+const fewestToHalve = 24;
 /** Samples beyond its own stretch that a piece is fitted to, as a part of the stretch. */
 const overlap = 0.35;
 
@@ -31,11 +36,23 @@ const overlap = 0.35;
  * halves of it, and so on. Each piece is fitted beyond its ends, where fits are weakest. Below five
  * samples the pieces are straight lines and know no noise. Needs two samples.
  */
-export function piecewiseModel(samples: Samples, form: RationalForm): PiecewiseModel {
-  const count = samples.frequencyHz.length;
+export function piecewiseModel(
+  samples: Samples,
+  form: RationalForm,
+  instrument: InstrumentError | null = null,
+): PiecewiseModel {
+  const last = samples.frequencyHz.length - 1;
   const pieces: ModelPiece[] = [];
-  cover(samples, form, 0, count - 1, pieces);
-  return { pieces };
+  cover(samples, form, 0, last, chooseOn(samples, form, 0, last), pieces);
+  return { form, pieces, instrument };
+}
+
+/** The fits for a stretch, fitted to a part of its neighbours as well. */
+function chooseOn(samples: Samples, form: RationalForm, first: number, last: number) {
+  const reach = Math.ceil((last - first) * overlap);
+  const from = Math.max(0, first - reach);
+  const to = Math.min(samples.frequencyHz.length - 1, last + reach);
+  return chooseFits(slice(samples, from, to + 1), form);
 }
 
 function cover(
@@ -43,25 +60,34 @@ function cover(
   form: RationalForm,
   first: number,
   last: number,
+  chosen: ChosenFits | null,
   pieces: ModelPiece[],
 ): void {
   const { frequencyHz } = samples;
-  const reach = Math.ceil((last - first) * overlap);
-  const from = Math.max(0, first - reach);
-  const to = Math.min(frequencyHz.length - 1, last + reach);
-  const chosen = chooseFits(slice(samples, from, to + 1), form);
   if (chosen === null) {
     for (let i = first; i < last; i++) pieces.push(straightLine(samples, form, i));
     return;
   }
-  if (chosen.isWhite || last - first < fewestToHalve) {
-    const { members, noise, factor95 } = chosen;
-    pieces.push({ lowHz: frequencyHz[first], highHz: frequencyHz[last], members, noise, factor95 });
-    return;
+  if (!chosen.isWhite && last - first >= fewestToHalve) {
+    const middle = (first + last) >> 1;
+    const left = chooseOn(samples, form, first, middle);
+    const right = chooseOn(samples, form, middle, last);
+    const halves = scoreOn(left, middle - first) + scoreOn(right, last - middle);
+    if (!chosen.isExplained || halves < scoreOn(chosen, last - first)) {
+      cover(samples, form, first, middle, left, pieces);
+      cover(samples, form, middle, last, right, pieces);
+      return;
+    }
   }
-  const middle = (first + last) >> 1;
-  cover(samples, form, first, middle, pieces);
-  cover(samples, form, middle, last, pieces);
+  const { members, noise, factor95 } = chosen;
+  pieces.push({ lowHz: frequencyHz[first], highHz: frequencyHz[last], members, noise, factor95 });
+}
+
+/** The criterion by which fits were chosen, on so many samples; comparable between covers. */
+function scoreOn(chosen: ChosenFits | null, samples: number): number {
+  if (chosen?.noise == null) return Number.POSITIVE_INFINITY;
+  const numbers = 2 * samples;
+  return 2 * numbers * Math.log(chosen.noise) + chosen.unknowns * Math.log(numbers);
 }
 
 function slice({ frequencyHz, re, im }: Samples, from: number, to: number): Samples {
@@ -115,7 +141,11 @@ export function pieceAt({ pieces }: PiecewiseModel, frequencyHz: number): ModelP
 }
 
 /** The model's value and derivatives at a frequency. */
-export function valueAt({ members }: ModelPiece, frequencyHz: number): RationalValue {
+export function valueAt(model: PiecewiseModel, frequencyHz: number): RationalValue {
+  return pieceValueAt(pieceAt(model, frequencyHz), frequencyHz);
+}
+
+function pieceValueAt({ members }: ModelPiece, frequencyHz: number): RationalValue {
   if (members.length === 1) return fitValueAt(members[0].fit, frequencyHz);
   let [re, im, slopeRe, slopeIm, curvatureRe, curvatureIm] = [0, 0, 0, 0, 0, 0];
   for (const { fit, weight } of members) {
@@ -134,14 +164,15 @@ export function valueAt({ members }: ModelPiece, frequencyHz: number): RationalV
  * 95 % half-width of a functional of the model at a frequency: from the noise, and from what the
  * weighted fits differ by. Null where the noise can't be told.
  */
-export function halfWidthAt(
-  piece: ModelPiece,
+export function noiseHalfWidthAt(
+  model: PiecewiseModel,
   frequencyHz: number,
   functional: Functional,
 ): number | null {
+  const piece = pieceAt(model, frequencyHz);
   const { members, noise, factor95 } = piece;
   if (noise === null) return null;
-  const mean = functionalOf(valueAt(piece, frequencyHz), functional);
+  const mean = functionalOf(pieceValueAt(piece, frequencyHz), functional);
   let variance = 0;
   for (const { fit, weight } of members) {
     const value = fitValueAt(fit, frequencyHz);
@@ -149,4 +180,43 @@ export function halfWidthAt(
     variance += weight * (spread ** 2 + (functionalOf(value, functional) - mean) ** 2);
   }
   return Number.isFinite(variance) ? factor95 * Math.sqrt(variance) : null;
+}
+
+/**
+ * The same with what the analyzer may be off by: an error of the reflection of whatever phase, but
+ * slow in frequency, so that only the functional's part on the value feels it.
+ */
+export function halfWidthAt(
+  model: PiecewiseModel,
+  frequencyHz: number,
+  functional: Functional,
+): number | null {
+  const ofNoise = noiseHalfWidthAt(model, frequencyHz, functional);
+  const { instrument, form } = model;
+  if (ofNoise === null || instrument === null) return ofNoise;
+  const { re, im } = valueAt(model, frequencyHz);
+  const magnitude = form === 'square' ? Math.sqrt(Math.max(0, re)) : Math.hypot(re, im);
+  const bound = reflectionErrorBound(instrument, magnitude);
+  const ofValue = form === 'square' ? (2 * magnitude + bound) * bound : bound;
+  return Math.hypot(ofNoise, Math.hypot(functional.valueRe, functional.valueIm) * ofValue);
+}
+
+/** The model's value at many ascending frequencies. */
+export function valuesAt(
+  model: PiecewiseModel,
+  frequencyHz: Float64Array,
+): { readonly re: Float64Array; readonly im: Float64Array } {
+  const re = new Float64Array(frequencyHz.length);
+  const im = new Float64Array(frequencyHz.length);
+  let from = 0;
+  model.pieces.forEach((piece, k) => {
+    let to = from;
+    const isLast = k === model.pieces.length - 1;
+    while (to < frequencyHz.length && (isLast || frequencyHz[to] <= piece.highHz)) to += 1;
+    for (const { fit, weight } of piece.members) {
+      addFitValues(fit, weight, frequencyHz, re, im, from, to);
+    }
+    from = to;
+  });
+  return { re, im };
 }

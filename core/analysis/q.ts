@@ -1,4 +1,4 @@
-import { halfWidthAt, type ModelPiece } from './piecewise-model.ts';
+import { halfWidthAt, type PiecewiseModel } from './piecewise-model.ts';
 import type { Functional, RationalValue } from './rational-value.ts';
 import type { Resonance } from './summary.ts';
 
@@ -11,7 +11,7 @@ const relativeStep = 1e-6;
  * order in value and slope of the reflection. Null where the resistance is not positive.
  */
 export function impedanceQ(
-  piece: ModelPiece,
+  model: PiecewiseModel,
   frequencyHz: number,
   value: RationalValue,
   referenceOhm: number,
@@ -44,7 +44,7 @@ export function impedanceQ(
     slopeRe: derivative(2, slopeScale),
     slopeIm: -derivative(3, slopeScale),
   };
-  return { q, qU95: halfWidthAt(piece, frequencyHz, functional) };
+  return { q, qU95: halfWidthAt(model, frequencyHz, functional) };
 }
 
 function qOf(

@@ -85,6 +85,38 @@ export function fitValueAt(fit: RationalFit, frequencyHz: number): RationalValue
   return { re, im, slopeRe, slopeIm, curvatureRe, curvatureIm };
 }
 
+/** Adds a share of the fit's values at a stretch of frequencies. */
+export function addFitValues(
+  { scale, numerator, denominator }: RationalFit,
+  share: number,
+  frequencyHz: Float64Array,
+  re: Float64Array,
+  im: Float64Array,
+  from: number,
+  to: number,
+): void {
+  for (let i = from; i < to; i++) {
+    const w = frequencyHz[i] / scale.centreHz;
+    const y = scaledSquare(scale, frequencyHz[i]);
+    const nr = seriesSum(numerator.even, y);
+    const ni = w * seriesSum(numerator.odd, y);
+    const dr = seriesSum(denominator.even, y);
+    const di = w * seriesSum(denominator.odd, y);
+    const part = share / (dr * dr + di * di);
+    re[i] += part * (nr * dr + ni * di);
+    im[i] += part * (ni * dr - nr * di);
+  }
+}
+
+/** Sum of Chebyshev polynomials (C. W. Clenshaw, Mathematics of Computation 9, 1955). */
+function seriesSum(coefficients: Float64Array, y: number): number {
+  let [b, after] = [0, 0];
+  for (let k = coefficients.length - 1; k > 0; k--) {
+    [b, after] = [2 * y * b - after + coefficients[k], b];
+  }
+  return coefficients.length === 0 ? 0 : y * b - after + coefficients[0];
+}
+
 /** Weights of a functional: the real part of (value · a + slope · b), complex a and b. */
 export interface Functional {
   readonly valueRe: number;

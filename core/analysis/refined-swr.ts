@@ -1,6 +1,7 @@
 import type { Sweep } from '../sweep.ts';
 import { type Analysis, analyse } from './analysis.ts';
-import { findSpans } from './spans.ts';
+import type { InstrumentError } from './instrument-error.ts';
+import { findSpans, type Spans } from './spans.ts';
 import type { SwrCurve, SwrExtremes } from './swr-curve.ts';
 
 /** SWR of a squared magnitude of the reflection; null where the reflection is total. */
@@ -17,8 +18,8 @@ export function swrU95OfSquare(square: number, magnitudeU95: number | null): num
 }
 
 /** The refined SWR of a sweep against its own reference. */
-export function swrCurve(sweep: Sweep): SwrCurve {
-  return curveOf(analyse(sweep));
+export function swrCurve(sweep: Sweep, instrument: InstrumentError | null = null): SwrCurve {
+  return curveOf(analyse(sweep, instrument));
 }
 
 /** The refined SWR of a sweep that was analysed already. */
@@ -29,7 +30,7 @@ export function curveOf(analysis: Analysis): SwrCurve {
   return {
     lowHz,
     highHz,
-    spans: (maxSwr) => spansOf(analysis, maxSwr),
+    spans: (maxSwr) => spansOf(analysis, maxSwr).spans,
     extremes: (low, high) =>
       high < lowHz || low > highHz
         ? null
@@ -37,23 +38,15 @@ export function curveOf(analysis: Analysis): SwrCurve {
   };
 }
 
-function spansOf({ mismatch, scan, minima }: Analysis, maxSwr: number) {
-  if (mismatch !== null) return findSpans(mismatch, scan, maxSwr).spans;
+/** The usable spans of a sweep that was analysed already, and where the SWR only touches the limit. */
+export function spansOf({ mismatch, scan, minima }: Analysis, maxSwr: number): Spans {
+  if (mismatch !== null) return findSpans(mismatch, scan, maxSwr);
   const swr = swrOfSquare(minima[0].square);
-  if (swr === null || swr > maxSwr) return [];
-  const [at] = scan;
-  return [
-    {
-      maxSwr,
-      lowHz: at,
-      lowU95Hz: null,
-      highHz: at,
-      highU95Hz: null,
-      widthHz: 0,
-      lowOpen: true,
-      highOpen: true,
-    },
-  ];
+  if (swr === null || swr > maxSwr) return { spans: [], grazingHz: [] };
+  const [at] = scan.frequencyHz;
+  const unknown = { lowU95Hz: null, highU95Hz: null };
+  const span = { maxSwr, lowHz: at, highHz: at, widthHz: 0, lowOpen: true, highOpen: true };
+  return { spans: [{ ...span, ...unknown }], grazingHz: [] };
 }
 
 interface Place {

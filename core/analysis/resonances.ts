@@ -1,106 +1,62 @@
-import {
-  halfWidthAt,
-  type ModelPiece,
-  type PiecewiseModel,
-  pieceAt,
-  valueAt,
-} from './piecewise-model.ts';
+import { type Crossing, findCrossings, imaginaryPart } from './crossings.ts';
+import { matchedBandwidth } from './matched-bandwidth.ts';
+import { halfWidthAt, type PiecewiseModel, valueAt } from './piecewise-model.ts';
 import { impedanceQ } from './q.ts';
 import type { Functional, RationalValue } from './rational-value.ts';
-import { type SignChange, scanModel, signChanges } from './scan.ts';
+import type { Scan } from './scan.ts';
 import type { Resonance } from './summary.ts';
 import { zeroBetween } from './zero.ts';
-
-const imaginaryPart: Functional = { valueRe: 0, valueIm: -1, slopeRe: 0, slopeIm: 0 };
-/** A swing of the reactance that stays within this many 95 % half-widths may be noise. */
-const doubtfulWithin = 1.5;
 
 /**
  * Every frequency of zero reactance that the noise does not explain. Reactance is zero where the
  * imaginary part of the reflection is, and there alone: seen so, a pole of the impedance is one
- * crossing like any other and never two. Rising is series, falling parallel resonance.
- *
- * Crossings between which the reactance stays within the noise are one event: an even number of
- * them is a touch and no crossing (`grazing`), an odd number one crossing.
+ * crossing like any other and never two. Rising is series, falling parallel resonance; a touch is
+ * called by the side of the reference on which its resistance lies.
  */
 export function findResonances(
   model: PiecewiseModel,
-  scan: Float64Array,
+  scan: Scan,
   referenceOhm: number,
 ): readonly Resonance[] {
-  const { im } = scanModel(model, scan);
-  return eventsOf(signChanges(im), model, scan, im).map((event) => {
-    const { change } = event;
-    const low = scan[change.before];
-    const high = scan[change.after];
-    const frequencyHz = zeroBetween((f) => valueAt(pieceAt(model, f), f).im, low, high);
-    return resonanceAt(model, frequencyHz, referenceOhm, im[change.after] > 0, event.isTouch);
-  });
-}
-
-interface CrossingEvent {
-  readonly change: SignChange;
-  readonly isTouch: boolean;
-}
-
-/** Joins changes of sign that noise may have made of one. */
-function eventsOf(
-  changes: readonly SignChange[],
-  model: PiecewiseModel,
-  scan: Float64Array,
-  im: Float64Array,
-): CrossingEvent[] {
-  const events: CrossingEvent[] = [];
-  let start = 0;
-  while (start < changes.length) {
-    let end = start;
-    while (
-      end + 1 < changes.length &&
-      isWithinNoise(model, scan, im, changes[end].after, changes[end + 1].before)
-    ) {
-      end += 1;
-    }
-    const isTouch = (end - start) % 2 === 1;
-    events.push({ change: changes[(start + end) >> 1], isTouch });
-    start = end + 1;
-  }
-  return events;
-}
-
-/** Whether the reactance between two places of the scan never leaves the noise. */
-function isWithinNoise(
-  model: PiecewiseModel,
-  scan: Float64Array,
-  im: Float64Array,
-  from: number,
-  to: number,
-): boolean {
-  let at = from;
-  for (let i = from; i <= to; i++) if (Math.abs(im[i]) > Math.abs(im[at])) at = i;
-  const piece = pieceAt(model, scan[at]);
-  const u95 = halfWidthAt(piece, scan[at], imaginaryPart);
-  return u95 !== null && Math.abs(im[at]) < doubtfulWithin * u95;
+  return findCrossings(model, scan).map((crossing) =>
+    resonanceAt(model, scan, crossing, referenceOhm),
+  );
 }
 
 function resonanceAt(
   model: PiecewiseModel,
-  frequencyHz: number,
+  scan: Scan,
+  { before, after, isGrazing }: Crossing,
   referenceOhm: number,
-  isRising: boolean,
-  isTouch: boolean,
 ): Resonance {
-  const piece = pieceAt(model, frequencyHz);
-  const value = valueAt(piece, frequencyHz);
-  const imU95 = halfWidthAt(piece, frequencyHz, imaginaryPart);
-  const frequencyU95Hz = imU95 === null ? null : imU95 / Math.abs(value.slopeIm);
+  const low = scan.frequencyHz[before];
+  const high = scan.frequencyHz[after];
+  const isTouch = before === after;
+  const frequencyHz = isTouch ? low : zeroBetween((f) => valueAt(model, f).im, low, high);
+  const value = valueAt(model, frequencyHz);
+  const isSeries = isTouch ? value.re < 0 : scan.im[after] > 0;
+  const quality = impedanceQ(model, frequencyHz, value, referenceOhm);
+  const { q, qU95 } = quality;
   return {
     frequencyHz,
-    frequencyU95Hz: isTouch ? null : frequencyU95Hz,
-    kind: isRising ? 'series' : 'parallel',
-    ...resistanceAt(piece, frequencyHz, value, referenceOhm),
-    ...impedanceQ(piece, frequencyHz, value, referenceOhm),
-    grazing: isTouch,
+    frequencyU95Hz: isGrazing ? null : frequencyU95(model, frequencyHz, value),
+    kind: isSeries ? 'series' : 'parallel',
+    ...resistanceAt(model, frequencyHz, value, referenceOhm),
+    ...quality,
+    matchedBandwidth: isGrazing
+      ? null
+      : matchedBandwidth(model, scan, frequencyHz, value.re, q, qU95),
+    grazing: isGrazing,
   };
+}
+
+function frequencyU95(
+  model: PiecewiseModel,
+  frequencyHz: number,
+  { slopeIm }: RationalValue,
+): number | null {
+  const imaginaryU95 = halfWidthAt(model, frequencyHz, imaginaryPart);
+  return imaginaryU95 === null || slopeIm === 0 ? null : imaginaryU95 / Math.abs(slopeIm);
 }
 
 type AtResonance = Pick<Resonance, 'resistanceOhm' | 'resistanceU95Ohm' | 'swr' | 'swrU95'>;
@@ -110,7 +66,7 @@ type AtResonance = Pick<Resonance, 'resistanceOhm' | 'resistanceU95Ohm' | 'swr' 
  * crossing moves with the noise too, and the real part along with it.
  */
 function resistanceAt(
-  piece: ModelPiece,
+  model: PiecewiseModel,
   frequencyHz: number,
   value: RationalValue,
   referenceOhm: number,
@@ -119,7 +75,7 @@ function resistanceAt(
   if (real >= 1) return { resistanceOhm: null, resistanceU95Ohm: null, swr: null, swrU95: null };
   const along = value.slopeIm === 0 ? 0 : value.slopeRe / value.slopeIm;
   const functional: Functional = { valueRe: 1, valueIm: along, slopeRe: 0, slopeIm: 0 };
-  const realU95 = halfWidthAt(piece, frequencyHz, functional);
+  const realU95 = halfWidthAt(model, frequencyHz, functional);
   const magnitude = Math.abs(real);
   const isPassive = magnitude < 1;
   return {

@@ -1,4 +1,12 @@
-import { type PiecewiseModel, pieceAt, valueAt } from './piecewise-model.ts';
+/** A model looked at from end to end. */
+export interface Scan {
+  readonly frequencyHz: Float64Array;
+  /** Squared magnitude of the reflection. */
+  readonly square: Float64Array;
+  /** Parts of the reflection; all zero where its sign is not known. */
+  readonly re: Float64Array;
+  readonly im: Float64Array;
+}
 
 /** Frequencies at which a model is looked at for signs and turns, ascending. */
 export function scanFrequencies(frequencyHz: Float64Array): Float64Array {
@@ -13,35 +21,36 @@ export function scanFrequencies(frequencyHz: Float64Array): Float64Array {
   return scan;
 }
 
-/** Real and imaginary part of a model at the scan's frequencies. */
-export function scanModel(
-  model: PiecewiseModel,
-  scan: Float64Array,
-): { readonly re: Float64Array; readonly im: Float64Array } {
-  const re = new Float64Array(scan.length);
-  const im = new Float64Array(scan.length);
-  for (let i = 0; i < scan.length; i++) {
-    const value = valueAt(pieceAt(model, scan[i]), scan[i]);
-    re[i] = value.re;
-    im[i] = value.im;
-  }
-  return { re, im };
-}
-
 /** A change of sign between two neighbours of a scan (zeros between them left out). */
 export interface SignChange {
   readonly before: number;
   readonly after: number;
 }
 
-/** The changes of sign of a row of values, in order. */
-export function signChanges(values: Float64Array): SignChange[] {
+/** The changes of sign of `values` less `level`, in order. */
+export function signChanges(values: Float64Array, level = 0): SignChange[] {
   const changes: SignChange[] = [];
   let last = -1;
   for (let i = 0; i < values.length; i++) {
-    if (values[i] === 0) continue;
-    if (last >= 0 && values[i] > 0 !== values[last] > 0) changes.push({ before: last, after: i });
+    if (values[i] === level) continue;
+    if (last >= 0 && values[i] > level !== values[last] > level) {
+      changes.push({ before: last, after: i });
+    }
     last = i;
   }
   return changes;
+}
+
+/** Place of the value farthest from `level` between two places, both among them. */
+export function farthestFrom(
+  values: Float64Array,
+  level: number,
+  from: number,
+  to: number,
+): number {
+  let at = from;
+  for (let i = from; i <= to; i++) {
+    if (Math.abs(values[i] - level) > Math.abs(values[at] - level)) at = i;
+  }
+  return at;
 }

@@ -1,5 +1,5 @@
 import type { Mismatch } from './mismatch.ts';
-import { signChanges } from './scan.ts';
+import { farthestFrom, type Scan, signChanges } from './scan.ts';
 import type { UsableSpan } from './summary.ts';
 import { zeroBetween } from './zero.ts';
 
@@ -27,32 +27,31 @@ interface Edge {
  * The usable spans of a sweep, ascending: edges where the refined SWR crosses the limit. A stretch
  * between two crossings that stays within the noise of the limit makes no edge.
  */
-export function findSpans(mismatch: Mismatch, scan: Float64Array, maxSwr: number): Spans {
+export function findSpans(mismatch: Mismatch, scan: Scan, maxSwr: number): Spans {
   const limit = squareAtSwr(maxSwr);
-  const excess = Float64Array.from(scan, (f) => mismatch.at(f).square - limit);
-  const { edges, grazingHz } = significantEdges(mismatch, scan, excess, limit);
-  const last = scan[scan.length - 1];
-  const startsUsable = edges.length > 0 ? edges[0].isRising : isUsableThroughout(excess);
+  const { frequencyHz, square } = scan;
+  const { edges, grazingHz } = significantEdges(mismatch, scan, limit);
+  const [firstHz] = frequencyHz;
+  const lastHz = frequencyHz[frequencyHz.length - 1];
+  const isWhole = edges.length === 0 && isUsableThroughout(square, limit);
+  if (isWhole) return { spans: [spanOf(maxSwr, firstHz, null, lastHz, null)], grazingHz };
   const spans: UsableSpan[] = [];
   let low: Edge | null = null;
-  if (startsUsable && edges.length === 0) {
-    return { spans: [spanOf(maxSwr, scan[0], null, last, null)], grazingHz };
-  }
   for (const edge of edges) {
-    if (!edge.isRising) low = edge;
-    else spans.push(spanOf(maxSwr, scan[0], low, last, edge));
+    if (edge.isRising) spans.push(spanOf(maxSwr, firstHz, low, lastHz, edge));
+    else low = edge;
   }
-  if (edges.at(-1)?.isRising === false) spans.push(spanOf(maxSwr, scan[0], low, last, null));
+  if (edges.at(-1)?.isRising === false) spans.push(spanOf(maxSwr, firstHz, low, lastHz, null));
   return { spans, grazingHz };
 }
 
 /** With every crossing put down to noise, the side on which most of the sweep lies decides. */
-function isUsableThroughout(excess: Float64Array): boolean {
+function isUsableThroughout(square: Float64Array, limit: number): boolean {
   let above = 0;
   let below = 0;
-  for (const value of excess) {
-    if (value > above) above = value;
-    if (-value > below) below = -value;
+  for (const value of square) {
+    above = Math.max(above, value - limit);
+    below = Math.max(below, limit - value);
   }
   return below >= above;
 }
@@ -80,44 +79,37 @@ function spanOf(
 
 function significantEdges(
   mismatch: Mismatch,
-  scan: Float64Array,
-  excess: Float64Array,
+  { frequencyHz, square }: Scan,
   limit: number,
 ): { readonly edges: readonly Edge[]; readonly grazingHz: readonly number[] } {
-  const changes = signChanges(excess);
+  const changes = signChanges(square, limit);
   const edges: Edge[] = [];
   const grazingHz: number[] = [];
   for (let i = 0; i < changes.length; i++) {
     const next = changes[i + 1];
     if (next !== undefined) {
-      const farthest = farthestBetween(excess, changes[i].after, next.before);
-      if (isWithinNoise(mismatch, scan[farthest], excess[farthest], limit)) {
-        grazingHz.push(scan[farthest]);
+      const farthest = farthestFrom(square, limit, changes[i].after, next.before);
+      if (isWithinNoise(mismatch, frequencyHz[farthest], square[farthest], limit)) {
+        grazingHz.push(frequencyHz[farthest]);
         i += 1;
         continue;
       }
     }
-    edges.push(edgeAt(mismatch, scan[changes[i].before], scan[changes[i].after], limit));
+    const { before, after } = changes[i];
+    edges.push(edgeAt(mismatch, frequencyHz[before], frequencyHz[after], limit));
   }
   return { edges, grazingHz };
-}
-
-function farthestBetween(excess: Float64Array, from: number, to: number): number {
-  let at = from;
-  for (let i = from; i <= to; i++) if (Math.abs(excess[i]) > Math.abs(excess[at])) at = i;
-  return at;
 }
 
 function isWithinNoise(
   mismatch: Mismatch,
   frequencyHz: number,
-  excess: number,
+  square: number,
   limit: number,
 ): boolean {
-  const u95 = mismatch.magnitudeU95(frequencyHz);
+  const u95 = mismatch.magnitudeNoiseU95(frequencyHz);
   if (u95 === null) return false;
-  const distance = Math.abs(Math.sqrt(Math.max(0, limit + excess)) - Math.sqrt(limit));
-  return distance < doubtfulWithin * u95;
+  return Math.abs(Math.sqrt(square) - Math.sqrt(limit)) < doubtfulWithin * u95;
 }
 
 function edgeAt(mismatch: Mismatch, low: number, high: number, limit: number): Edge {

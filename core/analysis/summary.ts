@@ -34,8 +34,32 @@ export interface Resonance {
   readonly swrU95: number | null;
   readonly q: number | null;
   readonly qU95: number | null;
+  readonly matchedBandwidth: MatchedBandwidth | null;
   /** The reactance touches zero within the noise without a crossing beyond doubt. */
   readonly grazing: boolean;
+}
+
+/**
+ * Bandwidth at an SWR of an antenna matched at its resonance: as its Q predicts it, and as the sweep
+ * has it, referred to the resistance at resonance; null where the sweep ends before.
+ */
+export interface MatchedBandwidth {
+  readonly maxSwr: number;
+  readonly predictedHz: number;
+  readonly predictedU95Hz: number | null;
+  readonly measuredHz: number | null;
+  readonly measuredU95Hz: number | null;
+}
+
+/**
+ * Where the magnitude of a reactance whose sign is not known is smallest. It may be a resonance, or a
+ * near miss; nothing in the sweep tells which.
+ */
+export interface ReactanceMagnitudeMinimum {
+  readonly frequencyHz: number;
+  readonly frequencyU95Hz: number | null;
+  readonly reactanceMagnitudeOhm: number;
+  readonly resistanceOhm: number | null;
 }
 
 /** A contiguous range where SWR <= maxSwr. `lowOpen`/`highOpen`: the sweep ended before the crossing. */
@@ -50,9 +74,13 @@ export interface UsableSpan {
   readonly highOpen: boolean;
 }
 
+/** What is doubtful about a sweep, and what to do about it. */
 export interface QualityFlag {
   readonly code: string;
   readonly detail: string;
+  /** The stretch it concerns, where it is not the whole sweep. */
+  readonly lowHz?: number;
+  readonly highHz?: number;
 }
 
 /** A field that is null or empty, and why. */
@@ -77,6 +105,8 @@ export interface Summary {
   readonly minimumSwr: SwrMinimum | null;
   readonly swrMinima: readonly SwrMinimum[];
   readonly resonances: readonly Resonance[];
+  /** With unsigned phase only: "reactance magnitude smallest at", never a resonance. */
+  readonly reactanceMagnitudeMinima: readonly ReactanceMagnitudeMinimum[];
   readonly resonanceOffsetHz: number | null;
   readonly spans: readonly UsableSpan[];
   readonly quality: {

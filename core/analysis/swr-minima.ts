@@ -1,4 +1,5 @@
 import type { Mismatch } from './mismatch.ts';
+import type { Scan } from './scan.ts';
 import { zeroBetween } from './zero.ts';
 
 /** A place where the mismatch turns, refined below the grid. */
@@ -17,20 +18,21 @@ const distinctBeyond = 1.5;
  * explain, and an end of the sweep where the mismatch still falls towards it. A flat stretch has its
  * minimum in its middle; a shelf on a slope has none.
  */
-export function mismatchMinima(mismatch: Mismatch, scan: Float64Array): readonly Turn[] {
-  const squares = Float64Array.from(scan, (f) => mismatch.at(f).square);
-  const candidates = lowPlaces(squares).map(([first, last]) =>
-    turnAt(mismatch, scan, squares, first, last),
+export function mismatchMinima(mismatch: Mismatch, scan: Scan): readonly Turn[] {
+  const { frequencyHz, square } = scan;
+  const candidates = lowPlaces(square).map(([first, last]) =>
+    turnAt(mismatch, frequencyHz, square, first, last),
   );
-  return withoutNoise(candidates, mismatch, scan, squares);
+  return withoutNoise(candidates, mismatch, scan);
 }
 
 /** The maxima of the mismatch inside the sweep. */
-export function mismatchMaxima(mismatch: Mismatch, scan: Float64Array): readonly Turn[] {
-  const negative = Float64Array.from(scan, (f) => -mismatch.at(f).square);
+export function mismatchMaxima(mismatch: Mismatch, scan: Scan): readonly Turn[] {
+  const { frequencyHz, square } = scan;
+  const negative = square.map((value) => -value);
   return lowPlaces(negative)
-    .filter(([first, last]) => first > 0 && last < scan.length - 1)
-    .map(([first, last]) => turnAt(mismatch, scan, negative, first, last));
+    .filter(([first, last]) => first > 0 && last < negative.length - 1)
+    .map(([first, last]) => turnAt(mismatch, frequencyHz, negative, first, last));
 }
 
 /** Runs of equal values that are lower than what stands on either side; an end counts as higher. */
@@ -89,16 +91,11 @@ function edgeTurn(mismatch: Mismatch, scan: Float64Array, at: number, values: Fl
 }
 
 /** Keeps of neighbouring minima only the lower one where the rise between them may be noise. */
-function withoutNoise(
-  candidates: readonly Turn[],
-  mismatch: Mismatch,
-  scan: Float64Array,
-  squares: Float64Array,
-): Turn[] {
+function withoutNoise(candidates: readonly Turn[], mismatch: Mismatch, scan: Scan): Turn[] {
   const kept: Turn[] = [];
   for (const candidate of candidates) {
     const before = kept.at(-1);
-    if (before === undefined || isDistinct(before, candidate, mismatch, scan, squares)) {
+    if (before === undefined || isDistinct(before, candidate, mismatch, scan)) {
       kept.push(candidate);
     } else if (candidate.square < before.square) {
       kept[kept.length - 1] = candidate;
@@ -107,24 +104,17 @@ function withoutNoise(
   return kept;
 }
 
-function isDistinct(
-  a: Turn,
-  b: Turn,
-  mismatch: Mismatch,
-  scan: Float64Array,
-  squares: Float64Array,
-): boolean {
+function isDistinct(a: Turn, b: Turn, mismatch: Mismatch, scan: Scan): boolean {
+  const { frequencyHz, square } = scan;
   let barrier = 0;
   let barrierHz = a.frequencyHz;
-  for (let i = 0; i < scan.length; i++) {
-    if (scan[i] > a.frequencyHz && scan[i] < b.frequencyHz && squares[i] > barrier) {
-      barrier = squares[i];
-      barrierHz = scan[i];
-    }
+  for (let i = 0; i < square.length; i++) {
+    if (frequencyHz[i] <= a.frequencyHz || frequencyHz[i] >= b.frequencyHz) continue;
+    if (square[i] > barrier) [barrier, barrierHz] = [square[i], frequencyHz[i]];
   }
   const rise = Math.sqrt(barrier) - Math.sqrt(Math.max(a.square, b.square));
   const noise = Math.max(
-    ...[a.frequencyHz, b.frequencyHz, barrierHz].map((f) => mismatch.magnitudeU95(f) ?? 0),
+    ...[a.frequencyHz, b.frequencyHz, barrierHz].map((f) => mismatch.magnitudeNoiseU95(f) ?? 0),
   );
   return rise > distinctBeyond * noise;
 }

@@ -55,6 +55,20 @@ const resonanceSchema = z
     swr_u95: halfWidth,
     q: z.number().nullable(),
     q_u95: halfWidth,
+    matched_bandwidth: z
+      .object({
+        max_swr: z.number(),
+        predicted_hz: z.number(),
+        predicted_u95_hz: halfWidth,
+        measured_hz: z.number().nullable(),
+        measured_u95_hz: halfWidth,
+      })
+      .nullable()
+      .meta({
+        id: 'MatchedBandwidth',
+        description:
+          'Bandwidth at max_swr of the antenna matched at this resonance: as Q predicts it, and as the sweep has it.',
+      }),
     grazing: z
       .boolean()
       .meta({ description: 'The reactance touches zero without a crossing beyond doubt.' }),
@@ -92,13 +106,33 @@ export const summarySchema = z
     minimum_swr: minimumSchema.nullable(),
     swr_minima: z.array(minimumSchema),
     resonances: z.array(resonanceSchema),
+    reactance_magnitude_minima: z
+      .array(
+        z.object({
+          frequency_hz: frequencySchema,
+          frequency_u95_hz: halfWidth,
+          reactance_magnitude_ohm: z.number(),
+          resistance_ohm: z.number().nullable(),
+        }),
+      )
+      .meta({
+        description:
+          'Reactance magnitude smallest at: only where the sign of the reactance is not known.',
+      }),
     resonance_offset_hz: z
       .number()
       .nullable()
       .meta({ description: 'Frequency of the SWR minimum less that of the nearest resonance.' }),
     spans: z.array(spanSchema),
     quality: z.object({
-      flags: z.array(z.object({ code: z.string(), detail: z.string() })),
+      flags: z.array(
+        z.object({
+          code: z.string(),
+          detail: z.string(),
+          low_hz: frequencySchema.optional(),
+          high_hz: frequencySchema.optional(),
+        }),
+      ),
       reflection_noise: z.number().nullable(),
     }),
     absent: z

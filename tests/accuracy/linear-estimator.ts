@@ -46,6 +46,7 @@ function resonanceAt({ at, rising }: Crossing): Resonance {
     swrU95: null,
     q: null,
     qU95: null,
+    matchedBandwidth: null,
     grazing: false,
   };
 }

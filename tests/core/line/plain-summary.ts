@@ -33,6 +33,7 @@ export function plainSummary(sweep: Sweep): Summary {
     minimumSwr: minimum,
     swrMinima: [minimum],
     resonances: resonances(sweep),
+    reactanceMagnitudeMinima: [],
     resonanceOffsetHz: null,
     spans: spans(frequencyHz, swr, 2),
     quality: { flags: [], reflectionNoise: null },
@@ -60,6 +61,7 @@ function resonances(sweep: Sweep): readonly Resonance[] {
       swrU95: 0.001,
       q: 10,
       qU95: null,
+      matchedBandwidth: null,
       grazing: false,
     });
   }

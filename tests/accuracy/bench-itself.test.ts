@@ -55,7 +55,7 @@ describe('the bench, given straight lines between points', () => {
   let scores: BenchScores;
   beforeAll(() => {
     scores = runBench({ seed: SEED, cases: 60 }, estimateLinearly);
-  });
+  }, 300_000);
 
   it('finds them wanting in every figure that interpolation and averaging could better', () => {
     const report = reportOf(scores);

@@ -9,6 +9,7 @@ import { bodyBytes, uploadedFile } from '../http/upload-body.ts';
 import { ingest } from '../ingest.ts';
 import { Problem } from '../problems.ts';
 import { basisOf, summaryText } from '../reports.ts';
+import { sampleFile } from '../sample-file.ts';
 import type { Service } from '../service.ts';
 import type { AntennaRecord, SweepFacts, SweepRecord } from '../store/port.ts';
 import { idOrKeySchema, timeInputSchema } from '../wire/common.ts';
@@ -55,7 +56,7 @@ const requestBody = {
     'The file itself, under any content type, or a form with one part `file`. What kind of file it is is told from its content.',
   required: true,
   content: {
-    'application/octet-stream': { schema: binary },
+    'application/octet-stream': { schema: binary, example: sampleFile },
     'multipart/form-data': {
       schema: { type: 'object', required: ['file'], properties: { file: binary } },
     },

@@ -1,3 +1,4 @@
+import { parabolaAt, parabolaThrough } from './parabola.ts';
 import type { Samples } from './samples.ts';
 
 /** Fewer samples, with weights, from which fits come out as from all. */
@@ -67,8 +68,8 @@ function block(samples: Samples, from: number, to: number, noise: number, out: G
     keepWhole(samples, from, to, out);
     return;
   }
-  const re = parabola(samples.re, from, to);
-  const im = parabola(samples.im, from, to);
+  const re = parabolaThrough(samples.re, from, to);
+  const im = parabolaThrough(samples.im, from, to);
   const freedom = 2 * (count - 3);
   const allowed = noise ** 2 * (freedom + scatterLimit * Math.sqrt(2 * freedom));
   const inside = re.squaresLeft + im.squaresLeft;
@@ -78,7 +79,7 @@ function block(samples: Samples, from: number, to: number, noise: number, out: G
     block(samples, middle, to, noise, out);
     return;
   }
-  const frequency = parabola(samples.frequencyHz, from, to);
+  const frequency = parabolaThrough(samples.frequencyHz, from, to);
   const node = Math.sqrt((3 * count * count - 7) / 20);
   const outer = (count * (count * count - 1)) / (24 * node * node);
   for (const place of [-1, 0, 1]) {
@@ -88,44 +89,4 @@ function block(samples: Samples, from: number, to: number, noise: number, out: G
     out.weight.push(place === 0 ? count - 2 * outer : outer);
   }
   out.squaresInside += inside;
-}
-
-/** A parabola by the orthogonal polynomials 1, t and t² - mean of t², t from the block's middle. */
-interface Parabola {
-  readonly level: number;
-  readonly slope: number;
-  readonly bend: number;
-  readonly meanSquare: number;
-  readonly squaresLeft: number;
-}
-
-function parabola(values: Float64Array, from: number, to: number): Parabola {
-  const count = to - from;
-  const meanSquare = (count * count - 1) / 12;
-  let level = 0;
-  for (let i = from; i < to; i++) level += values[i];
-  level /= count;
-  let first = 0;
-  let second = 0;
-  let squares = 0;
-  for (let i = from; i < to; i++) {
-    const t = i - from - (count - 1) / 2;
-    const value = values[i] - level;
-    first += t * value;
-    second += (t * t - meanSquare) * value;
-    squares += value * value;
-  }
-  const firstNorm = count * meanSquare;
-  const secondNorm = (count * (count * count - 1) * (count * count - 4)) / 180;
-  return {
-    level,
-    slope: first / firstNorm,
-    bend: second / secondNorm,
-    meanSquare,
-    squaresLeft: Math.max(0, squares - first ** 2 / firstNorm - second ** 2 / secondNorm),
-  };
-}
-
-function parabolaAt({ level, slope, bend, meanSquare }: Parabola, t: number): number {
-  return level + slope * t + bend * (t * t - meanSquare);
 }

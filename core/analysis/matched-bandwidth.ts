@@ -63,7 +63,8 @@ function matchedEdge(
   for (let i = start; i >= 0 && i < frequencyHz.length; i += direction) {
     if ((frequencyHz[i] - resonanceHz) * direction <= 0) continue;
     if (excessOf(re[i], im[i]) > 0) {
-      const at = zeroBetween(excessAt, inside, frequencyHz[i]);
+      const [low, high] = direction > 0 ? [inside, frequencyHz[i]] : [frequencyHz[i], inside];
+      const at = zeroBetween(excessAt, low, high);
       return { frequencyHz: at, u95Hz: edgeU95(model, at, real) };
     }
     inside = frequencyHz[i];

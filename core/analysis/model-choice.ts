@@ -44,6 +44,11 @@ const leastHopefulNoise = 1e-6;
 const exactBelow = 1e-9;
 /** Degrees that may fail to help before the search ends. */
 const patience = 3;
+/**
+ * Difference of the criterion over which a weight falls by e. The criterion itself would have 2; degrees
+ * next to each other differ so little that 8 was measured to give intervals that hold.
+ */
+const weightFall = 8;
 /** Fits whose weight beside the best one's is less than this are left out. */
 const leastWeight = 0.02;
 /** A pole nearer than a step may stand for one noisy point: it must explain so much more than noise. */
@@ -133,7 +138,11 @@ function judged(
   roughNoise: number,
 ): ChosenFits {
   const shares = scored
-    .map(({ fit, score, squares }) => ({ fit, squares, weight: Math.exp((best - score) / 2) }))
+    .map(({ fit, score, squares }) => ({
+      fit,
+      squares,
+      weight: Math.exp((best - score) / weightFall),
+    }))
     .filter(({ weight }) => weight > leastWeight);
   const total = shares.reduce((sum, { weight }) => sum + weight, 0);
   const members = shares.map(({ fit, weight }) => ({ fit, weight: weight / total }));

@@ -99,33 +99,38 @@ function slice({ frequencyHz, re, im }: Samples, from: number, to: number): Samp
 }
 
 /**
- * Between two samples: real part and imaginary part over frequency straight in the square of
- * frequency, which a network of real elements can have, and straight enough in frequency.
+ * Between two samples: a straight line, as nearly as a network of real elements can have one (the
+ * parabola in the square of frequency that meets the line in three places).
  */
 function straightLine({ frequencyHz, re, im }: Samples, form: RationalForm, i: number): ModelPiece {
   const lowHz = frequencyHz[i];
   const highHz = frequencyHz[i + 1];
   const scale = frequencyScale(lowHz, highHz);
-  const oddAt = (k: number) =>
-    frequencyHz[k] === 0 ? 0 : (im[k] * scale.centreHz) / frequencyHz[k];
-  const even = [(re[i] + re[i + 1]) / 2, (re[i + 1] - re[i]) / 2];
-  const odd = [(oddAt(i) + oddAt(i + 1)) / 2, (oddAt(i + 1) - oddAt(i)) / 2];
+  const middleHz = Math.sqrt((lowHz * lowHz + highHz * highHz) / 2);
+  const share = (middleHz - lowHz) / (highHz - lowHz);
+  const middleIm = im[i] + share * (im[i + 1] - im[i]);
+  const oddOf = (value: number, f: number) => (f === 0 ? 0 : (value * scale.centreHz) / f);
+  const even = parabola(re[i], re[i] + share * (re[i + 1] - re[i]), re[i + 1]);
+  const odd = parabola(oddOf(im[i], lowHz), oddOf(middleIm, middleHz), oddOf(im[i + 1], highHz));
   const isSquare = form === 'square';
-  const none = new Float64Array(2);
+  const none = new Float64Array(isSquare ? 0 : 3);
   const fit: RationalFit = {
     form,
-    degree: isSquare ? 1 : 3,
+    degree: isSquare ? 2 : 5,
     scale,
-    numerator: {
-      even: Float64Array.from(even),
-      odd: isSquare ? new Float64Array(0) : Float64Array.from(odd),
-    },
-    denominator: { even: Float64Array.of(1, 0), odd: isSquare ? new Float64Array(0) : none },
+    numerator: { even, odd: isSquare ? none : odd },
+    denominator: { even: Float64Array.of(1, 0, 0), odd: none },
     still: 0,
     triangle: null,
     squares: 0,
   };
   return { lowHz, highHz, members: [{ fit, weight: 1 }], noise: null, factor95: Number.NaN };
+}
+
+/** Chebyshev coefficients of the parabola with these values at -1, 0 and 1. */
+function parabola(low: number, middle: number, high: number): Float64Array {
+  const mean = (low + high) / 2;
+  return Float64Array.of((mean + middle) / 2, (high - low) / 2, (mean - middle) / 2);
 }
 
 /** The piece that stands for a frequency; beyond the ends the outermost. */

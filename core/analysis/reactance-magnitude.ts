@@ -1,11 +1,14 @@
 import { studentQuantile } from '../record/statistics/distributions.ts';
 import type { ComplexSweep } from '../sweep.ts';
+import { parabolaThrough } from './parabola.ts';
 import type { ReactanceMagnitudeMinimum } from './summary.ts';
 
 /** Points on either side of a minimum that its shape is taken from. */
 const reach = 4;
 /** A minimum must rise to so many times its own value on both sides. */
 const leastRise = 3;
+/** A V leaves so much less than a parabola does, squares for squares. */
+const clearlyLess = 0.5;
 
 /**
  * Where |X| is smallest, inside the sweep, with unsigned phase. The sides of a V are made one line by
@@ -70,7 +73,8 @@ function vertexOf(
   const count = to - from + 1;
   const zeroHz = best.meanHz - best.mean / best.slope;
   const deviation = Math.sqrt(best.squares / (count - 2));
-  const isV = deviation * leastRise < best.slope * (frequencyHz[to] - frequencyHz[from]);
+  const rounded = parabolaThrough(values, from, to + 1).squaresLeft;
+  const isV = best.squares < clearlyLess * rounded;
   if (!isV || zeroHz < frequencyHz[from] || zeroHz > frequencyHz[to]) return null;
   const spread = Math.sqrt(1 / count + (zeroHz - best.meanHz) ** 2 / best.spreadHz2);
   const u95Hz = (studentQuantile(0.975, count - 2) * deviation * spread) / best.slope;

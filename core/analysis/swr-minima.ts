@@ -35,12 +35,15 @@ export function mismatchMaxima(mismatch: Mismatch, scan: Scan): readonly Turn[] 
     .map(([first, last]) => turnAt(mismatch, frequencyHz, negative, first, last));
 }
 
+/** Squares that differ by no more than this are equal. */
+const roundingSquare = 1e-15;
+
 /** Runs of equal values that are lower than what stands on either side; an end counts as higher. */
 function lowPlaces(values: Float64Array): [first: number, last: number][] {
   const places: [number, number][] = [];
   let first = 0;
   for (let i = 1; i <= values.length; i++) {
-    if (i < values.length && values[i] === values[first]) continue;
+    if (i < values.length && Math.abs(values[i] - values[first]) <= roundingSquare) continue;
     const fallsInto = first === 0 || values[first - 1] > values[first];
     const risesAfter = i === values.length || values[i] > values[first];
     if (fallsInto && risesAfter) places.push([first, i - 1]);
@@ -63,7 +66,7 @@ function turnAt(
     const high = scan[Math.min(end, last + 1)];
     const middle = (scan[first] + scan[last]) / 2;
     const slope = (f: number) => mismatch.at(f).slope;
-    const turns = !isFlat && slope(low) > 0 !== slope(high) > 0;
+    const turns = first === last && slope(low) > 0 !== slope(high) > 0;
     return refined(mismatch, turns ? zeroBetween(slope, low, high) : middle);
   }
   return edgeTurn(mismatch, scan, first === 0 ? 0 : end, values);

@@ -1,5 +1,5 @@
 /**
- * The zero of a function between two frequencies at which it has different signs, by bisection
+ * The zero of a function between two frequencies, ascending, at which it has different signs, by bisection
  * with a secant first (C. J. F. Ridders, IEEE Trans. Circuits and Systems 26(11), 1979). To the last
  * bits; `low` itself where the signs do not differ.
  */

@@ -11,10 +11,15 @@ interface Measured {
   readonly deviationSteps: number;
 }
 
-function measured(scores: readonly CaseScore[], quantity: Quantity): Measured[] {
+function measured(
+  scores: readonly CaseScore[],
+  quantity: Quantity,
+  which: 'noisy' | 'rounded_only' = 'noisy',
+): Measured[] {
   return comparisonsOf(scores, quantity).flatMap((comparison) => {
     const { yardstick, bench, error, truth } = comparison;
-    if (yardstick === null || yardstick.fitted === null || bench.noise === 0) return [];
+    if (yardstick === null || yardstick.fitted === null) return [];
+    if (bench.noise > 0 !== (which === 'noisy')) return [];
     const { deviation, fitted } = yardstick;
     return [
       {
@@ -27,9 +32,14 @@ function measured(scores: readonly CaseScore[], quantity: Quantity): Measured[] 
   });
 }
 
-/** RMS error of the estimates over that of the model fits, on the cases with noise. */
+/**
+ * RMS error of the estimates over that of the model fits, on the cases with noise. Where there is
+ * rounding alone the errors of neighbouring points hang together, so that the deviation that the fit
+ * states means little; those cases are listed apart.
+ */
 export function ratioFigure(scores: readonly CaseScore[], quantity: Quantity): BenchFigure {
   const all = measured(scores, quantity);
+  const roundedOnly = measured(scores, quantity, 'rounded_only');
   const ratioOf = (some: readonly Measured[]) =>
     rms(some.map((m) => m.estimate)) / rms(some.map((m) => m.fit));
   const inSteps = (some: readonly Measured[]) =>
@@ -49,6 +59,8 @@ export function ratioFigure(scores: readonly CaseScore[], quantity: Quantity): B
       median_ratio:
         median(all.map((m) => Math.abs(m.estimate))) / median(all.map((m) => Math.abs(m.fit))),
       plain_steps: inSteps(all),
+      rounded_only: ratioOf(roundedOnly),
+      rounded_only_trimmed: ratioOf(trimmed(roundedOnly)),
       by_family: byFamily(scores, (some) => ratioOf(measured(some, quantity))),
       by_family_trimmed: byFamily(scores, (some) => ratioOf(trimmed(measured(some, quantity)))),
       by_noise: {

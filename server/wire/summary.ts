@@ -2,6 +2,7 @@ import { z } from 'zod';
 import type { Summary } from '../../core/analysis/summary.ts';
 import { toSnakeCase } from './case.ts';
 import { frequencySchema, idSchema } from './common.ts';
+import { rounded } from './rounding.ts';
 
 export const cautionSchema = z
   .object({ code: z.string(), detail: z.string() })
@@ -154,5 +155,5 @@ export function summaryToWire(
   { sweepId, antennaId }: SweepIdentity,
   summary: Summary,
 ): z.output<typeof summarySchema> {
-  return { sweep_id: sweepId, antenna_id: antennaId, ...toSnakeCase(summary) };
+  return { sweep_id: sweepId, antenna_id: antennaId, ...rounded(toSnakeCase(summary)) };
 }

@@ -5,6 +5,7 @@ import type { UsableReport } from '../../core/bands/usable-report.ts';
 import { toSnakeCase } from './case.ts';
 import { frequencySchema, idSchema } from './common.ts';
 import { familySchema, statusSchema } from './plan.ts';
+import { rounded } from './rounding.ts';
 import { cautionSchema, planeSchema, type SweepIdentity } from './summary.ts';
 
 const rangeSchema = z.object({ low_hz: frequencySchema, high_hz: frequencySchema });
@@ -86,6 +87,6 @@ export function usableToWire(
     plane: basis.plane,
     reference_ohm: basis.referenceOhm,
     design_bands: [...basis.designBands],
-    ...toSnakeCase(report),
+    ...rounded(toSnakeCase(report)),
   };
 }

@@ -76,7 +76,7 @@ export function makeSweep(candidate: Sweep): Result<Sweep, SweepError> {
   const index = firstBadFrequency(frequencyHz);
   if (index >= 0) return fail(frequencyError(frequencyHz, index));
   for (const part of parts) {
-    const at = part.findIndex((value) => !Number.isFinite(value));
+    const at = firstNotFinite(part);
     if (at >= 0) return fail(notFinite(at));
   }
   const magnitudeLike =
@@ -94,6 +94,11 @@ export function makeSweep(candidate: Sweep): Result<Sweep, SweepError> {
     });
   }
   return ok(Object.freeze(candidate));
+}
+
+function firstNotFinite(values: Float64Array): number {
+  for (let i = 0; i < values.length; i++) if (!Number.isFinite(values[i])) return i;
+  return -1;
 }
 
 function firstBadFrequency(frequencyHz: Float64Array): number {

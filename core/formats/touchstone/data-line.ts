@@ -1,11 +1,13 @@
 import { ok, type Result } from '../../result.ts';
-import { DecimalScanner, parseDecimal } from '../decimal.ts';
+import { type DecimalScanner, parseDecimal } from '../decimal.ts';
 import type { Assumption, ReadError } from '../read-types.ts';
-import { refuse } from './faults.ts';
+import { type Place, refuse } from './faults.ts';
 import type { NumberTable } from './number-table.ts';
 
-const space = 32;
 const tab = 9;
+const lineFeed = 10;
+const carriageReturn = 13;
+const space = 32;
 const exclamation = 33;
 
 /** What was tolerated in the numbers of a file, with the first line it was met in. */
@@ -25,53 +27,73 @@ export class DataLineReader {
   private readonly table: NumberTable;
   private readonly frequencyShift: number;
   readonly tolerated: Tolerated = nothingTolerated();
+  /** Where the first line that was not read begins, and how many lines lie before it. */
+  next = 0;
+  linesBefore = 0;
 
-  constructor(text: string, table: NumberTable, frequencyShift: number) {
-    this.scanner = new DecimalScanner(text);
+  constructor(scanner: DecimalScanner, table: NumberTable, frequencyShift: number) {
+    this.scanner = scanner;
     this.table = table;
     this.frequencyShift = frequencyShift;
   }
 
-  /** Reads text[start, end) as one row; null on success. */
-  read(start: number, end: number, line: number): Result<never, ReadError> | null {
+  /**
+   * Reads the line that begins at `start` as one row, and so the lines behind it as long as they
+   * begin with a number; sets `next` and `linesBefore`. Null on success.
+   */
+  read(start: number, firstLine: number): Result<never, ReadError> | null {
+    const { table } = this;
+    const { codes } = this.scanner;
+    let line = firstLine;
+    let lineStart = start;
+    do {
+      table.startRow(line, lineStart);
+      const fault = this.readRow(lineStart, line);
+      if (fault !== null) return fault;
+      lineStart = this.next;
+      line += 1;
+    } while (beginsNumber(codes[lineStart]));
+    this.linesBefore = line - 1;
+    return null;
+  }
+
+  private readRow(start: number, line: number): Result<never, ReadError> | null {
     const { scanner, table } = this;
-    const { text } = scanner;
-    table.startRow(line, start);
+    const { codes } = scanner;
     let shift = this.frequencyShift;
     let at = start;
-    while (at < end) {
-      const code = text.charCodeAt(at);
+    for (;;) {
+      const code = codes[at];
       if (code === space || code === tab) {
         at += 1;
         continue;
       }
-      if (code === exclamation) break;
+      if (endsToken(code)) break;
       const value = scanner.read(at, shift);
-      const after = scanner.end < end ? text.charCodeAt(scanner.end) : space;
-      if (!Number.isNaN(value) && (after === space || after === tab || after === exclamation)) {
-        table.push(value);
-        at = scanner.end;
-      } else {
-        const tokenEnd = endOfToken(text, at, end);
-        const odd = this.readOddToken(text.slice(at, tokenEnd), shift, line, at - start + 1);
+      if (Number.isNaN(value) || !endsToken(codes[scanner.end])) {
+        const odd = this.readOddToken(at, shift, { line, column: at - start + 1 });
         if (!odd.ok) return odd;
         table.push(odd.value);
-        at = tokenEnd;
+      } else {
+        table.push(value);
       }
+      at = scanner.end;
       shift = 0;
     }
+    this.next = behindLine(codes, at);
     return null;
   }
 
   /** A token that is no plain number: what is meant beyond doubt is taken, all else refused. */
   private readOddToken(
-    token: string,
+    start: number,
     shift: number,
-    line: number,
-    column: number,
+    place: Required<Place>,
   ): Result<number, ReadError> {
-    const { tolerated } = this;
-    const place = { line, column };
+    const { tolerated, scanner } = this;
+    const { line, column } = place;
+    scanner.end = endOfToken(scanner.codes, start);
+    const token = scanner.text.slice(start, scanner.end);
     if (/^[+-]?(?:\d+(?:\.\d*)?|\.\d+)[dD][+-]?\d+$/.test(token)) {
       tolerated.fortranLine ??= line;
       return ok(parseDecimal(token.replace(/[dD]/, 'e'), shift));
@@ -96,13 +118,33 @@ export class DataLineReader {
   }
 }
 
-function endOfToken(text: string, start: number, end: number): number {
+/** Blanks, line ends and the mark of a comment. */
+function endsToken(code: number): boolean {
+  return (
+    code <= exclamation &&
+    (code === space ||
+      code === lineFeed ||
+      code === carriageReturn ||
+      code === tab ||
+      code === exclamation)
+  );
+}
+
+/** A digit, a sign or a point. */
+function beginsNumber(code: number): boolean {
+  return (code >= 48 && code <= 57) || code === 45 || code === 46 || code === 43;
+}
+
+/** Where the line behind that of `at` begins. */
+function behindLine(codes: Uint8Array, start: number): number {
   let at = start;
-  while (at < end) {
-    const code = text.charCodeAt(at);
-    if (code === space || code === tab || code === exclamation) break;
-    at += 1;
-  }
+  while (codes[at] !== lineFeed && codes[at] !== carriageReturn) at += 1;
+  return at + (codes[at] === carriageReturn && codes[at + 1] === lineFeed ? 2 : 1);
+}
+
+function endOfToken(codes: Uint8Array, start: number): number {
+  let at = start;
+  while (!endsToken(codes[at])) at += 1;
   return at;
 }
 

@@ -24,6 +24,12 @@ export class LineWalker {
     return true;
   }
 
+  /** Tells that lines were read elsewhere: the next to move to begins at `next`. */
+  skipTo(next: number, linesBefore: number): void {
+    this.next = next;
+    this.number = linesBefore;
+  }
+
   /** Place of the first character that is no blank; `end` if there is none. */
   firstInk(): number {
     const { text } = this;

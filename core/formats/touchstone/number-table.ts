@@ -1,12 +1,21 @@
 /** The numbers of a data section, and where each line of them begins. Grows as it is filled. */
 export class NumberTable {
-  values = new Float64Array(1024);
+  values: Float64Array;
   valueCount = 0;
   /** For each line of numbers: index of its first value, line in the file, place in the text. */
-  firstValue = new Int32Array(256);
-  lineNumber = new Int32Array(256);
-  textStart = new Int32Array(256);
+  firstValue: Int32Array;
+  lineNumber: Int32Array;
+  textStart: Int32Array;
   rowCount = 0;
+
+  /** With room for what a text of this length holds if its numbers and lines are of usual size. */
+  constructor(textLength: number) {
+    const rows = 16 + (textLength >> 4);
+    this.values = new Float64Array(3 * rows);
+    this.firstValue = new Int32Array(rows);
+    this.lineNumber = new Int32Array(rows);
+    this.textStart = new Int32Array(rows);
+  }
 
   startRow(lineNumber: number, textStart: number): void {
     if (this.rowCount === this.firstValue.length) {
@@ -28,6 +37,14 @@ export class NumberTable {
     }
     this.values[this.valueCount] = value;
     this.valueCount += 1;
+  }
+
+  /** How many numbers every row has; null where they differ. */
+  commonWidth(): number | null {
+    const { firstValue, rowCount } = this;
+    const width = this.widthOf(0);
+    for (let row = 1; row < rowCount; row++) if (firstValue[row] !== row * width) return null;
+    return this.valueCount === rowCount * width ? width : null;
   }
 
   /** How many numbers a row has. */

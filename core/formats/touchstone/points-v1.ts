@@ -1,5 +1,5 @@
 import { ok, type Result } from '../../result.ts';
-import { DecimalScanner } from '../decimal.ts';
+import type { DecimalScanner } from '../decimal.ts';
 import type { Assumption, ReadError } from '../read-types.ts';
 import { refuse } from './faults.ts';
 import type { NumberTable } from './number-table.ts';
@@ -15,8 +15,13 @@ const forwardWidth = 5;
  * point, rows with an even count go on with it. Behind the points of a two-port file may stand rows
  * of five: noise parameters, which begin at or below the last frequency and are passed over.
  */
-export function pointsOfVersion1(text: string, table: NumberTable): ReadPoints {
-  const builder = new Version1Points(text, table);
+export function pointsOfVersion1(scanner: DecimalScanner, table: NumberTable): ReadPoints {
+  const width = table.commonWidth();
+  if (width === onePortWidth || width === twoPortWidth) {
+    const { firstValue, lineNumber, rowCount } = table;
+    return pointsOfWidth(width, firstValue, lineNumber, rowCount, []);
+  }
+  const builder = new Version1Points(scanner, table);
   return builder.build();
 }
 
@@ -29,8 +34,8 @@ class Version1Points {
   private width = 0;
   private readonly assumptions: Assumption[] = [];
 
-  constructor(text: string, table: NumberTable) {
-    this.scanner = new DecimalScanner(text);
+  constructor(scanner: DecimalScanner, table: NumberTable) {
+    this.scanner = scanner;
     this.table = table;
     this.start = new Int32Array(table.rowCount);
     this.line = new Int32Array(table.rowCount);
@@ -116,23 +121,32 @@ class Version1Points {
 
   private finish(): ReadPoints {
     const { start, line, count, width, assumptions } = this;
-    const common = { start, line, count, assumptions, at11: 1 };
-    if (width === onePortWidth) {
-      return ok({ ...common, ports: 1, at12: null, at21: null, at22: null });
-    }
-    if (width === twoPortWidth) return ok({ ...common, ports: 2, at21: 3, at12: 5, at22: 7 });
-    const detail =
-      'Each line has five numbers: the first pair was taken as S11, the second as S21.';
-    const forward: Assumption = { code: 'forward_only', detail, line: line[0] };
-    return ok({
-      ...common,
-      assumptions: [...assumptions, forward],
-      ports: 2,
-      at12: null,
-      at21: 3,
-      at22: null,
-    });
+    return pointsOfWidth(width, start, line, count, assumptions);
   }
+}
+
+function pointsOfWidth(
+  width: number,
+  start: Int32Array,
+  line: Int32Array,
+  count: number,
+  assumptions: readonly Assumption[],
+): ReadPoints {
+  const common = { start, line, count, assumptions, at11: 1 };
+  if (width === onePortWidth) {
+    return ok({ ...common, ports: 1, at12: null, at21: null, at22: null });
+  }
+  if (width === twoPortWidth) return ok({ ...common, ports: 2, at21: 3, at12: 5, at22: 7 });
+  const detail = 'Each line has five numbers: the first pair was taken as S11, the second as S21.';
+  const forward: Assumption = { code: 'forward_only', detail, line: line[0] };
+  return ok({
+    ...common,
+    assumptions: [...assumptions, forward],
+    ports: 2,
+    at12: null,
+    at21: 3,
+    at22: null,
+  });
 }
 
 /** The first number of a row as it stands in the text. */

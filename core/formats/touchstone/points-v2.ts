@@ -1,5 +1,5 @@
 import { ok } from '../../result.ts';
-import { DecimalScanner } from '../decimal.ts';
+import type { DecimalScanner } from '../decimal.ts';
 import type { Assumption } from '../read-types.ts';
 import { refuse } from './faults.ts';
 import type { Keywords } from './keywords.ts';
@@ -11,7 +11,11 @@ import { unscaledFirst } from './points-v1.ts';
  * Makes points of the numbers behind `[Network Data]`: counted out, whatever the lines, but each
  * frequency must be the first number of its line.
  */
-export function pointsOfVersion2(text: string, table: NumberTable, keywords: Keywords): ReadPoints {
+export function pointsOfVersion2(
+  scanner: DecimalScanner,
+  table: NumberTable,
+  keywords: Keywords,
+): ReadPoints {
   const { ports } = keywords;
   if (ports === null) {
     const remedy = 'Put `[Number of Ports]` directly after the option line.';
@@ -29,7 +33,6 @@ export function pointsOfVersion2(text: string, table: NumberTable, keywords: Key
   const count = table.valueCount / width;
   const start = new Int32Array(count);
   const line = new Int32Array(count);
-  const scanner = new DecimalScanner(text);
   let found = 0;
   for (let row = 0; row < table.rowCount; row++) {
     const first = table.firstValue[row];

@@ -32,9 +32,11 @@ export function readTouchstone(
 ): Result<ReadSweep, ReadError> {
   const sections = readSections(text, options.optionLine);
   if (!sections.ok) return sections;
-  const { keywords, network } = sections.value;
+  const { keywords, network, scanner } = sections.value;
   const points =
-    keywords === null ? pointsOfVersion1(text, network) : pointsOfVersion2(text, network, keywords);
+    keywords === null
+      ? pointsOfVersion1(scanner, network)
+      : pointsOfVersion2(scanner, network, keywords);
   if (!points.ok) return points;
   const { count } = points.value;
   if (count > options.limits.maxPoints) {
@@ -199,9 +201,9 @@ function readReflections(
       });
     }
     if (option.format === 'MA' && values[at + pair] < 0) foldedLine ??= line[i];
-    const [re, im] = isPlain
-      ? [values[at + pair], values[at + pair + 1]]
-      : reflectionAt(values, at, points, option, normalisation);
+    let re = values[at + pair];
+    let im = values[at + pair + 1];
+    if (!isPlain) [re, im] = reflectionAt(values, at, points, option, normalisation);
     if (!(Number.isFinite(f) && Number.isFinite(re) && Number.isFinite(im))) continue;
     frequencyHz[kept] = f;
     reflectionRe[kept] = re;

@@ -1,4 +1,5 @@
 import { ok, type Result } from '../../result.ts';
+import { DecimalScanner } from '../decimal.ts';
 import type { Assumption, ReadError } from '../read-types.ts';
 import { DataLineReader, type Tolerated } from './data-line.ts';
 import { refuse } from './faults.ts';
@@ -12,6 +13,8 @@ export interface Sections {
   /** Null without a `[Version]`. */
   readonly keywords: Keywords | null;
   readonly option: OptionLine;
+  /** Over the text of the file, for second looks at its numbers. */
+  readonly scanner: DecimalScanner;
   readonly network: NumberTable;
   readonly tolerated: Tolerated;
   readonly assumptions: readonly Assumption[];
@@ -31,9 +34,10 @@ export function readSections(text: string, givenOption?: string): Result<Section
 class SectionReader {
   private readonly text: string;
   private readonly walker: LineWalker;
+  private readonly scanner: DecimalScanner;
   private readonly givenOption: string | undefined;
   private readonly assumptions: Assumption[] = [];
-  private readonly network = new NumberTable();
+  private readonly network: NumberTable;
   private keywords: Keywords | null = null;
   private option: OptionLine | null = null;
   private optionText = '';
@@ -42,6 +46,8 @@ class SectionReader {
   constructor(text: string, givenOption: string | undefined) {
     this.text = text;
     this.walker = new LineWalker(text);
+    this.scanner = new DecimalScanner(text);
+    this.network = new NumberTable(text.length);
     this.givenOption = givenOption;
   }
 
@@ -95,7 +101,7 @@ class SectionReader {
     this.option = option;
     this.optionText = content;
     this.assumptions.push(...assumptions);
-    this.numbers = new DataLineReader(this.text, this.network, option.frequencyShift);
+    this.numbers = new DataLineReader(this.scanner, this.network, option.frequencyShift);
   }
 
   private passSecondOption(content: string, line: number): null {
@@ -145,7 +151,14 @@ class SectionReader {
       const given = this.takeGivenOption(line);
       if (given !== null) return given;
     }
-    return this.numbers?.read(walker.start, walker.end, line) ?? null;
+    return this.numbers === null ? null : this.readRows(this.numbers);
+  }
+
+  private readRows(numbers: DataLineReader): Result<never, ReadError> | null {
+    const { walker } = this;
+    const fault = numbers.read(walker.start, walker.number);
+    walker.skipTo(numbers.next, numbers.linesBefore);
+    return fault;
   }
 
   private takeGivenOption(line: number): Result<never, ReadError> | null {
@@ -186,7 +199,14 @@ class SectionReader {
       const detail = 'The file does not close with `[End]`; it was taken as whole.';
       this.assumptions.push({ code: 'end_missing', detail, line: this.walker.number });
     }
-    return ok({ keywords, option, network, tolerated, assumptions: this.assumptions });
+    return ok({
+      keywords,
+      option,
+      scanner: this.scanner,
+      network,
+      tolerated,
+      assumptions: this.assumptions,
+    });
   }
 }
 

@@ -49,6 +49,8 @@ const patience = 3;
  * next to each other differ so little that 8 was measured to give intervals that hold.
  */
 const weightFall = 8;
+/** A fit that will not come within so much of the best one's criterion is not worth perfecting. */
+const worthPerfecting = 8;
 /** Fits whose weight beside the best one's is less than this are left out. */
 const leastWeight = 0.02;
 /** A pole nearer than a step may stand for one noisy point: it must explain so much more than noise. */
@@ -89,7 +91,7 @@ export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | n
   for (let degree = 0; degree <= highestDegree && failures < patience; degree++) {
     if (unknownsOf(degree) + 2 > numbers) break;
     const wanted = Number.isFinite(best)
-      ? squaresFor(best + 2 * Math.log(1 / leastWeight), degree, numbers)
+      ? squaresFor(best + worthPerfecting, degree, numbers)
       : Number.POSITIVE_INFINITY;
     const fit = fitRational(
       weighed,
@@ -106,7 +108,7 @@ export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | n
     const squares = fit.squares + compressed.squaresInside;
     let score = scoreOf(squares, degree, numbers);
     if (
-      score < best + 2 * Math.log(1 / leastWeight) &&
+      score < best + weightFall * Math.log(1 / leastWeight) &&
       sharpestPole(fit, weighed.frequencyHz, stepHz) > 1
     )
       score += sharpPolePenalty;

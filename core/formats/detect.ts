@@ -1,5 +1,6 @@
 import { fail, ok, type Result } from '../result.ts';
 import { parseDecimal } from './decimal.ts';
+import { saysNoNumber } from './delimited/cells.ts';
 import type { FileFormat, ReadError } from './read-types.ts';
 import { LineWalker } from './touchstone/file-lines.ts';
 
@@ -30,7 +31,7 @@ function unknownKind(detail: string): ReadError {
 }
 
 /** How far into a text control characters are looked for. */
-const inspected = 4096;
+const inspected = 1024;
 
 /**
  * Tells the kind of a decoded text from its content alone: Touchstone by its option line or
@@ -140,19 +141,14 @@ function hasRowOfNumbers(text: string): boolean {
     const at = walker.firstInk();
     if (at === walker.end) continue;
     const line = text.slice(at, Math.min(walker.end, at + longestRow));
-    if (/\d/.test(line) && numbersIn(line) >= 2) return true;
+    if (/\d/.test(line) && isRowOfNumbers(line)) return true;
   }
   return false;
 }
 
-/** How many numbers a line has between delimiters of any kind, a decimal comma allowed. */
-function numbersIn(line: string): number {
-  const cells = line.split(/[;\t ]+|,(?=[ \t])/).flatMap((cell) => {
-    return Number.isNaN(parseDecimal(cell.replace(',', '.'))) ? cell.split(',') : [cell];
-  });
-  return cells.filter((cell) => !Number.isNaN(parseDecimal(bare(cell)))).length;
-}
-
-function bare(cell: string): string {
-  return cell.replaceAll('"', '').replace(',', '.').replace(/:1$/, '').trim();
+/** Whether a line has a number and another beside it, or a word for the lack of one. */
+function isRowOfNumbers(line: string): boolean {
+  const cells = line.replaceAll('"', ' ').split(/[;,:\t ]+/);
+  const numbers = cells.filter((cell) => !Number.isNaN(parseDecimal(cell))).length;
+  return numbers >= 2 || (numbers === 1 && cells.some((cell) => cell !== '' && saysNoNumber(cell)));
 }

@@ -77,11 +77,11 @@ export class Recomputation {
     return { quantity, ...tally, isTelling };
   }
 
-  /** Whether print rounding of the two columns can explain that they contradict in a row. */
+  /** Whether a step of the last digit (numbers may be cut off) explains a contradiction in a row. */
   isRounding(row: number, referenceOhm: number): boolean {
     const convert = converterOf(this.recipe);
     const out = new Float64Array(2);
-    for (const [first, second] of this.cornersOf()(row)) {
+    for (const [first, second] of this.cornersOf(1)(row)) {
       convert(first, second, referenceOhm, out);
       if (!Number.isNaN(out[1])) return true;
     }
@@ -91,7 +91,7 @@ export class Recomputation {
   /** Least, middle and greatest value of a quantity, given the rounding of what it is made of. */
   private spreadOf(quantity: Quantity, referenceOhm: number) {
     const convert = converterOf(this.recipe);
-    const corners = this.cornersOf();
+    const corners = this.cornersOf(0.5);
     const out = new Float64Array(2);
     const isAngle = quantity.includes('angle');
     return (row: number): { centre: number; low: number; high: number } => {
@@ -111,18 +111,18 @@ export class Recomputation {
     };
   }
 
-  /** The values of the recipe's columns in a row: as printed first, then half a step to each side. */
-  private cornersOf(): (row: number) => readonly (readonly [number, number])[] {
+  /** The values of the recipe's columns in a row: as printed first, then some steps to each side. */
+  private cornersOf(steps: number): (row: number) => readonly (readonly [number, number])[] {
     const { from } = this.recipe;
     const [first, second] = from.map((quantity) => this.valuesOf(quantity));
     const [firstStep, secondStep] = from.map((quantity) => this.stepsOf(quantity));
     if (second === undefined) {
-      return (row) => [0, -1, 1].map((side) => [first[row] + (side * firstStep[row]) / 2, 0]);
+      return (row) => [0, -1, 1].map((side) => [first[row] + side * steps * firstStep[row], 0]);
     }
     return (row) =>
       sides.map(([a, b]) => [
-        first[row] + (a * firstStep[row]) / 2,
-        second[row] + (b * secondStep[row]) / 2,
+        first[row] + a * steps * firstStep[row],
+        second[row] + b * steps * secondStep[row],
       ]);
   }
 

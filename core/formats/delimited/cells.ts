@@ -37,7 +37,7 @@ function isBlank(code: number): boolean {
 }
 
 const noNumber =
-  /^(?:-{1,6}|\u2013|\u2014|[+-]?(?:nan|inf|infinity|\u221e)|n\/a|null|[+-]?1\.#(?:ind|inf|qnan|snan)\d{0,4})$/i;
+  /^(?:-{1,6}|\u2013|\u2014|[+-]?(?:nan|inf|infinity|\u221e)|n\/a|null|[+-]?1.#(?:ind|inf|qnan|snan)\d{0,4})$/i;
 const censored = /^[<>\u2264\u2265]=? ?[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:e[+-]?\d+)?(?: ?: ?1)?$/i;
 
 /**
@@ -61,7 +61,25 @@ export function ratioIn(cell: string): number {
   return first === 1 ? second : Number.NaN;
 }
 
+/** Whether a cell is a number whose exponent stands behind D. */
+export function isFortranNumber(cell: string): boolean {
+  return cell.length <= 64 && /^[+-]?(?:\d+\.?\d*|\.\d+)[dD][+-]?\d+$/.test(cell);
+}
+
 /** Whether a cell could stand in a column of numbers. */
 export function looksNumeric(cell: string): boolean {
-  return !Number.isNaN(parseDecimal(cell)) || !Number.isNaN(ratioIn(cell));
+  return !Number.isNaN(parseDecimal(cell)) || !Number.isNaN(ratioIn(cell)) || isFortranNumber(cell);
+}
+
+/** Whether a cell sets out to be a number, even if it fails. */
+export function beginsNumeric(cell: string): boolean {
+  return /^[+-]?\.?\d/.test(cell);
+}
+
+/**
+ * Writes decimal commas as points, and points as a character that no number has: a file has one
+ * decimal mark, and a second one in it is a fault to be found. Places do not change.
+ */
+export function commasToPoints(text: string): string {
+  return text.replaceAll('.', '\u0001').replaceAll(',', '.');
 }

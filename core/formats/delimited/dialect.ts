@@ -2,7 +2,7 @@ import { ok, type Result } from '../../result.ts';
 import type { ReadError } from '../read-types.ts';
 import { refuse } from '../touchstone/faults.ts';
 import { LineWalker } from '../touchstone/file-lines.ts';
-import { cellsOf, isCommentAt, looksNumeric, saysNoNumber } from './cells.ts';
+import { cellsOf, commasToPoints, isCommentAt, looksNumeric, saysNoNumber } from './cells.ts';
 import type { DecimalMark, Delimiter } from './mapping.ts';
 import { unquote } from './unquoted.ts';
 
@@ -15,8 +15,8 @@ export interface Dialect {
 
 type Told = { readonly [Part in 'delimiter' | 'decimal']: Dialect[Part] | null };
 
-const sampleHead = 40;
-const sampleMiddle = 40;
+const sampleHead = 20;
+const sampleMiddle = 20;
 const longestSampled = 2000;
 
 const delimiters: readonly Delimiter[] = ['semicolon', 'tab', 'comma', 'blanks'];
@@ -37,23 +37,32 @@ export function findDialect(text: string, told: Told): Result<Dialect, ReadError
   }
   const sample = sampleOf(text);
   const possible = candidates(sample, { delimiter, decimal: told.decimal }, hasQuotes);
+  const [only] = possible;
+  if (only !== undefined && possible.length === 1) return ok(settled(only, sample, text, told));
   const scored = possible
     .map((dialect) => ({ dialect, score: scoreOf(sample, dialect) }))
     .filter(({ score }) => score > 0)
     .sort((a, b) => b.score - a.score);
-  const [best, second] = scored;
+  const [best] = scored;
   if (best === undefined) return noRows();
   const rival = scored.find(
     ({ dialect, score }) =>
       dialect.delimiter !== best.dialect.delimiter && score > tooClose * best.score,
   );
   if (rival !== undefined) return ambiguous(best.dialect, rival.dialect);
-  const isDecimalOpen =
-    second?.dialect.delimiter === best.dialect.delimiter && second.score === best.score;
-  if (!isDecimalOpen) return ok(best.dialect);
-  // No sampled number has a fraction: the rest of the text decides, and if it has none, none matters.
-  const decimal = text.includes(',') && !/\d\.\d/.test(text) ? 'comma' : 'point';
-  return ok({ ...best.dialect, decimal });
+  return ok(settled(best.dialect, sample, text, told));
+}
+
+/** Where no sampled number has a fraction the rest of the text decides; if none has, none matters. */
+function settled(
+  dialect: Dialect,
+  sample: readonly string[],
+  text: string,
+  { decimal }: Told,
+): Dialect {
+  const isOpen = decimal === null && dialect.delimiter !== 'comma';
+  if (!isOpen || sample.some((line) => /\d[.,]\d/.test(line))) return dialect;
+  return { ...dialect, decimal: text.includes(',') && !/\d\.\d/.test(text) ? 'comma' : 'point' };
 }
 
 /** A first line `sep=;`, which spreadsheets write and obey. */
@@ -144,14 +153,15 @@ export function sampleRows(text: string, dialect: Dialect): readonly string[][] 
 /** The cells of lines under a dialect, decimals written with a point. */
 function rowsOf(lines: readonly string[], dialect: Dialect): readonly string[][] {
   const { delimiter, decimal, hasQuotes } = dialect;
-  const plain = hasQuotes && lines.some((line) => line.includes('"'));
-  const unquoted = plain ? unquote(lines.join('\n'), delimiter) : null;
-  if (unquoted !== null && !unquoted.ok) return [];
-  const rows = unquoted === null ? lines : unquoted.value.split('\n');
-  const between = unquoted === null ? delimiter : 'tab';
-  const cells = rows.map((line) => cellsOf(line, between));
+  const isQuoted = hasQuotes && lines.some((line) => line.includes('"'));
+  const unquoted = isQuoted ? unquote(lines.join('\n'), delimiter) : null;
+  // A sample may end inside a quoted cell: then the quotes are passed over.
+  const cells =
+    unquoted?.ok === true
+      ? unquoted.value.split('\n').map((line) => cellsOf(line, 'tab'))
+      : lines.map((line) => cellsOf(line.replaceAll('"', ''), delimiter));
   if (decimal === 'point') return cells;
-  return cells.map((row) => row.map((cell) => cell.replaceAll(',', '.')));
+  return cells.map((row) => row.map(commasToPoints));
 }
 
 function noRows(): Result<never, ReadError> {

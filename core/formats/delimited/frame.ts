@@ -2,7 +2,7 @@ import { ok, type Result } from '../../result.ts';
 import type { ReadError } from '../read-types.ts';
 import { refuse } from '../touchstone/faults.ts';
 import { LineWalker } from '../touchstone/file-lines.ts';
-import { cellsOf, isCommentAt, looksNumeric, saysNoNumber } from './cells.ts';
+import { beginsNumeric, cellsOf, isCommentAt, looksNumeric, saysNoNumber } from './cells.ts';
 import type { ColumnMapping, MappedColumn } from './mapping.ts';
 import type { TableText } from './table-text.ts';
 
@@ -31,6 +31,9 @@ export interface PlacedColumn extends MappedColumn {
 export interface PlacedFrame extends Frame {
   readonly columns: readonly PlacedColumn[];
 }
+
+/** A line of names may be followed by one of units and some comments. */
+const mostHeadersLooked = 5;
 
 /** Lines kept from before the rows: enough for every header, and an end to hostile text. */
 const mostHeadLines = 1000;
@@ -94,11 +97,13 @@ export function frameByMapping(
   for (let cells = reader.next(); cells !== null; cells = reader.next()) {
     const at = { line: reader.walker.number };
     if (columns === null) {
-      if (isAllNumbers(cells)) return headerNotFound(mapping, reader.head, at.line);
-      reader.pass();
       const placed = placeByHeader(mapping, reader.head);
       if (!placed.ok) return placed;
       columns = placed.value;
+    }
+    if (columns === null) {
+      if (isAllNumbers(cells)) return headerNotFound(mapping, reader.head, at.line);
+      reader.pass();
       continue;
     }
     const width = widthFor(mapping, columns, cells);
@@ -122,13 +127,12 @@ function placeByNumber({ columns }: ColumnMapping): readonly PlacedColumn[] | nu
   return placed;
 }
 
-/** Places the header texts in the last head line; null if not all of them stand there. */
+/** Places the header texts in the last line of the head; null if not all of them stand there. */
 function placeByHeader(
   { columns }: ColumnMapping,
   head: readonly HeadLine[],
 ): Result<readonly PlacedColumn[] | null, ReadError> {
-  // A header may also stand behind a comment mark, on the line before.
-  for (const { cells, line } of head.slice(-2)) {
+  for (const { cells, line } of head.slice(-mostHeadersLooked)) {
     const placed: PlacedColumn[] = [];
     for (const column of columns) {
       const { address } = column;
@@ -185,9 +189,16 @@ function widthFor(
   return cells.length === width || isTrailing ? width : null;
 }
 
+/**
+ * Whether a line is a row: its frequency is a number, or sets out to be one, or is missing beside
+ * numbers. A faulty first row must be refused, not taken for a line of names.
+ */
 function isRow(cells: readonly string[], columns: readonly PlacedColumn[]): boolean {
-  const frequency = columns.find(({ quantity }) => quantity === 'frequency');
-  return frequency !== undefined && looksNumeric(cells[frequency.address - 1]);
+  const [frequency = ''] = columns.flatMap(({ quantity, address }) =>
+    quantity === 'frequency' ? [cells[address - 1]] : [],
+  );
+  if (beginsNumeric(frequency)) return true;
+  return saysNoNumber(frequency) && columns.some(({ address }) => looksNumeric(cells[address - 1]));
 }
 
 function isAllNumbers(cells: readonly string[]): boolean {
@@ -226,15 +237,20 @@ export function frameByNumbers(
   });
   const reader = new HeadReader(table);
   for (let cells = reader.next(); cells !== null; cells = reader.next()) {
-    const isWide = cells.length === width;
-    const row = cells;
-    if (isWide && row.some(looksNumeric) && numeric.every((i) => isNumberOrNothing(row[i]))) {
-      const isTrailing = row[width - 1] === '' && fitting.every((one) => one[width - 1] === '');
+    if (cells.length === width && isRowAmong(cells, numeric)) {
+      const isTrailing = cells[width - 1] === '' && fitting.every((one) => one[width - 1] === '');
       return reader.frame(isTrailing ? width - 1 : width);
     }
     reader.pass();
   }
   return null;
+}
+
+/** Whether a line has numbers in most of the columns that have them, or sets out with one. */
+function isRowAmong(cells: readonly string[], numeric: readonly number[]): boolean {
+  if (!cells.some(looksNumeric)) return false;
+  const numbers = numeric.filter((i) => isNumberOrNothing(cells[i])).length;
+  return numbers > numeric.length / 2 || beginsNumeric(cells[numeric[0]]);
 }
 
 function isNumberOrNothing(cell: string): boolean {

@@ -2,14 +2,15 @@ import { ok, type Result } from '../../result.ts';
 import { parseDecimal } from '../decimal.ts';
 import type { ReadError } from '../read-types.ts';
 import { type Place, refuse } from '../touchstone/faults.ts';
-import { ratioIn, saysNoNumber } from './cells.ts';
+import { isFortranNumber, ratioIn, saysNoNumber } from './cells.ts';
 import type { PlacedColumn } from './frame.ts';
 import { decimalShift } from './quantities.ts';
 
 const number = String.raw`[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?`;
-const fortran = /^[+-]?(?:\d+(?:\.\d*)?|\.\d+)[dD][+-]?\d+$/;
 const withUnit = new RegExp(`^${number} ?(?:[a-zA-Z\u00b5\u03a9\u2126]{1,5}|%|\u00b0)$`);
-const complex = new RegExp(`^\\(?${number} ?(?:, ?|[+-] ?)[ij]?(?:\\d[\\d.eE+-]*)?[ij]?\\)?$`);
+const complex = new RegExp(
+  `^\\(?(?:${number} ?[+-] ?(?:[ij](?:\\d[\\d.eE+-]*)?|\\d[\\d.eE+-]*[ij])|${number}, ?${number}\\))\\)?$`,
+);
 const grouped = /^[+-]?\d{1,3}(?:['\u2019 \u00a0\u202f]\d{3})+(?:\.\d*)?$/;
 const longestCell = 64;
 
@@ -39,7 +40,7 @@ export function readOddCell(
   }
   if (quantity !== 'frequency' && saysNoNumber(cell))
     return ok({ value: Number.NaN, isFortran: false });
-  if (cell.length <= longestCell && fortran.test(cell)) {
+  if (isFortranNumber(cell)) {
     const value = parseDecimal(cell.replace(/[dD]/, 'e'), decimalShift(unit));
     if (!Number.isNaN(value)) return ok({ value, isFortran: true });
   }
@@ -72,6 +73,10 @@ function refuseCell(
   }
   if (grouped.test(cell)) {
     return refuse('digits_grouped', detail, 'Remove the marks between thousands.', place);
+  }
+  if (/^[+-]?\d*,\d+$/.test(cell)) {
+    const remedy = 'If the comma is the decimal mark, add `decimal=comma` to `columns`.';
+    return refuse('not_a_number', detail, remedy, place);
   }
   const remedy =
     'Correct the cell or remove the row; if the column holds something else, map it as `skip`.';

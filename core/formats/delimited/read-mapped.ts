@@ -80,20 +80,24 @@ function leaveOut(
   firstLine: number,
 ): Result<readonly Assumption[], ReadError> {
   const needed = from.map((quantity) => rows.values[slotOf(columns, quantity)]);
+  const isMissing = (row: number) => needed.some((values) => Number.isNaN(values[row]));
+  if (!needed.some((values) => hasNaN(values, rows.count))) return ok([]);
   const lines: number[] = [];
-  for (let row = 0; row < rows.count; row++) {
-    if (needed.some((values) => Number.isNaN(values[row]))) lines.push(rows.line[row]);
-  }
-  if (lines.length === 0) return ok([]);
+  for (let row = 0; row < rows.count; row++) if (isMissing(row)) lines.push(rows.line[row]);
   if (lines.length === rows.count) {
     const detail = `No row has a number for ${from.map((one) => `\`${one}\``).join(' and ')}.`;
     return refuse('no_points', detail, 'Check the mapping, or sweep again.', { line: firstLine });
   }
-  rows.filter((row) => !needed.some((values) => Number.isNaN(values[row])));
+  rows.filter((row) => !isMissing(row));
   const shown = lines.slice(0, 5).join(', ');
   const more = lines.length > 5 ? ` and ${lines.length - 5} more` : '';
   const detail = `${lines.length} rows have no number (undefined or out of the instrument's range) and were left out: line ${shown}${more}. There the antenna counts as not swept.`;
   return ok([{ code: 'points_left_out', detail, line: lines[0] }]);
+}
+
+function hasNaN(values: Float64Array, count: number): boolean {
+  for (let row = 0; row < count; row++) if (Number.isNaN(values[row])) return true;
+  return false;
 }
 
 /** Holds the redundant columns against the others. */
@@ -151,8 +155,14 @@ function convert(
   referenceOhm: number,
 ): Result<Converted, ReadError> {
   const { count } = rows;
+  const frequency = rows.values[slotOf(columns, 'frequency')].slice(0, count);
+  const [first, second = first] = recipe.from.map((one) =>
+    rows.values[slotOf(columns, one)].subarray(0, count),
+  );
+  if (recipe.kind === 'reflection_parts') {
+    return ok({ arrays: [frequency, first.slice(), second.slice()], assumptions: [] });
+  }
   const toReflection = converterOf(recipe);
-  const [first, second = first] = recipe.from.map((one) => rows.values[slotOf(columns, one)]);
   const re = new Float64Array(count);
   const im = new Float64Array(count);
   const out = new Float64Array(2);
@@ -170,7 +180,6 @@ function convert(
     re[row] = out[0];
     im[row] = out[1];
   }
-  const frequency = rows.values[slotOf(columns, 'frequency')].slice(0, count);
   const arrays = recipe.phase === 'none' ? [frequency, re] : [frequency, re, im];
   const assumptions = derivedAssumptions(recipe.from, recipe.kind, rows.line[0]);
   if (rounded > 0) {

@@ -6,6 +6,7 @@ import { delimiterChars, isCommentAt, trimBlanks } from './cells.ts';
 import type { Frame, PlacedColumn } from './frame.ts';
 import { NumberColumns } from './number-columns.ts';
 import { readOddCell } from './odd-cell.ts';
+import { characterCodes, PlainNumbers } from './plain-numbers.ts';
 import { decimalShift } from './quantities.ts';
 import type { TableText } from './table-text.ts';
 
@@ -38,6 +39,10 @@ class RowReader {
   private readonly table: TableText;
   private readonly text: string;
   private readonly scanner: DecimalScanner;
+  /** The codes of the text from `base` on, and the fast reader of numbers in them. */
+  private readonly base: number;
+  private readonly codes: Uint8Array;
+  private readonly plain: PlainNumbers;
   private readonly columns: readonly PlacedColumn[];
   private readonly width: number;
   private readonly maxPoints: number;
@@ -56,6 +61,9 @@ class RowReader {
     this.table = table;
     this.text = table.text;
     this.scanner = new DecimalScanner(table.text);
+    this.base = frame.start;
+    this.codes = characterCodes(table.text, frame.start);
+    this.plain = new PlainNumbers(this.codes);
     this.columns = columns;
     this.width = frame.width;
     this.maxPoints = maxPoints;
@@ -67,9 +75,9 @@ class RowReader {
       this.slotOf[address - 1] = slot;
       this.shiftOf[address - 1] = decimalShift(unit);
     }
-    const perRow = 4 * frame.width;
-    const expected = Math.ceil((table.text.length - frame.start) / perRow) + 1;
-    this.rows = new NumberColumns(columns.length, Math.min(expected, maxPoints + 1, 4096));
+    const firstRow = Math.max(4, this.codes.indexOf(lineFeed));
+    const expected = Math.ceil((1.1 * this.codes.length) / firstRow) + 8;
+    this.rows = new NumberColumns(columns.length, Math.min(expected, maxPoints + 1));
     this.at = frame.start;
     this.lineStart = frame.start;
     this.line = frame.line;
@@ -78,6 +86,8 @@ class RowReader {
   read(): Result<ReadRows, ReadError> {
     const { text, table } = this;
     while (this.at < text.length) {
+      this.readPlainRows();
+      if (this.at >= text.length) break;
       this.skipBlanks();
       const code = text.charCodeAt(this.at);
       if (this.at < text.length && code !== lineFeed && code !== carriageReturn) {
@@ -92,6 +102,54 @@ class RowReader {
     const assumptions =
       this.fortranLine === 0 ? [] : [{ code: 'fortran_exponent', detail, line: this.fortranLine }];
     return ok({ rows: this.rows, assumptions });
+  }
+
+  /**
+   * The fast way through rows that are as wide as they should be, all their mapped cells plain
+   * numbers. Stops at the start of the first line that is anything else.
+   */
+  private readPlainRows(): void {
+    const { codes, plain, scanner, base, width, slotOf, shiftOf, delimiter, isBlanks, rows } = this;
+    // The last code is no character of the text.
+    const end = codes.length - 1;
+    let at = this.at - base;
+    while (at < end && rows.count < this.maxPoints) {
+      rows.makeRoom();
+      const { values, cellStart, count } = rows;
+      for (let column = 0; column < width; column++) {
+        const slot = slotOf[column];
+        while (codes[at] === space) at += 1;
+        if (slot >= 0) {
+          const shift = shiftOf[column];
+          let value = plain.read(at, shift);
+          let next = plain.end;
+          if (Number.isNaN(value)) {
+            value = scanner.read(at + base, shift);
+            if (Number.isNaN(value)) return;
+            next = scanner.end - base;
+          }
+          values[slot][count] = value;
+          cellStart[slot][count] = at + base;
+          at = next;
+          if (!isBlanks) while (codes[at] === space) at += 1;
+        } else {
+          while (at < end && codes[at] !== delimiter && !isLineEnd(codes[at])) {
+            if (isBlanks && codes[at] === tab) break;
+            at += 1;
+          }
+        }
+        if (column === width - 1) {
+          if (at < end && !isLineEnd(codes[at])) return;
+        } else if (codes[at] === delimiter) at += 1;
+        else return;
+      }
+      rows.line[count] = this.line;
+      rows.count = count + 1;
+      at += codes[at] === carriageReturn && codes[at + 1] === lineFeed ? 2 : 1;
+      this.at = at + base;
+      this.lineStart = this.at;
+      this.line += 1;
+    }
   }
 
   private skipBlanks(): void {
@@ -228,4 +286,8 @@ class RowReader {
     const detail = `The file has more than ${maxPoints} points.`;
     return refuse('too_many_points', detail, 'Sweep with fewer points.', { line });
   }
+}
+
+function isLineEnd(code: number): boolean {
+  return code === lineFeed || code === carriageReturn;
 }

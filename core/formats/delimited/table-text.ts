@@ -1,6 +1,7 @@
 import { ok, type Result } from '../../result.ts';
 import type { Assumption, ReadError } from '../read-types.ts';
 import { refuse } from '../touchstone/faults.ts';
+import { commasToPoints } from './cells.ts';
 import type { Dialect } from './dialect.ts';
 import type { Delimiter } from './mapping.ts';
 import { unquote } from './unquoted.ts';
@@ -22,7 +23,7 @@ export function tableText(text: string, dialect: Dialect): Result<TableText, Rea
   if (!unquoted.ok) return unquoted;
   const shown = unquoted.value;
   return ok({
-    text: decimal === 'comma' ? shown.replaceAll(',', '.') : shown,
+    text: decimal === 'comma' ? commasToPoints(shown) : shown,
     shown,
     delimiter: hasQuotes ? 'tab' : delimiter,
     isInPlace: !hasQuotes,

@@ -24,7 +24,13 @@ export async function serveDocs(app: App, document: OpenAPIV3_1.Document): Promi
     routePrefix: '/docs',
     staticCSP: docsPolicy,
     theme: { title: 'Sweep Ledger: the interface' },
-    uiConfig: { validatorUrl: null, deepLinking: true, persistAuthorization: false },
+    // Without the bar on top, which would show another project's mark and load any document.
+    uiConfig: {
+      layout: 'BaseLayout',
+      validatorUrl: null,
+      deepLinking: true,
+      persistAuthorization: false,
+    },
   });
   const text = JSON.stringify(document);
   app.get('/openapi.json', { schema: { hide: true } }, async (_request, reply) =>

@@ -2,13 +2,14 @@ import type { BandPlan } from '../plan.ts';
 import { type SegmentGroup, segmentsOf } from '../segment-group.ts';
 
 const hfPlan2020 = 'read in: a copy of the IARU Region 1 HF plan of 16 Oct 2020';
-const planTranscription = 'read in: a transcription of the IARU Region 1 plan';
-const planTranscriptionAndRsgb =
-  'read in: a transcription of the IARU Region 1 plan, and RSGB band plan sheet 012 of 2017';
-const page18MHz = 'read in: a national 18 MHz page of the Region 1 plan, and a transcription';
-const rsgbSheet15 = 'read in: RSGB band plan sheet 015 of 2023, and a transcription';
-const rsgbSheet18 = 'read in: RSGB band plan sheet 018 of 2023, and a transcription';
-const uhfPages = 'read in: a transcription and two national pages of the Region 1 plan for 430 MHz';
+const planCopy = 'read in: a secondary copy of the IARU Region 1 plan';
+const planCopyAndRsgb =
+  'read in: a secondary copy of the IARU Region 1 plan, and RSGB band plan sheet 012 of 2017';
+const page18MHz = 'read in: a national 18 MHz page of the Region 1 plan, and a secondary copy';
+const rsgbSheet15 = 'read in: RSGB band plan sheet 015 of 2023, and a secondary copy';
+const rsgbSheet18 = 'read in: RSGB band plan sheet 018 of 2023, and a secondary copy';
+const uhfPages =
+  'read in: a secondary copy and two national pages of the Region 1 plan for 430 MHz';
 
 const groups: readonly SegmentGroup[] = [
   {
@@ -31,7 +32,7 @@ const groups: readonly SegmentGroup[] = [
         'CW, narrow digital',
         'narrow',
         null,
-        'No bandwidth stated in the plan; a transcription suggests 500 Hz.',
+        'No bandwidth stated in the plan; a secondary copy suggests 500 Hz.',
       ],
       ['160m', 1_810_000, 1_838_000, 'CW', 'cw', 200],
       ['160m', 1_838_000, 1_840_000, 'narrow-band modes', 'narrow', 500],
@@ -77,7 +78,7 @@ const groups: readonly SegmentGroup[] = [
     ],
   },
   {
-    verified: planTranscription,
+    verified: planCopy,
     rows: [
       ['40m', 7_130_000, 7_175_000, 'all modes, SSB contest preferred', 'all', 2700],
       ['40m', 7_175_000, 7_200_000, 'all modes, intercontinental priority', 'all', 2700],
@@ -137,7 +138,7 @@ const groups: readonly SegmentGroup[] = [
     ],
   },
   {
-    verified: planTranscriptionAndRsgb,
+    verified: planCopyAndRsgb,
     rows: [
       ['30m', 10_100_000, 10_130_000, 'CW', 'cw', 200],
       ['30m', 10_130_000, 10_150_000, 'narrow-band digital', 'narrow', 500],
@@ -195,7 +196,7 @@ const groups: readonly SegmentGroup[] = [
         'all modes, AM/FM',
         'all',
         12_000,
-        'The transcription that was read prints 70.250-70.249, evidently a slip.',
+        'The secondary copy that was read prints 70.250-70.249, evidently a slip.',
       ],
       [
         '4m',
@@ -204,7 +205,7 @@ const groups: readonly SegmentGroup[] = [
         'FM channels, digital',
         'fm',
         12_000,
-        'The transcription that was read prints 70.249-70.500.',
+        'The secondary copy that was read prints 70.249-70.500.',
       ],
     ],
   },
@@ -243,7 +244,7 @@ export const iaruR1: BandPlan = {
   kind: 'bandplan',
   authority: 'International Amateur Radio Union Region 1',
   edition:
-    'HF plan effective 16 Oct 2020 (to 7100 kHz read directly); rest from transcriptions of the 2016-2020 HF plan and the VHF handbook; later revisions not read',
+    'HF plan effective 16 Oct 2020 (to 7100 kHz read directly); rest from secondary copies of the 2016-2020 HF plan and the VHF handbook; later revisions not read',
   editionStanding: 'unconfirmed',
   source: 'IARU Region 1 HF Band Plan; IARU Region 1 VHF Handbook, band plan part',
   region: 'IARU Region 1',

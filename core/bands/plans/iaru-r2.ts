@@ -4,7 +4,7 @@ import { type SegmentGroup, segmentsOf } from '../segment-group.ts';
 const plan2008 = 'read in: a copy of the IARU Region 2 plan of 1 Jan 2008';
 const report2016 =
   'read in: a report of 14 Oct 2016 (says the 60 m sub-bands match Region 1; edges from the Region 1 plan)';
-const plan2010 = 'read in: a transcription of the IARU Region 2 plan of 8 Oct 2010';
+const plan2010 = 'read in: a secondary copy of the IARU Region 2 plan of 8 Oct 2010';
 
 const groups: readonly SegmentGroup[] = [
   {
@@ -42,7 +42,7 @@ const groups: readonly SegmentGroup[] = [
         'narrow-band digital, unattended data',
         'narrow',
         500,
-        'A transcription of the 2010 plan calls this segment all modes.',
+        'A secondary copy of the 2010 plan calls this segment all modes.',
       ],
       ['80m', 3_600_000, 3_625_000, 'all modes, unattended data', 'all', 2700],
       [

@@ -1,7 +1,7 @@
 import type { BandPlan } from '../plan.ts';
 import { type SegmentGroup, segmentsOf } from '../segment-group.ts';
 
-const plan2009 = 'read in: a transcription of the IARU Region 3 plan of 16 Oct 2009';
+const plan2009 = 'read in: a secondary copy of the IARU Region 3 plan of 16 Oct 2009';
 
 const groups: readonly SegmentGroup[] = [
   {
@@ -68,8 +68,8 @@ const groups: readonly SegmentGroup[] = [
   {
     verified: 'memory',
     rows: [
-      ['160m', 1_800_000, 1_830_000, 'CW', 'cw', null, 'Gap in the transcription.'],
-      ['80m', 3_510_000, 3_535_000, 'CW, narrow modes', 'cw', null, 'Gap in the transcription.'],
+      ['160m', 1_800_000, 1_830_000, 'CW', 'cw', null, 'Gap in the secondary copy.'],
+      ['80m', 3_510_000, 3_535_000, 'CW, narrow modes', 'cw', null, 'Gap in the secondary copy.'],
       [
         '60m',
         5_351_500,
@@ -86,7 +86,7 @@ const groups: readonly SegmentGroup[] = [
         'national planning',
         'all',
         null,
-        'Only EME and satellite segments are named in the transcription.',
+        'Only EME and satellite segments are named in the secondary copy.',
       ],
       ['2m', 146_000_000, 148_000_000, 'national planning', 'all'],
       ['70cm', 430_000_000, 431_900_000, 'national planning', 'all'],
@@ -103,7 +103,7 @@ export const iaruR3: BandPlan = {
   kind: 'bandplan',
   authority: 'International Amateur Radio Union Region 3',
   edition:
-    '16 Oct 2009 plan through a transcription; the 3 Sep 2019 interim plan (R3-004) exists but only its introduction was read',
+    '16 Oct 2009 plan through a secondary copy; the 3 Sep 2019 interim plan (R3-004) exists but only its introduction was read',
   editionStanding: 'old',
   source: 'IARU Region 3 Band Plan; R3-004 (introduction)',
   region: 'IARU Region 3',

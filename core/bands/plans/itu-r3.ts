@@ -3,7 +3,7 @@ import { type SegmentGroup, segmentsOf } from '../segment-group.ts';
 
 const iaruLfMf = 'read in: the IARU Region 1 page on LF and MF allocations';
 const cfr97301 =
-  'read in: transcriptions of 47 CFR 97.301, Region columns (VHF and UHF as of 2021)';
+  'read in: secondary copies of 47 CFR 97.301, Region columns (VHF and UHF as of 2021)';
 const footnotes160m = 'read in: a public copy of the table of allocations at 1810 kHz';
 const iaruHf = 'read in: the IARU Region 1 page on HF allocations';
 const fcc2560 = 'read in: FCC 25-60, paragraph 32, as quoted on 10 Dec 2025';

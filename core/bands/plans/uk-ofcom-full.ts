@@ -2,7 +2,7 @@ import type { BandPlan } from '../plan.ts';
 import { type SegmentGroup, segmentsOf } from '../segment-group.ts';
 
 const br68f = 'read in: a copy of the BR68/F schedule (Foundation, before 2004)';
-const rsgb2020 = 'read in: a transcription of the RSGB plan of Feb 2020';
+const rsgb2020 = 'read in: a secondary copy of the RSGB plan of Feb 2020';
 const rsgb5MHz = 'read in: the RSGB 5 MHz table of 2017';
 const rsgbSheet23 = 'read in: RSGB band plan sheet 023 of 2017 (lower part)';
 const list2017 =

@@ -1,7 +1,7 @@
 import type { BandPlan } from '../plan.ts';
 import { type SegmentGroup, segmentsOf } from '../segment-group.ts';
 
-const sixMetreMix = 'read in: a transcription that mixes the ARRL and a Canadian plan';
+const sixMetreMix = 'read in: a secondary copy that mixes the ARRL and a Canadian plan';
 const planPage = 'read in: the ARRL band plan page as of 25 Sep 2026';
 const noteOnPlan = 'read in: a note citing the ARRL plan';
 

@@ -6,7 +6,7 @@ const ruleTables =
   'read in: tables of 47 CFR 97.301 and 97.305 as of 7 Aug 2026, and a 2021 copy of 97.301';
 const studyTextGeneral = 'read in: a study text quoting 47 CFR 97.301(d) and 97.305';
 const rule2026 =
-  'read in: Federal Register of 14 Jan 2026, document 2026-00587 (opening), a bulletin on it, and a transcription';
+  'read in: Federal Register of 14 Jan 2026, document 2026-00587 (opening), a bulletin on it, and a secondary copy';
 const studyText = 'read in: a study text quoting 47 CFR 97.301 and 97.305, as of 30 Jul 2026';
 const channelEdges =
   '100 W ERP. Edges are centre plus/minus 1.4 kHz, computed from the 2.8 kHz limit.';

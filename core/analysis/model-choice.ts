@@ -23,8 +23,6 @@ export interface ChosenFits {
    * of such numbers scatters more (first-order autoregression).
    */
   readonly factor95: number;
-  /** Unknowns of the best fit. */
-  readonly unknowns: number;
   /** Neighbouring residuals do not hang together: the fit explains all but noise. */
   readonly isWhite: boolean;
   /** The residuals are not much larger than the noise between neighbouring samples. */
@@ -149,15 +147,13 @@ function judged(
   const total = shares.reduce((sum, { weight }) => sum + weight, 0);
   const members = shares.map(({ fit, weight }) => ({ fit, weight: weight / total }));
   const { fit, squares } = shares.reduce((a, b) => (b.weight > a.weight ? b : a));
-  const unknowns = unknownsOf(fit.degree);
-  const freedom = numbers - unknowns;
+  const freedom = numbers - unknownsOf(fit.degree);
   const isTiny = squares < numbers * exactBelow ** 2;
   const correlation = isTiny ? 0 : neighbourCorrelation(fit, samples);
   const isWhite = correlation < 3 / Math.sqrt(numbersIn(fit.form, samples.re.length));
   const student = studentQuantile(0.975, freedom);
   return {
     members,
-    unknowns,
     noise: Math.sqrt(squares / freedom),
     factor95: isWhite ? student : student * Math.sqrt((1 + correlation) / (1 - correlation)),
     isWhite,

@@ -28,6 +28,10 @@ export interface PiecewiseModel {
 
 /** A stretch is not halved below this many samples. */
 const fewestToHalve = 24;
+/** Halving is worth it where it brings the residuals below this part of what they were. */
+const worthHalving = 0.6;
+/** Residuals above this are more than rounding to three digits makes. */
+const farOff = 0.002;
 /** Samples beyond its own stretch that a piece is fitted to, as a part of the stretch. */
 const overlap = 0.35;
 
@@ -72,8 +76,7 @@ function cover(
     const middle = (first + last) >> 1;
     const left = chooseOn(samples, form, first, middle);
     const right = chooseOn(samples, form, middle, last);
-    const halves = scoreOn(left, middle - first) + scoreOn(right, last - middle);
-    if (!chosen.isExplained || halves < scoreOn(chosen, last - first)) {
+    if (isFarOff(chosen) || pays(chosen, left, right)) {
       cover(samples, form, first, middle, left, pieces);
       cover(samples, form, middle, last, right, pieces);
       return;
@@ -83,11 +86,19 @@ function cover(
   pieces.push({ lowHz: frequencyHz[first], highHz: frequencyHz[last], members, noise, factor95 });
 }
 
-/** The criterion by which fits were chosen, on so many samples; comparable between covers. */
-function scoreOn(chosen: ChosenFits | null, samples: number): number {
-  if (chosen?.noise == null) return Number.POSITIVE_INFINITY;
-  const numbers = 2 * samples;
-  return 2 * numbers * Math.log(chosen.noise) + chosen.unknowns * Math.log(numbers);
+/** A fit that misses the samples themselves: halves of halves may do what halves cannot yet. */
+function isFarOff({ noise, isExplained }: ChosenFits): boolean {
+  return noise !== null && noise > farOff && !isExplained;
+}
+
+/**
+ * Whether halving takes away much of the residuals. Where they come from rounding to few digits they
+ * hang together too, and halves would only follow the steps of the rounding.
+ */
+function pays(whole: ChosenFits, left: ChosenFits | null, right: ChosenFits | null): boolean {
+  if (left === null || right === null || whole.noise === null) return false;
+  const halves = Math.hypot(left.noise ?? 0, right.noise ?? 0) / Math.SQRT2;
+  return halves < worthHalving * whole.noise;
 }
 
 function slice({ frequencyHz, re, im }: Samples, from: number, to: number): Samples {

@@ -17,30 +17,30 @@ describe('a summary of sixty random antennas', () => {
     report = reportOf(runBench({ seed: 3, cases: 60 }, summaryEstimator));
   }, 300_000);
 
-  const valueOf = (key: string, part?: string): number => {
+  const figureOf = (key: string, part?: string): number => {
     const { value } = report[key];
     if (typeof value === 'number') return value;
     return part === undefined ? Number.NaN : value[part];
   };
 
   it('places resonances without noise far below the step', () => {
-    expect(valueOf('noise_free_resonance_error_steps', 'median')).toBeLessThan(0.001);
-    expect(valueOf('noise_free_resonance_error_steps', 'p99')).toBeLessThan(0.02);
+    expect(figureOf('noise_free_resonance_error_steps', 'median')).toBeLessThan(0.001);
+    expect(figureOf('noise_free_resonance_error_steps', 'p99')).toBeLessThan(0.02);
   });
 
   it('places the SWR minimum without noise far below the step', () => {
-    expect(valueOf('noise_free_min_swr_error_steps')).toBeLessThan(0.02);
+    expect(figureOf('noise_free_min_swr_error_steps')).toBeLessThan(0.02);
   });
 
   it('comes near to a fit that knows the form of the antenna', () => {
-    expect(valueOf('resonance_rms_vs_model_fit')).toBeLessThan(2);
-    expect(valueOf('min_swr_rms_vs_model_fit')).toBeLessThan(2);
+    expect(figureOf('resonance_rms_vs_model_fit')).toBeLessThan(2);
+    expect(figureOf('min_swr_rms_vs_model_fit')).toBeLessThan(2);
   });
 
   it.each(['resonance', 'min_swr_frequency', 'min_swr', 'span_edge'])(
     'states half-widths that hold the true %s about as often as they promise',
     (quantity) => {
-      expect(valueOf('coverage_95', quantity)).toBeGreaterThan(0.89);
+      expect(figureOf('coverage_95', quantity)).toBeGreaterThan(0.89);
       const { detail } = report['coverage_95'];
       expect(detail[quantity]).toHaveProperty('median_half_width_over_rms_error');
     },
@@ -54,7 +54,7 @@ describe('a summary of sixty random antennas', () => {
   });
 
   it('calls no band usable that is not, beyond the stated half-width', () => {
-    expect(valueOf('verdict_wrong')).toBe(0);
+    expect(figureOf('verdict_wrong')).toBe(0);
   });
 });
 

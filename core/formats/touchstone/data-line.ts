@@ -14,11 +14,13 @@ const exclamation = 33;
 export interface Tolerated {
   fortranLine: number | null;
   commaLine: number | null;
+  /** A comma was met that cannot part thousands. */
+  isCommaSure: boolean;
 }
 
 /** Nothing tolerated yet. */
 export function nothingTolerated(): Tolerated {
-  return { fortranLine: null, commaLine: null };
+  return { fortranLine: null, commaLine: null, isCommaSure: false };
 }
 
 /** Reads the numbers of lines into a table; the first of each is scaled by `frequencyShift`. */
@@ -100,6 +102,7 @@ export class DataLineReader {
     }
     if (/^[+-]?\d*,\d+(?:[eE][+-]?\d+)?$/.test(token)) {
       tolerated.commaLine ??= line;
+      tolerated.isCommaSure ||= !/^[+-]?[1-9]\d{0,2},\d{3}$/.test(token);
       return ok(parseDecimal(token.replace(',', '.'), shift));
     }
     if (/^[+-]?(?:nan|inf(?:inity)?|1\.#(?:ind|inf|qnan|snan)\d*)$/i.test(token)) {

@@ -6,6 +6,9 @@ import { type Place, refuse } from './faults.ts';
 /** Ports beyond this are no antenna measurement; the check comes before anything grows with it. */
 const mostPorts = 2;
 
+/** Where in a version 2 file the reading is. */
+export type Phase = 'header' | 'information' | 'network' | 'noise' | 'ended';
+
 /** What the keywords of a version 2 file have said so far. */
 export class Keywords {
   ports: number | null = null;
@@ -13,8 +16,10 @@ export class Keywords {
   frequencies: number | null = null;
   matrixFormat: 'full' | 'lower' | 'upper' = 'full';
   referenceOhm: number[] | null = null;
-  phase: 'header' | 'information' | 'network' | 'noise' | 'ended' = 'header';
+  phase: Phase = 'header';
   hasVersion = false;
+  /** Names of the keywords met so far: none may say its thing twice. */
+  readonly met = new Set<string>();
   private wanted = 0;
 
   /** `[Reference]` has not got all its numbers yet. */
@@ -61,21 +66,42 @@ type KeywordReader = (keywords: Keywords, argument: string, place: Place) => Tak
 
 const nothing: Taken = ok([]);
 
+interface Keyword {
+  readonly read: KeywordReader;
+  /** Where it may stand. */
+  readonly phases: readonly Phase[];
+}
+
+function inHeader(read: KeywordReader): Keyword {
+  return { read, phases: ['header'] };
+}
+
+function startsPhase(phase: Phase, ...phases: readonly Phase[]): Keyword {
+  const read: KeywordReader = (keywords) => {
+    keywords.phase = phase;
+    return nothing;
+  };
+  return { read, phases };
+}
+
 /** Every keyword of the format, by its name in lower case with single blanks. */
-const readers = new Map<string, KeywordReader>([
-  ['number of ports', readPorts],
-  ['two-port data order', readOrder],
-  ['two-port order', readOrderAlias],
-  ['number of frequencies', readFrequencies],
-  ['number of noise frequencies', (_, argument, place) => positiveWhole(argument, place)],
-  ['reference', (keywords, argument, place) => keywords.startReference(argument, place) ?? nothing],
-  ['matrix format', readMatrixFormat],
-  ['mixed-mode order', refuseMixedMode],
-  ['begin information', startPhase('information')],
-  ['end information', startPhase('header')],
-  ['network data', startPhase('network')],
-  ['noise data', startPhase('noise')],
-  ['end', startPhase('ended')],
+const known = new Map<string, Keyword>([
+  ['number of ports', inHeader(readPorts)],
+  ['two-port data order', inHeader(readOrder)],
+  ['two-port order', inHeader(readOrderAlias)],
+  ['number of frequencies', inHeader(readFrequencies)],
+  ['number of noise frequencies', inHeader((_, argument, place) => positiveWhole(argument, place))],
+  [
+    'reference',
+    inHeader((keywords, argument, place) => keywords.startReference(argument, place) ?? nothing),
+  ],
+  ['matrix format', inHeader(readMatrixFormat)],
+  ['mixed-mode order', inHeader(refuseMixedMode)],
+  ['begin information', startsPhase('information', 'header')],
+  ['end information', startsPhase('header', 'information')],
+  ['network data', startsPhase('network', 'header')],
+  ['noise data', startsPhase('noise', 'network')],
+  ['end', startsPhase('ended', 'network', 'noise')],
 ]);
 
 /** Takes one keyword line. The assumptions are what had to be tolerated in it. */
@@ -87,12 +113,8 @@ export function readKeyword(
 ): Taken {
   const match = /^\[([^\]]*)\](.*)$/.exec(content);
   if (match === null) {
-    return refuse(
-      'keyword_open',
-      'A keyword is not closed by `]`.',
-      'Close it on its own line.',
-      place,
-    );
+    const detail = 'A keyword is not closed by `]`.';
+    return refuse('keyword_open', detail, 'Close it on its own line.', place);
   }
   const name = match[1].trim().toLowerCase().replace(/\s+/g, ' ');
   const argument = match[2].trim();
@@ -114,13 +136,28 @@ export function readKeyword(
       place,
     );
   }
-  const reader = readers.get(name);
-  if (reader !== undefined) return reader(keywords, argument, place);
+  const keyword = known.get(name);
+  if (keyword === undefined) return passUnknown(keywords, match[1], place);
+  if (keywords.met.has(name)) {
+    const detail = `\`[${match[1]}]\` stands twice.`;
+    return refuse('keyword_twice', detail, 'Send one sweep in one file.', place);
+  }
+  if (!keyword.phases.includes(keywords.phase)) {
+    const detail = `\`[${match[1]}]\` does not belong here.`;
+    const remedy =
+      'Order the file: `[Version]`, option line, `[Number of Ports]`, other keywords, `[Network Data]`, `[Noise Data]`, `[End]`.';
+    return refuse('keyword_misplaced', detail, remedy, place);
+  }
+  keywords.met.add(name);
+  return keyword.read(keywords, argument, place);
+}
+
+function passUnknown(keywords: Keywords, name: string, place: Place): Taken {
   if (keywords.phase !== 'header') {
-    const detail = `The keyword \`[${match[1]}]\` is unknown.`;
+    const detail = `The keyword \`[${name}]\` is unknown.`;
     return refuse('keyword_unknown', detail, 'Remove it, or correct its spelling.', place);
   }
-  const detail = `The unknown keyword \`[${match[1]}]\` was passed over.`;
+  const detail = `The unknown keyword \`[${name}]\` was passed over.`;
   return ok([{ code: 'keyword_unknown', detail, line: place.line }]);
 }
 
@@ -160,6 +197,10 @@ function readPorts(keywords: Keywords, argument: string, place: Place): Taken {
 }
 
 function readOrder(keywords: Keywords, argument: string, place: Place): Taken {
+  if (keywords.twoPortOrder !== null) {
+    const detail = 'The order of the two-port data stands twice.';
+    return refuse('keyword_twice', detail, 'Keep one of the keywords.', place);
+  }
   if (argument !== '12_21' && argument !== '21_12') {
     const detail = `\`[Two-Port Data Order] ${argument}\` is neither 12_21 nor 21_12.`;
     return refuse('order_unknown', detail, 'Write 12_21 or 21_12.', place);
@@ -206,11 +247,4 @@ function refuseMixedMode(_: Keywords, __: string, place: Place): Taken {
   const detail =
     'The file holds mixed-mode parameters: its first one is not the reflection at a single port.';
   return refuse('mixed_mode', detail, 'Export single-ended S-parameters.', place);
-}
-
-function startPhase(phase: Keywords['phase']): KeywordReader {
-  return (keywords) => {
-    keywords.phase = phase;
-    return nothing;
-  };
 }

@@ -3,7 +3,7 @@ import type { DecimalScanner } from '../decimal.ts';
 import type { Assumption, ReadError } from '../read-types.ts';
 import { refuse } from './faults.ts';
 import type { NumberTable } from './number-table.ts';
-import type { ReadPoints } from './points.ts';
+import { onePort, type PointLayout, type ReadPoints, twoPort } from './points.ts';
 
 const onePortWidth = 3;
 const twoPortWidth = 9;
@@ -132,21 +132,12 @@ function pointsOfWidth(
   count: number,
   assumptions: readonly Assumption[],
 ): ReadPoints {
-  const common = { start, line, count, assumptions, at11: 1 };
-  if (width === onePortWidth) {
-    return ok({ ...common, ports: 1, at12: null, at21: null, at22: null });
-  }
-  if (width === twoPortWidth) return ok({ ...common, ports: 2, at21: 3, at12: 5, at22: 7 });
+  if (width === onePortWidth) return ok({ layout: onePort, count, start, line, assumptions });
+  if (width === twoPortWidth) return ok({ layout: twoPort, count, start, line, assumptions });
   const detail = 'Each line has five numbers: the first pair was taken as S11, the second as S21.';
   const forward: Assumption = { code: 'forward_only', detail, line: line[0] };
-  return ok({
-    ...common,
-    assumptions: [...assumptions, forward],
-    ports: 2,
-    at12: null,
-    at21: 3,
-    at22: null,
-  });
+  const layout: PointLayout = { ...twoPort, at12: null, at22: null };
+  return ok({ layout, count, start, line, assumptions: [...assumptions, forward] });
 }
 
 /** The first number of a row as it stands in the text. */

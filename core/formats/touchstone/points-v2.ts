@@ -4,7 +4,7 @@ import type { Assumption } from '../read-types.ts';
 import { refuse } from './faults.ts';
 import type { Keywords } from './keywords.ts';
 import type { NumberTable } from './number-table.ts';
-import type { ReadPoints } from './points.ts';
+import { onePort, type PointLayout, type ReadPoints, twoPort } from './points.ts';
 import { unscaledFirst } from './points-v1.ts';
 
 /**
@@ -51,11 +51,13 @@ export function pointsOfVersion2(
     });
   }
   const assumptions = headerAssumptions(keywords, count, line[0]);
-  const common = { start, line, count, assumptions, at11: 1 };
-  if (ports === 1) return ok({ ...common, ports: 1, at12: null, at21: null, at22: null });
-  if (isHalf) return ok({ ...common, ports: 2, at12: 3, at21: 3, at22: 5 });
-  const [at12, at21] = keywords.twoPortOrder === '12_21' ? [3, 5] : [5, 3];
-  return ok({ ...common, ports: 2, at12, at21, at22: 7 });
+  return ok({ layout: layoutOf(keywords, isHalf), count, start, line, assumptions });
+}
+
+function layoutOf({ ports, twoPortOrder }: Keywords, isHalf: boolean): PointLayout {
+  if (ports === 1) return onePort;
+  if (isHalf) return { ports: 2, at11: 1, at12: 3, at21: 3, at22: 5 };
+  return twoPortOrder === '12_21' ? { ...twoPort, at12: 3, at21: 5 } : twoPort;
 }
 
 function headerAssumptions(keywords: Keywords, count: number, line: number): Assumption[] {

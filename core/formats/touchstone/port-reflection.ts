@@ -1,5 +1,5 @@
 import type { NumberFormat, OptionLine, Parameter } from './option-line.ts';
-import type { Points } from './points.ts';
+import type { PointLayout } from './points.ts';
 
 type Complex = readonly [re: number, im: number];
 
@@ -29,23 +29,23 @@ export interface Normalisation {
 export function reflectionAt(
   values: Float64Array,
   start: number,
-  points: Points,
+  layout: PointLayout,
   { parameter, format }: OptionLine,
   normalisation: Normalisation,
 ): Complex {
   const entry = (offset: number | null): Complex =>
     offset === null ? zero : complexOf(values[start + offset], values[start + offset + 1], format);
   const { port } = normalisation;
-  if (parameter === 'S') return entry(port === 1 ? points.at11 : points.at22);
+  if (parameter === 'S') return entry(port === 1 ? layout.at11 : layout.at22);
   const [scale11, scale22, scaleProduct] = scalesOf(parameter, normalisation);
-  const n11 = times(entry(points.at11), [scale11, 0]);
-  if (points.ports === 1) {
+  const n11 = times(entry(layout.at11), [scale11, 0]);
+  if (layout.ports === 1) {
     return parameter === 'Z'
       ? divided(minus(n11, one), plus(n11, one))
       : divided(minus(one, n11), plus(one, n11));
   }
-  const n22 = times(entry(points.at22), [scale22, 0]);
-  const product = times(times(entry(points.at12), entry(points.at21)), [scaleProduct, 0]);
+  const n22 = times(entry(layout.at22), [scale22, 0]);
+  const product = times(times(entry(layout.at12), entry(layout.at21)), [scaleProduct, 0]);
   return twoPortReflection(parameter, port, n11, n22, product);
 }
 

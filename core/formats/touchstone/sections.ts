@@ -23,7 +23,7 @@ export interface Sections {
 const noOptionLine =
   'Add the option line that the instrument should have written, for instance `# Hz S RI R 50` with the unit, format and reference that hold. No default is taken, since a wrong unit changes every frequency.';
 const otherReference =
-  /(?:port\s*impedance|reference\s*impedance|port\s*z|\bz0\b|\bgamma\b)[^0-9]*[-+]?\d/i;
+  /(?:port\s*impedance|reference\s*impedance|port\s*z|\bz0\b|\bgamma\b)[^0-9]{0,40}\d/i;
 
 /** Takes the lines of a file apart. `givenOption`: an option line for a file that has none. */
 export function readSections(text: string, givenOption?: string): Result<Sections, ReadError> {
@@ -64,17 +64,22 @@ class SectionReader {
 
   private readLine(ink: number): Result<never, ReadError> | null {
     if (ink === 33) return this.readComment();
-    if (this.keywords?.phase === 'information') return this.passInformation(ink);
+    if (this.keywords?.phase === 'information') return this.passInformation();
     if (ink === 35) return this.readOption();
     if (ink === 91) return this.readKeywordLine();
     return this.readNumbers();
   }
 
+  /** Liberties that could recur on every line are told once. */
+  private hasTold(told: string): boolean {
+    return this.assumptions.some(({ code }) => code === told);
+  }
+
   private readComment(): null {
     const { walker, text } = this;
-    const hasSaid = this.assumptions.some(({ code }) => code === 'comment_names_reference');
+    if (this.hasTold('comment_names_reference')) return null;
     const comment = text.slice(walker.start, Math.min(walker.end, walker.start + 400));
-    if (!hasSaid && otherReference.test(comment)) {
+    if (otherReference.test(comment)) {
       const detail =
         'A comment names a port impedance or propagation constant. Comments are not data: the reference of the option line holds.';
       this.assumptions.push({ code: 'comment_names_reference', detail, line: walker.number });
@@ -82,8 +87,11 @@ class SectionReader {
     return null;
   }
 
-  private passInformation(ink: number): Result<never, ReadError> | null {
-    return ink === 91 ? this.readKeywordLine() : null;
+  /** An information block is opaque text up to its end. */
+  private passInformation(): Result<never, ReadError> | null {
+    return /^\[\s*end\s+information\s*\]/i.test(this.walker.content())
+      ? this.readKeywordLine()
+      : null;
   }
 
   private readOption(): Result<never, ReadError> | null {
@@ -106,7 +114,7 @@ class SectionReader {
 
   private passSecondOption(content: string, line: number): null {
     const same = (one: string) => one.toUpperCase().replace(/\s+/g, ' ');
-    if (same(content) !== same(this.optionText)) {
+    if (!this.hasTold('second_option_line') && same(content) !== same(this.optionText)) {
       const detail = `A second option line differs from the first (\`${this.optionText}\`); the first holds.`;
       this.assumptions.push({ code: 'second_option_line', detail, line });
     }
@@ -126,7 +134,7 @@ class SectionReader {
     }
     const read = readKeyword(this.keywords, walker.content(), place, this.option !== null);
     if (!read.ok) return read;
-    this.assumptions.push(...read.value);
+    this.assumptions.push(...read.value.filter(({ code }) => !this.hasTold(code)));
     return null;
   }
 
@@ -139,7 +147,7 @@ class SectionReader {
         const detail = `Line ${line} has data after \`[End]\`.`;
         return refuse('data_after_end', detail, 'Remove what stands after `[End]`.', { line });
       }
-      if (keywords.phase === 'noise') return null;
+      if (keywords.phase === 'noise') return this.passNoise(line);
       if (keywords.phase !== 'network') {
         const detail = `Line ${line} has data before \`[Network Data]\`.`;
         return refuse('data_before_network', detail, 'Put `[Network Data]` before the data.', {
@@ -152,6 +160,13 @@ class SectionReader {
       if (given !== null) return given;
     }
     return this.numbers === null ? null : this.readRows(this.numbers);
+  }
+
+  private passNoise(line: number): null {
+    if (this.hasTold('noise_passed_over')) return null;
+    const detail = 'The rows of noise parameters were passed over.';
+    this.assumptions.push({ code: 'noise_passed_over', detail, line });
+    return null;
   }
 
   private readRows(numbers: DataLineReader): Result<never, ReadError> | null {
@@ -189,12 +204,8 @@ class SectionReader {
       );
     }
     const { tolerated } = this.numbers;
-    const pointLine = tolerated.commaLine === null ? null : firstRowWithPoint(this.text, network);
-    if (pointLine !== null) {
-      const detail = `Some numbers have a comma (line ${tolerated.commaLine}), others a point (line ${pointLine}): which is the decimal mark cannot be told.`;
-      const remedy = 'Write all numbers with a decimal point and without thousands marks.';
-      return refuse('decimal_mixed', detail, remedy, { line: tolerated.commaLine ?? pointLine });
-    }
+    const fault = this.checkCommas(tolerated);
+    if (fault !== null) return fault;
     if (keywords !== null && keywords.phase !== 'ended') {
       const detail = 'The file does not close with `[End]`; it was taken as whole.';
       this.assumptions.push({ code: 'end_missing', detail, line: this.walker.number });
@@ -207,6 +218,20 @@ class SectionReader {
       tolerated,
       assumptions: this.assumptions,
     });
+  }
+
+  /** A comma is taken for the decimal mark only if no number speaks against it and one for it. */
+  private checkCommas({ commaLine, isCommaSure }: Tolerated): Result<never, ReadError> | null {
+    if (commaLine === null) return null;
+    const remedy = 'Write all numbers with a decimal point and without thousands marks.';
+    const pointLine = firstRowWithPoint(this.text, this.network);
+    if (pointLine !== null) {
+      const detail = `Some numbers have a comma (line ${commaLine}), others a point (line ${pointLine}): which is the decimal mark cannot be told.`;
+      return refuse('decimal_mixed', detail, remedy, { line: commaLine });
+    }
+    if (isCommaSure) return null;
+    const detail = `Every comma (from line ${commaLine} on) stands before three digits: whether it is a decimal mark or parts thousands cannot be told.`;
+    return refuse('decimal_ambiguous', detail, remedy, { line: commaLine });
   }
 }
 

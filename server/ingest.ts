@@ -3,6 +3,7 @@ import type { ReadError, ReadLimits, ReadSweep } from '../core/formats/read-type
 import { fail, ok, type Result } from '../core/result.ts';
 import { analyseOn, basisOf, summaryOf, usableOf } from './reports.ts';
 import type {
+  AnalyzerRecord,
   AntennaRecord,
   NewSweep,
   StoredSummary,
@@ -19,6 +20,7 @@ export interface Incoming {
   readonly receivedAt: string;
   readonly uploadedBy: string;
   readonly antenna: AntennaRecord;
+  readonly analyzer: AnalyzerRecord | null;
   readonly facts: SweepFacts;
   readonly bytes: Uint8Array;
   /** Lower-case hex of `bytes`. */
@@ -52,11 +54,11 @@ export function ingest(incoming: Incoming): Result<NewSweep, ReadError> {
 }
 
 function derivedFrom(
-  { antenna }: Incoming,
+  { antenna, analyzer }: Incoming,
   record: SweepRecord,
   { sweep, assumptions }: ReadSweep,
 ): StoredSummary {
-  const basis = basisOf(antenna.facts, record);
+  const basis = basisOf(antenna.facts, analyzer?.facts.residualErrors ?? null, record);
   const analysis = analyseOn(basis, sweep);
   return {
     analysisVersion: basis.analysisVersion,

@@ -2,7 +2,7 @@ import type { DemoClub, DemoUpload } from './demo/club.ts';
 import { sha256 } from './http/digests.ts';
 import { ingest } from './ingest.ts';
 import type { Service } from './service.ts';
-import type { Actor, AntennaRecord } from './store/port.ts';
+import type { Actor, AnalyzerRecord, AntennaRecord } from './store/port.ts';
 
 /** Adds the demo club's records to the actor's club, its sweeps by the way of every upload. */
 export async function loadDemo(service: Service, actor: Actor, demo: DemoClub): Promise<void> {
@@ -12,10 +12,10 @@ export async function loadDemo(service: Service, actor: Actor, demo: DemoClub): 
     const { id } = await store.addEditable('sites', actor, { id: newId(), key, facts });
     siteIds.set(key, id);
   }
-  const analyzerIds = new Map<string, string>();
+  const analyzers = new Map<string, AnalyzerRecord>();
   for (const { key, facts } of demo.analyzers) {
-    const { id } = await store.addEditable('analyzers', actor, { id: newId(), key, facts });
-    analyzerIds.set(key, id);
+    const fresh = { id: newId(), key, facts };
+    analyzers.set(key, await store.addEditable('analyzers', actor, fresh));
   }
   const antennas = new Map<string, AntennaRecord>();
   for (const { key, siteKey, facts } of demo.antennas) {
@@ -24,8 +24,8 @@ export async function loadDemo(service: Service, actor: Actor, demo: DemoClub): 
   }
   for (const upload of demo.uploads) {
     const antenna = found(antennas, upload.antennaKey);
-    const analyzerId = found(analyzerIds, upload.analyzerKey);
-    await keepUpload(service, actor, upload, antenna, analyzerId);
+    const analyzer = found(analyzers, upload.analyzerKey);
+    await keepUpload(service, actor, upload, antenna, analyzer);
   }
 }
 
@@ -34,7 +34,7 @@ async function keepUpload(
   actor: Actor,
   upload: DemoUpload,
   antenna: AntennaRecord,
-  analyzerId: string,
+  analyzer: AnalyzerRecord,
 ): Promise<void> {
   const { conditions, note, plane, bytes, fileName } = upload;
   const measuredAt = new Date(upload.measuredAt).toISOString();
@@ -44,9 +44,10 @@ async function keepUpload(
     receivedAt: actor.at,
     uploadedBy: actor.memberId,
     antenna,
+    analyzer,
     facts: {
       antennaId: antenna.id,
-      analyzerId,
+      analyzerId: analyzer.id,
       measuredAt,
       conditions,
       note,

@@ -1,15 +1,22 @@
 import { standingCautions } from '../core/advice/cautions.ts';
 import { type Analysis, analyse } from '../core/analysis/analysis.ts';
+import { instrumentErrorOf } from '../core/analysis/instrument-error.ts';
 import { curveOf } from '../core/analysis/refined-swr.ts';
-import { renormaliseSweep } from '../core/analysis/renormalise-sweep.ts';
 import { analysisVersion, summariseAnalysis } from '../core/analysis/summarise.ts';
 import { findPlan } from '../core/bands/plans.ts';
 import { usableBands } from '../core/bands/usable.ts';
 import type { Assumption } from '../core/formats/read-types.ts';
+import { renormaliseSweep } from '../core/network/renormalise.ts';
 import type { Sweep } from '../core/sweep.ts';
 import { Problem } from './problems.ts';
 import type { Service } from './service.ts';
-import type { AntennaFacts, SweepFacts, SweepMeasured, SweepRecord } from './store/port.ts';
+import type {
+  AntennaFacts,
+  ResidualErrors,
+  SweepFacts,
+  SweepMeasured,
+  SweepRecord,
+} from './store/port.ts';
 import { toSweep } from './stored-points.ts';
 import { toSnakeCase } from './wire/case.ts';
 import { type SweepIdentity, summaryToWire } from './wire/summary.ts';
@@ -24,6 +31,8 @@ export interface ReportBasis {
   readonly plan: string;
   readonly licence: string | null;
   readonly designBands: readonly string[];
+  /** What is known of the analyzer's own error; null: nothing. */
+  readonly residualErrors: ResidualErrors | null;
 }
 
 /** What of a record bears on how its sweep can be judged. */
@@ -36,11 +45,24 @@ export interface JudgedRecord {
  * The basis by which an antenna wants a sweep judged. A sweep without phase keeps the reference of
  * its file: it cannot be moved to another.
  */
-export function basisOf(antenna: AntennaFacts, { facts, measured }: JudgedRecord): ReportBasis {
+export function basisOf(
+  antenna: AntennaFacts,
+  residualErrors: ResidualErrors | null,
+  { facts, measured }: JudgedRecord,
+): ReportBasis {
   const { maxSwr, plan, licence, designBands } = antenna;
   const { plane } = facts;
   const referenceOhm = measured.phase === 'none' ? measured.referenceOhm : antenna.referenceOhm;
-  return { analysisVersion, plane, referenceOhm, maxSwr, plan, licence, designBands };
+  return {
+    analysisVersion,
+    plane,
+    referenceOhm,
+    maxSwr,
+    plan,
+    licence,
+    designBands,
+    residualErrors,
+  };
 }
 
 /** The basis by which the sweep's antenna wants it judged at present. */
@@ -48,12 +70,23 @@ export async function reportBasisOf(service: Service, record: SweepRecord): Prom
   const { antennaId } = record.facts;
   const antenna = await service.store.findEditable('antennas', record.clubId, antennaId);
   if (antenna === null) throw new Error(`The antenna ${antennaId} of sweep ${record.id} is gone.`);
-  return basisOf(antenna.facts, record);
+  return basisOf(antenna.facts, await residualErrorsOf(service, record), record);
+}
+
+/** What is known of the error of the analyzer that took a sweep. */
+async function residualErrorsOf(
+  service: Service,
+  { clubId, facts }: SweepRecord,
+): Promise<ResidualErrors | null> {
+  if (facts.analyzerId === null) return null;
+  const analyzer = await service.store.findEditable('analyzers', clubId, facts.analyzerId);
+  return analyzer?.facts.residualErrors ?? null;
 }
 
 /** The analysis from which both the summary and the report on this basis are read. */
-export function analyseOn({ referenceOhm }: ReportBasis, sweep: Sweep): Analysis {
-  return analyse(renormaliseSweep(sweep, referenceOhm));
+export function analyseOn({ referenceOhm, residualErrors }: ReportBasis, sweep: Sweep): Analysis {
+  const instrument = residualErrors === null ? null : instrumentErrorOf(residualErrors);
+  return analyse(renormaliseSweep(sweep, referenceOhm), instrument);
 }
 
 /** The summary of a sweep as it is sent; `analysis` is that on this basis. */
@@ -61,11 +94,11 @@ export function summaryOf(
   record: SweepRecord,
   analysis: Analysis,
   assumptions: readonly Assumption[],
-  { plane }: ReportBasis,
+  { plane, residualErrors }: ReportBasis,
 ) {
   const summary = summariseAnalysis(analysis, { plane, assumptions });
   const cautions = [...summary.cautions, ...standingCautions];
-  return summaryToWire(identityOf(record), { ...summary, cautions });
+  return summaryToWire(identityOf(record), { ...summary, cautions }, residualErrors);
 }
 
 /** The usable-band report of a sweep as it is sent; `analysis` is that on this basis. */
@@ -114,8 +147,8 @@ function identityOf({ id, facts }: SweepRecord): SweepIdentity {
 }
 
 /** The fields by which a stored summary tells what it follows from. */
-function summaryMark({ plane, referenceOhm }: ReportBasis) {
-  return toSnakeCase({ plane, referenceOhm });
+export function summaryMark({ plane, referenceOhm, residualErrors }: ReportBasis) {
+  return toSnakeCase({ plane, referenceOhm, residualErrors });
 }
 
 /** Whether a stored answer has these fields, so that it is the answer that is asked for. */

@@ -42,13 +42,26 @@ const benchFiles: readonly WriteSweepFile[] = [
   touchstone1TwoPort('MHZ', 'MA'),
 ];
 
-function inventedFacts(name: string, note: string): AnalyzerFacts {
-  return { name: `${name} (invented)`, note: `Invented for the demo. ${note}`, invented: true };
+function inventedFacts(
+  name: string,
+  note: string,
+  residualErrors: AnalyzerFacts['residualErrors'] = null,
+): AnalyzerFacts {
+  return {
+    name: `${name} (invented)`,
+    residualErrors,
+    note: `Invented for the demo. ${note}`,
+    invented: true,
+  };
 }
 
 export const instruments: Readonly<Record<DemoAnalyzerKey, Instrument>> = {
   bench: {
-    facts: inventedFacts('Bench analyzer', 'Two ports, checked with a load before each day.'),
+    facts: inventedFacts('Bench analyzer', 'Two ports, checked with a load before each day.', {
+      directivityDb: 46,
+      sourceMatchDb: 40,
+      trackingDb: 0.05,
+    }),
     errors: {
       frequencyScale: 1,
       directivity: { re: 0.002, im: -0.001 },

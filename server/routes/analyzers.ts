@@ -4,6 +4,7 @@ import type { App } from '../http/app-type.ts';
 import { pageRequest, sendPage } from '../http/pages.ts';
 import type { Service } from '../service.ts';
 import type { AnalyzerRecord } from '../store/port.ts';
+import { toCamelCase, toSnakeCase } from '../wire/case.ts';
 import {
   editHeaders,
   idOrKeySchema,
@@ -17,6 +18,7 @@ import {
 } from '../wire/common.ts';
 import { editableFields, editableToWire, withEdits } from '../wire/editable.ts';
 import { answers, jsonAnswer, notModified } from '../wire/problem.ts';
+import { residualErrorsSchema } from '../wire/residual-errors.ts';
 import {
   addEditable,
   addProblems,
@@ -35,17 +37,32 @@ const nameSchema = z
   .meta({ description: 'What the members call it.', examples: ['Bench analyzer'] });
 
 const analyzerSchema = z
-  .object({ ...editableFields, name: nameSchema, note: noteSchema, invented: inventedSchema })
+  .object({
+    ...editableFields,
+    name: nameSchema,
+    residual_errors: residualErrorsSchema.nullable(),
+    note: noteSchema,
+    invented: inventedSchema,
+  })
   .meta({ id: 'Analyzer', description: 'One instrument that takes sweeps.' });
 
-const facts = { key: keySchema, name: nameSchema, note: noteSchema };
-const createSchema = z.strictObject({ ...facts, note: noteSchema.default('') });
+const facts = {
+  key: keySchema,
+  name: nameSchema,
+  residual_errors: residualErrorsSchema.nullable(),
+  note: noteSchema,
+};
+const createSchema = z.strictObject({
+  ...facts,
+  residual_errors: facts.residual_errors.default(null),
+  note: noteSchema.default(''),
+});
 const editSchema = z.strictObject(facts).partial();
 const params = z.strictObject({ analyzer: idOrKeySchema });
 const tags = ['analyzers'];
 
 function toWire(record: AnalyzerRecord): z.output<typeof analyzerSchema> {
-  return { ...editableToWire(record), ...record.facts };
+  return { ...editableToWire(record), ...toSnakeCase(record.facts) };
 }
 
 /** The instruments of the club. */
@@ -90,7 +107,7 @@ export function analyzerRoutes(app: App, service: Service): void {
     },
     (request, reply) => {
       const { key, ...facts } = request.body;
-      const fresh = { key, facts: { ...facts, invented: false } };
+      const fresh = { key, facts: { ...toCamelCase(facts), invented: false } };
       return addEditable(request, reply, service, 'analyzers', fresh, toWire);
     },
   );
@@ -134,7 +151,7 @@ export function analyzerRoutes(app: App, service: Service): void {
     async (request, reply) => {
       const present = await findOrRefuse(request, service, 'analyzers', request.params.analyzer);
       const { key = present.key, ...edits } = request.body;
-      const next = { key, facts: withEdits(present.facts, edits) };
+      const next = { key, facts: withEdits(present.facts, toCamelCase(edits)) };
       return editEditable(request, reply, service, 'analyzers', present, next, toWire);
     },
   );

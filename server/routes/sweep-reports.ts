@@ -3,7 +3,13 @@ import type { App } from '../http/app-type.ts';
 import { isNotModified } from '../http/conditional.ts';
 import { derivedTag } from '../http/etags.ts';
 import { Problem } from '../problems.ts';
-import { type ReportBasis, reportBasisOf, summaryText, usableText } from '../reports.ts';
+import {
+  type ReportBasis,
+  reportBasisOf,
+  summaryMark,
+  summaryText,
+  usableText,
+} from '../reports.ts';
 import type { Service } from '../service.ts';
 import type { SweepRecord } from '../store/port.ts';
 import { readHeaders } from '../wire/common.ts';
@@ -72,7 +78,12 @@ export function sweepReportRoutes(app: App, service: Service): void {
       const basis = withEdits(await reportBasisOf(service, record), {
         referenceOhm: reference_ohm,
       });
-      const tag = derivedTag(['summary', record.id, basis.analysisVersion, basis.referenceOhm]);
+      const tag = derivedTag([
+        'summary',
+        record.id,
+        basis.analysisVersion,
+        JSON.stringify(summaryMark(basis)),
+      ]);
       if (isNotModified(request, reply, tag)) return reply.code(304).send();
       return reply.type('application/json').send(await summaryText(service, record, basis));
     },

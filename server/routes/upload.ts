@@ -8,10 +8,10 @@ import { readProblem } from '../http/read-problems.ts';
 import { bodyBytes, uploadedFile } from '../http/upload-body.ts';
 import { ingest } from '../ingest.ts';
 import { Problem } from '../problems.ts';
-import { basisOf, summaryText } from '../reports.ts';
+import { reportBasisOf, summaryText } from '../reports.ts';
 import { sampleFile } from '../sample-file.ts';
 import type { Service } from '../service.ts';
-import type { AntennaRecord, SweepFacts, SweepRecord } from '../store/port.ts';
+import type { AnalyzerRecord, AntennaRecord, SweepFacts, SweepRecord } from '../store/port.ts';
 import { idOrKeySchema, timeInputSchema } from '../wire/common.ts';
 import { answers, commonProblems, jsonAnswer } from '../wire/problem.ts';
 import { planeSchema } from '../wire/summary.ts';
@@ -112,18 +112,18 @@ export function uploadRoutes(app: App, service: Service): void {
     },
     async (request, reply) => {
       const antenna = await findOrRefuse(request, service, 'antennas', request.params.antenna);
-      const facts = await factsOf(request, service, antenna, request.query);
-      return keepSweep(request, reply, service, { antenna, facts, query: request.query });
+      const told = await toldOf(request, service, antenna, request.query);
+      return keepSweep(request, reply, service, told);
     },
   );
 }
 
-async function factsOf(
+async function toldOf(
   request: FastifyRequest,
   service: Service,
   antenna: AntennaRecord,
   query: UploadQuery,
-): Promise<SweepFacts> {
+): Promise<Told> {
   const { measured_at: measuredAt = null, analyzer } = query;
   if (measuredAt !== null && Date.parse(measuredAt) > service.now() + clockToleranceMs) {
     throw new Problem('implausible-fact', {
@@ -131,22 +131,25 @@ async function factsOf(
     });
   }
   const place = { parameter: 'analyzer' };
-  return {
+  const known =
+    analyzer === undefined
+      ? null
+      : await resolveReference(request, service, 'analyzers', analyzer, place);
+  const facts: SweepFacts = {
     antennaId: antenna.id,
-    analyzerId:
-      analyzer === undefined
-        ? null
-        : (await resolveReference(request, service, 'analyzers', analyzer, place)).id,
+    analyzerId: known?.id ?? null,
     measuredAt,
     conditions: query.conditions ?? null,
     note: query.note,
     plane: query.plane,
     invented: false,
   };
+  return { antenna, analyzer: known, facts, query };
 }
 
 interface Told {
   readonly antenna: AntennaRecord;
+  readonly analyzer: AnalyzerRecord | null;
   readonly facts: SweepFacts;
   readonly query: UploadQuery;
 }
@@ -155,7 +158,7 @@ async function keepSweep(
   request: FastifyRequest,
   reply: FastifyReply,
   service: Service,
-  { antenna, facts, query }: Told,
+  { antenna, analyzer, facts, query }: Told,
 ): Promise<FastifyReply> {
   checkContentDigest(request.headers['content-digest'], bodyBytes(request));
   const { bytes, fileName } = await uploadedFile(request);
@@ -170,6 +173,7 @@ async function keepSweep(
     receivedAt: at,
     uploadedBy: memberId,
     antenna,
+    analyzer,
     facts,
     bytes,
     fileSha256,
@@ -199,7 +203,7 @@ async function sendKnown(
       members: { existing: { sweep_id: record.id, antenna_id: antennaId, url } },
     });
   }
-  const summaryJson = await summaryText(service, record, basisOf(antenna.facts, record));
+  const summaryJson = await summaryText(service, record, await reportBasisOf(service, record));
   return sendRecord(reply.code(200), service, record, summaryJson);
 }
 

@@ -98,8 +98,17 @@ export interface AntennaFacts {
   readonly invented: boolean;
 }
 
+/** Residual errors of a calibrated analyzer, dB; null where one is not known. */
+export interface ResidualErrors {
+  readonly directivityDb: number | null;
+  readonly sourceMatchDb: number | null;
+  readonly trackingDb: number | null;
+}
+
 export interface AnalyzerFacts {
   readonly name: string;
+  /** What is left of its errors after calibration, stated or measured; null: none is known. */
+  readonly residualErrors: ResidualErrors | null;
   readonly note: string;
   readonly invented: boolean;
 }

@@ -1,7 +1,9 @@
 import { z } from 'zod';
 import type { Summary } from '../../core/analysis/summary.ts';
+import type { ResidualErrors } from '../store/port.ts';
 import { toSnakeCase } from './case.ts';
 import { frequencySchema, idSchema } from './common.ts';
+import { residualErrorsSchema } from './residual-errors.ts';
 import { rounded } from './rounding.ts';
 
 export const cautionSchema = z
@@ -97,6 +99,7 @@ export const summarySchema = z
     analysis_version: z.string(),
     plane: planeSchema,
     reference_ohm: z.number(),
+    residual_errors: residualErrorsSchema.nullable(),
     phase: phaseSchema,
     span: z.object({
       low_hz: frequencySchema,
@@ -154,6 +157,12 @@ export interface SweepIdentity {
 export function summaryToWire(
   { sweepId, antennaId }: SweepIdentity,
   summary: Summary,
+  residualErrors: ResidualErrors | null,
 ): z.output<typeof summarySchema> {
-  return { sweep_id: sweepId, antenna_id: antennaId, ...rounded(toSnakeCase(summary)) };
+  return {
+    sweep_id: sweepId,
+    antenna_id: antennaId,
+    ...rounded(toSnakeCase(summary)),
+    residual_errors: toSnakeCase(residualErrors),
+  };
 }

@@ -2,9 +2,11 @@ import { z } from 'zod';
 import type { Plane } from '../../core/analysis/summary.ts';
 import { bandNames } from '../../core/bands/plan.ts';
 import type { UsableReport } from '../../core/bands/usable-report.ts';
+import type { ResidualErrors } from '../store/port.ts';
 import { toSnakeCase } from './case.ts';
 import { frequencySchema, idSchema } from './common.ts';
 import { familySchema, statusSchema } from './plan.ts';
+import { residualErrorsSchema } from './residual-errors.ts';
 import { rounded } from './rounding.ts';
 import { cautionSchema, planeSchema, type SweepIdentity } from './summary.ts';
 
@@ -57,6 +59,7 @@ export const usableSchema = z
     analysis_version: z.string(),
     plane: planeSchema,
     reference_ohm: z.number(),
+    residual_errors: residualErrorsSchema.nullable(),
     plan: z.string(),
     licence: z.string().nullable(),
     max_swr: z.number(),
@@ -68,6 +71,7 @@ export const usableSchema = z
 
 /** How a sweep is looked at for a report, beside what the report itself says. */
 interface ReportBasis {
+  readonly residualErrors: ResidualErrors | null;
   readonly analysisVersion: string;
   readonly plane: Plane;
   readonly referenceOhm: number;
@@ -87,6 +91,7 @@ export function usableToWire(
     plane: basis.plane,
     reference_ohm: basis.referenceOhm,
     design_bands: [...basis.designBands],
+    residual_errors: toSnakeCase(basis.residualErrors),
     ...rounded(toSnakeCase(report)),
   };
 }

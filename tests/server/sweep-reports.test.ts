@@ -145,3 +145,54 @@ describe('a usable-band report', () => {
     expect((await get('/usable')).body).toBe(before.body);
   });
 });
+
+describe("what is known of an analyzer's own error", () => {
+  const stated = { directivity_db: 30, source_match_db: 30, tracking_db: 0.2 };
+
+  async function summaryBy(club: TestApp, residual_errors: object | null) {
+    const key = residual_errors === null ? 'unknown' : 'known';
+    const payload = { key, name: 'An analyzer', residual_errors };
+    const added = await club.call({ method: 'POST', url: '/v1/analyzers', payload });
+    expect(added.statusCode).toBe(201);
+    const file = resonatorFile({ comment: key });
+    const { id, summary } = (await upload(club, file, `?analyzer=${key}`)).json();
+    return { id, summary };
+  }
+
+  it('widens the half-widths of SWR and resistance, and is told beside them', async () => {
+    const club = await makeTestApp();
+    await addAntenna(club);
+    const bare = (await summaryBy(club, null)).summary;
+    const full = (await summaryBy(club, stated)).summary;
+    expect(bare.residual_errors).toBeNull();
+    expect(full.residual_errors).toEqual(stated);
+    expect(full.minimum_swr.swr).toBe(bare.minimum_swr.swr);
+    // Directivity of 30 dB alone: 0.0316 of the reflection, about 2 x 0.0316 / (1 - 0.09)² of SWR.
+    expect(full.minimum_swr.swr_u95 - bare.minimum_swr.swr_u95).toBeGreaterThan(0.05);
+    expect(full.resonances[0].resistance_u95_ohm).toBeGreaterThan(2);
+    const codes = (summary: { cautions: { code: string }[] }) =>
+      summary.cautions.map(({ code }) => code);
+    expect(codes(bare)).toContain('noise_only');
+    expect(codes(full)).not.toContain('noise_only');
+    await club.close();
+  });
+
+  it('that is learnt later changes the summary and its tag', async () => {
+    const club = await makeTestApp();
+    await addAntenna(club);
+    const { id } = await summaryBy(club, null);
+    const before = await club.call({ url: `/v1/sweeps/${id}/summary` });
+    const analyzer = await club.call({ url: '/v1/analyzers/unknown' });
+    const edit = await club.call({
+      method: 'PATCH',
+      url: '/v1/analyzers/unknown',
+      headers: { 'if-match': String(analyzer.headers['etag']) },
+      payload: { residual_errors: stated },
+    });
+    expect(edit.json().residual_errors).toEqual(stated);
+    const after = await club.call({ url: `/v1/sweeps/${id}/summary` });
+    expect(after.headers['etag']).not.toBe(before.headers['etag']);
+    expect(after.json().minimum_swr.swr_u95).toBeGreaterThan(before.json().minimum_swr.swr_u95);
+    await club.close();
+  });
+});

@@ -29,7 +29,12 @@ export const siteFacts: SiteFacts = {
   invented: true,
 };
 
-export const analyzerFacts: AnalyzerFacts = { name: 'Bench unit', note: '', invented: true };
+export const analyzerFacts: AnalyzerFacts = {
+  name: 'Bench unit',
+  residualErrors: null,
+  note: '',
+  invented: true,
+};
 
 export function antennaFacts(siteId: string): AntennaFacts {
   return {

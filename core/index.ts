@@ -45,6 +45,24 @@ export type { Conditioning, Standing } from './line/conditioning.ts';
 export { type FeedLine, type FeedLineSection, resolveFeedLine } from './line/feed-line.ts';
 export { type FeedPointSummary, feedPointSummary } from './line/feed-point-summary.ts';
 export { fromFeedPoint, matchedLossDb, toFeedPoint } from './line/line.ts';
+export {
+  type Impedance,
+  type Impedances,
+  impedanceOf,
+  type Reflection,
+  type ReflectionColumns,
+  reflectionOf,
+  reflectionsOf,
+  sweepImpedances,
+} from './network/impedance.ts';
+export { renormalise, renormaliseSweep } from './network/renormalise.ts';
+export {
+  magnitudeOfReturnLoss,
+  mismatchLossDb,
+  returnLossDb,
+  sweepReturnLossDb,
+} from './network/return-loss.ts';
+export { magnitudeOfSwr, sweepSwr, swrOf } from './network/swr.ts';
 export { fail, ok, type Result } from './result.ts';
 export {
   type ComplexSweep,

@@ -1,7 +1,7 @@
+import { renormaliseSweep } from '../network/renormalise.ts';
 import { fail, ok, type Result } from '../result.ts';
 import type { Sweep } from '../sweep.ts';
 import type { InstrumentError } from './instrument-error.ts';
-import { renormaliseSweep } from './renormalise-sweep.ts';
 
 /** A sweep of a load whose resistance is known: 0 for a short, Infinity for an open. */
 export interface LoadCheck {

@@ -1,4 +1,5 @@
 import type { Assumption } from '../formats/read-types.ts';
+import { renormaliseSweep } from '../network/renormalise.ts';
 import type { Sweep } from '../sweep.ts';
 import { absences, type Draft } from './absences.ts';
 import { type Analysis, analyse } from './analysis.ts';
@@ -7,7 +8,6 @@ import { valueAt } from './piecewise-model.ts';
 import { qualityFlags } from './quality.ts';
 import { reactanceMagnitudeMinima } from './reactance-magnitude.ts';
 import { spansOf, swrOfSquare, swrU95OfSquare } from './refined-swr.ts';
-import { renormaliseSweep } from './renormalise-sweep.ts';
 import { findResonances } from './resonances.ts';
 import type { Plane, Resonance, Summary, SwrMinimum } from './summary.ts';
 import { summaryCautions } from './summary-cautions.ts';

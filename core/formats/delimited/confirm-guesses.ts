@@ -1,9 +1,9 @@
 import { type Agreement, agrees, Recomputation } from './agreement.ts';
 import { checkValues } from './check-values.ts';
 import type { ColumnGuess, DoubtKind } from './column-guess.ts';
+import { usualReferencesOhm } from './confirm-columns.ts';
 import type { Frame, PlacedColumn } from './frame.ts';
 import { factsOf, type Quantity } from './quantities.ts';
-import { usualReferencesOhm } from './read-mapped.ts';
 import { readRows } from './read-rows.ts';
 import { type ChosenRecipe, recipeFor } from './recipes.ts';
 import type { TableText } from './table-text.ts';

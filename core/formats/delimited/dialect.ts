@@ -121,11 +121,17 @@ function candidates(sample: readonly string[], told: Told, hasQuotes: boolean): 
   return withoutBlanksBesideTabs(sample, found);
 }
 
-/** Tabs are blanks too: where they part the numbers, single blanks are not asked. */
+/** Tabs are blanks too: where they part the numbers as well, single blanks are not asked. */
 function withoutBlanksBesideTabs(sample: readonly string[], found: Dialect[]): Dialect[] {
-  const tabs = found.filter(({ delimiter }) => delimiter === 'tab');
-  const isTabbed = tabs.some((dialect) => scoreOf(sample, dialect) > sample.length / 2);
-  return isTabbed ? found.filter(({ delimiter }) => delimiter !== 'blanks') : found;
+  const bestOf = (delimiter: Delimiter) =>
+    found
+      .filter((dialect) => dialect.delimiter === delimiter)
+      .reduce((best, dialect) => Math.max(best, scoreOf(sample, dialect)), 0);
+  const isMixed = ['tab', 'blanks'].every((one) =>
+    found.some(({ delimiter }) => delimiter === one),
+  );
+  if (!isMixed || bestOf('tab') < bestOf('blanks')) return found;
+  return found.filter(({ delimiter }) => delimiter !== 'blanks');
 }
 
 /** A row of numbers alone counts one; a row with other cells counts half the share of numbers. */

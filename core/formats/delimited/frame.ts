@@ -4,6 +4,7 @@ import { refuse } from '../touchstone/faults.ts';
 import { LineWalker } from '../touchstone/file-lines.ts';
 import { beginsNumeric, cellsOf, isCommentAt, looksNumeric, saysNoNumber } from './cells.ts';
 import type { ColumnMapping, MappedColumn } from './mapping.ts';
+import type { Quantity } from './quantities.ts';
 import type { TableText } from './table-text.ts';
 
 /** A line before the rows of numbers. */
@@ -26,6 +27,11 @@ export interface Frame {
 /** A mapping whose header texts were found: every address is a column number. */
 export interface PlacedColumn extends MappedColumn {
   readonly address: number;
+}
+
+/** Which of the columns holds a quantity. */
+export function slotOf(columns: readonly PlacedColumn[], quantity: Quantity): number {
+  return columns.findIndex((column) => column.quantity === quantity);
 }
 
 export interface PlacedFrame extends Frame {

@@ -6,7 +6,6 @@ import { delimiterChars, isCommentAt, trimBlanks } from './cells.ts';
 import type { Frame, PlacedColumn } from './frame.ts';
 import { NumberColumns } from './number-columns.ts';
 import { readOddCell } from './odd-cell.ts';
-import { characterCodes, PlainNumbers } from './plain-numbers.ts';
 import { decimalShift } from './quantities.ts';
 import type { TableText } from './table-text.ts';
 
@@ -39,10 +38,6 @@ class RowReader {
   private readonly table: TableText;
   private readonly text: string;
   private readonly scanner: DecimalScanner;
-  /** The codes of the text from `base` on, and the fast reader of numbers in them. */
-  private readonly base: number;
-  private readonly codes: Uint8Array;
-  private readonly plain: PlainNumbers;
   private readonly columns: readonly PlacedColumn[];
   private readonly width: number;
   private readonly maxPoints: number;
@@ -61,9 +56,6 @@ class RowReader {
     this.table = table;
     this.text = table.text;
     this.scanner = new DecimalScanner(table.text);
-    this.base = frame.start;
-    this.codes = characterCodes(table.text, frame.start);
-    this.plain = new PlainNumbers(this.codes);
     this.columns = columns;
     this.width = frame.width;
     this.maxPoints = maxPoints;
@@ -75,8 +67,8 @@ class RowReader {
       this.slotOf[address - 1] = slot;
       this.shiftOf[address - 1] = decimalShift(unit);
     }
-    const firstRow = Math.max(4, this.codes.indexOf(lineFeed));
-    const expected = Math.ceil((1.1 * this.codes.length) / firstRow) + 8;
+    const firstRow = Math.max(4, this.scanner.codes.indexOf(lineFeed, frame.start) - frame.start);
+    const expected = Math.ceil((1.1 * (table.text.length - frame.start)) / firstRow) + 8;
     this.rows = new NumberColumns(columns.length, Math.min(expected, maxPoints + 1));
     this.at = frame.start;
     this.lineStart = frame.start;
@@ -109,45 +101,39 @@ class RowReader {
    * numbers. Stops at the start of the first line that is anything else.
    */
   private readPlainRows(): void {
-    const { codes, plain, scanner, base, width, slotOf, shiftOf, delimiter, isBlanks, rows } = this;
-    // The last code is no character of the text.
-    const end = codes.length - 1;
-    let at = this.at - base;
-    while (at < end && rows.count < this.maxPoints) {
+    const { scanner, text, width, slotOf, shiftOf, delimiter, isBlanks, rows } = this;
+    // Behind the text stand line feeds, so that every line has an end.
+    const { codes } = scanner;
+    let at = this.at;
+    while (at < text.length && rows.count < this.maxPoints) {
       rows.makeRoom();
       const { values, cellStart, count } = rows;
       for (let column = 0; column < width; column++) {
         const slot = slotOf[column];
         while (codes[at] === space) at += 1;
         if (slot >= 0) {
-          const shift = shiftOf[column];
-          let value = plain.read(at, shift);
-          let next = plain.end;
-          if (Number.isNaN(value)) {
-            value = scanner.read(at + base, shift);
-            if (Number.isNaN(value)) return;
-            next = scanner.end - base;
-          }
+          const value = scanner.read(at, shiftOf[column]);
+          if (Number.isNaN(value)) return;
           values[slot][count] = value;
-          cellStart[slot][count] = at + base;
-          at = next;
+          cellStart[slot][count] = at;
+          at = scanner.end;
           if (!isBlanks) while (codes[at] === space) at += 1;
         } else {
-          while (at < end && codes[at] !== delimiter && !isLineEnd(codes[at])) {
+          while (codes[at] !== delimiter && !isLineEnd(codes[at])) {
             if (isBlanks && codes[at] === tab) break;
             at += 1;
           }
         }
         if (column === width - 1) {
-          if (at < end && !isLineEnd(codes[at])) return;
+          if (!isLineEnd(codes[at])) return;
         } else if (codes[at] === delimiter) at += 1;
         else return;
       }
       rows.line[count] = this.line;
       rows.count = count + 1;
       at += codes[at] === carriageReturn && codes[at + 1] === lineFeed ? 2 : 1;
-      this.at = at + base;
-      this.lineStart = this.at;
+      this.at = at;
+      this.lineStart = at;
       this.line += 1;
     }
   }

@@ -17,6 +17,7 @@ import { measureRequests } from './metrics.ts';
 import { collectRoutes } from './openapi/collect.ts';
 import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
+import { loadCheckRoutes, loadCheckUploadRoutes } from './routes/load-checks.ts';
 import { healthRoutes, metricsRoutes } from './routes/operations.ts';
 import { planRoutes } from './routes/plans.ts';
 import { problemPageRoutes } from './routes/problem-pages.ts';
@@ -78,12 +79,16 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     siteRoutes(behindToken, service);
     antennaRoutes(behindToken, service);
     analyzerRoutes(behindToken, service);
+    loadCheckRoutes(behindToken, service);
     sweepRoutes(behindToken, service);
     sweepPointRoutes(behindToken, service);
     sweepReportRoutes(behindToken, service);
     planRoutes(behindToken);
-    // In a scope of its own, since it takes any body.
-    await behindToken.register(async (scope: App) => uploadRoutes(scope, service));
+    // In a scope of their own, since they take any body.
+    await behindToken.register(async (scope: App) => {
+      uploadRoutes(scope, service);
+      loadCheckUploadRoutes(scope, service);
+    });
   });
   return app;
 }

@@ -5,6 +5,8 @@ import { analyseOn, basisOf, summaryOf, usableOf } from './reports.ts';
 import type {
   AnalyzerRecord,
   AntennaRecord,
+  LoadCheckFacts,
+  NewLoadCheck,
   NewSweep,
   StoredSummary,
   SweepFacts,
@@ -14,14 +16,18 @@ import type {
 import { toStoredPoints } from './stored-points.ts';
 
 /** A file on its way in, and what was told about it. */
-export interface Incoming {
+export interface Incoming extends IncomingFile {
+  readonly antenna: AntennaRecord;
+  readonly analyzer: AnalyzerRecord | null;
+  readonly facts: SweepFacts;
+}
+
+/** What every file comes in with, whatever it is a measurement of. */
+export interface IncomingFile {
   readonly id: string;
   readonly clubId: string;
   readonly receivedAt: string;
   readonly uploadedBy: string;
-  readonly antenna: AntennaRecord;
-  readonly analyzer: AnalyzerRecord | null;
-  readonly facts: SweepFacts;
   readonly bytes: Uint8Array;
   /** Lower-case hex of `bytes`. */
   readonly fileSha256: string;
@@ -36,20 +42,40 @@ export interface Incoming {
  * Values in, values out (no clock, no store, no HTTP), so that it can move to another thread.
  */
 export function ingest(incoming: Incoming): Result<NewSweep, ReadError> {
-  const { bytes, columns, port, fileName, limits } = incoming;
-  const read = readSweep(bytes, {
-    limits,
-    ...(columns === null ? {} : { columns }),
-    ...(port === null ? {} : { port }),
-    ...(fileName === null ? {} : { fileName }),
-  });
+  const read = readIncoming(incoming);
   if (!read.ok) return fail(read.error);
   const record = recordOf(incoming, read.value);
   return ok({
     record,
-    file: bytes,
+    file: incoming.bytes,
     points: toStoredPoints(read.value.sweep),
     summary: derivedFrom(incoming, record, read.value),
+  });
+}
+
+/** Reads a sweep of a known load as it is stored. */
+export function ingestLoadCheck(
+  incoming: IncomingFile,
+  facts: LoadCheckFacts,
+): Result<NewLoadCheck, ReadError> {
+  const read = readIncoming(incoming);
+  if (!read.ok) return fail(read.error);
+  const { id, clubId, receivedAt, uploadedBy, bytes } = incoming;
+  const measured = measuredOf(incoming, read.value);
+  return ok({
+    record: { id, clubId, receivedAt, uploadedBy, facts, measured },
+    file: bytes,
+    points: toStoredPoints(read.value.sweep),
+  });
+}
+
+function readIncoming(incoming: IncomingFile): Result<ReadSweep, ReadError> {
+  const { bytes, columns, port, fileName, limits } = incoming;
+  return readSweep(bytes, {
+    limits,
+    ...(columns === null ? {} : { columns }),
+    ...(port === null ? {} : { port }),
+    ...(fileName === null ? {} : { fileName }),
   });
 }
 
@@ -72,7 +98,7 @@ function recordOf(incoming: Incoming, read: ReadSweep): SweepRecord {
   return { id, clubId, receivedAt, uploadedBy, facts, measured: measuredOf(incoming, read) };
 }
 
-function measuredOf(incoming: Incoming, read: ReadSweep): SweepMeasured {
+function measuredOf(incoming: IncomingFile, read: ReadSweep): SweepMeasured {
   const { sweep, format, assumptions, columns = null, port = null } = read;
   const { frequencyHz, phase, referenceOhm } = sweep;
   return {

@@ -28,6 +28,18 @@ export function instrumentErrorOf(stated: StatedInstrumentError): InstrumentErro
   };
 }
 
+/** The same as stated figures, dB; an error of zero has no such figure and comes back as null. */
+export function statedInstrumentError(error: InstrumentError): StatedInstrumentError {
+  const below = (linear: number | null) =>
+    linear === null || linear === 0 ? null : -20 * Math.log10(linear);
+  const { directivity, sourceMatch, tracking } = error;
+  return {
+    directivityDb: below(directivity),
+    sourceMatchDb: below(sourceMatch),
+    trackingDb: tracking === null ? null : 20 * Math.log10(1 + tracking),
+  };
+}
+
 /**
  * Greatest error of a reflection of this magnitude, whatever the phases: D + T ρ + M ρ² (the one-port
  * error model as in EURAMET cg-12, Guidelines on the Evaluation of Vector Network Analysers).

@@ -40,6 +40,13 @@ function calls(sweep: string): Readonly<Record<string, ExampleCall>> {
     getAnalyzer: { url: '/v1/analyzers/bench' },
     addAnalyzer: { method: 'POST', url: '/v1/analyzers', body: { key: 'loan', name: 'On loan' } },
     editAnalyzer: { ...edit, url: '/v1/analyzers/loan', body: { note: 'given back' } },
+    uploadLoadCheck: {
+      method: 'POST',
+      url: '/v1/analyzers/loan/load-checks?load=50&file_name=load.s1p',
+      body: '# MHz S RI R 50\n3.5 0.004 -0.001\n14 0.005 0.002\n28 0.003 0.004\n',
+      headers: { 'content-type': 'application/octet-stream' },
+    },
+    listLoadChecks: { url: '/v1/analyzers/loan/load-checks' },
     uploadSweep: {
       method: 'POST',
       url: '/v1/antennas/quarry-20m/sweeps?file_name=quarry.s1p&measured_at=2026-05-17T14:30:00Z',

@@ -8,7 +8,7 @@ import { derivedTag, noneMatchHits } from '../http/etags.ts';
 import { safeFileName } from '../http/file-names.ts';
 import { pageRequest, sendPage } from '../http/pages.ts';
 import { Problem } from '../problems.ts';
-import { reportBasisOf, summaryText } from '../reports.ts';
+import { reportBasisOf, summaryMark, summaryText } from '../reports.ts';
 import type { Service } from '../service.ts';
 import type { SweepRecord } from '../store/port.ts';
 import {
@@ -89,7 +89,12 @@ export function sweepRoutes(app: App, service: Service): void {
     async (request, reply) => {
       const record = await findSweepOrRefuse(request, service, request.params.sweep);
       const basis = await reportBasisOf(service, record);
-      const tag = derivedTag(['record', record.id, basis.analysisVersion, basis.referenceOhm]);
+      const tag = derivedTag([
+        'record',
+        record.id,
+        basis.analysisVersion,
+        JSON.stringify(summaryMark(basis)),
+      ]);
       if (isNotModified(request, reply, tag)) return reply.code(304).send();
       const summary = await summaryText(service, record, basis);
       return reply.type('application/json').send(sweepWithSummaryJson(record, summary));

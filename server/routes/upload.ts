@@ -1,70 +1,34 @@
 import type { FastifyReply, FastifyRequest } from 'fastify';
 import { z } from 'zod';
-import { columnsGrammar } from '../../core/formats/delimited/columns-grammar.ts';
 import { actorOf } from '../auth/bearer.ts';
 import type { App } from '../http/app-type.ts';
 import { checkContentDigest, digestField, sha256 } from '../http/digests.ts';
+import { refuseFuture } from '../http/measured-at.ts';
 import { readProblem } from '../http/read-problems.ts';
 import { bodyBytes, uploadedFile } from '../http/upload-body.ts';
 import { ingest } from '../ingest.ts';
 import { Problem } from '../problems.ts';
 import { reportBasisOf, summaryText } from '../reports.ts';
-import { sampleFile } from '../sample-file.ts';
 import type { Service } from '../service.ts';
 import type { AnalyzerRecord, AntennaRecord, SweepFacts, SweepRecord } from '../store/port.ts';
-import { idOrKeySchema, timeInputSchema } from '../wire/common.ts';
-import { answers, commonProblems, jsonAnswer } from '../wire/problem.ts';
+import { idOrKeySchema } from '../wire/common.ts';
+import { answers, jsonAnswer } from '../wire/problem.ts';
 import { planeSchema } from '../wire/summary.ts';
 import { sweepWithSummaryJson, sweepWithSummarySchema } from '../wire/sweep.ts';
+import { fileQuery, fileRequestBody, uploadHeaders, uploadProblems } from '../wire/upload.ts';
 import { findOrRefuse, resolveReference } from './editables.ts';
 
-const columnsDescription = `What the columns of delimited text hold.
-
-\`\`\`
-${columnsGrammar}
-\`\`\``;
-
 const querystring = z.strictObject({
-  measured_at: timeInputSchema.optional(),
+  ...fileQuery,
   analyzer: idOrKeySchema.optional(),
   conditions: z
     .string()
     .max(500)
     .optional()
     .meta({ examples: ['wet ground, 4 degrees'] }),
-  note: z.string().max(2000).default(''),
   plane: planeSchema.default('measured'),
-  columns: z.string().max(2000).optional().meta({ description: columnsDescription }),
-  port: z
-    .enum(['1', '2'])
-    .transform((port) => (port === '1' ? 1 : 2))
-    .optional()
-    .meta({ description: 'Which port of a two-port file the antenna was at.' }),
-  file_name: z.string().min(1).max(255).optional(),
-});
-
-const uploadHeaders = z.looseObject({
-  'content-digest': z.string().optional().meta({
-    description: 'RFC 9530, `sha-256=:<base64>:`: checked against the bytes of the body.',
-  }),
 });
 type UploadQuery = z.output<typeof querystring>;
-
-const binary = { type: 'string', format: 'binary' };
-const requestBody = {
-  description:
-    'The file itself, under any content type, or a form with one part `file`. What kind of file it is is told from its content.',
-  required: true,
-  content: {
-    'application/octet-stream': { schema: binary, example: sampleFile },
-    'multipart/form-data': {
-      schema: { type: 'object', required: ['file'], properties: { file: binary } },
-    },
-  },
-};
-
-/** How far a clock may run ahead before a time of measurement counts as not yet been. */
-const clockToleranceMs = 24 * 3600 * 1000;
 
 /** The upload of a sweep: the one route that takes any body. */
 export function uploadRoutes(app: App, service: Service): void {
@@ -83,7 +47,7 @@ export function uploadRoutes(app: App, service: Service): void {
         params: z.strictObject({ antenna: idOrKeySchema }),
         querystring,
         headers: uploadHeaders,
-        'x-request-body': requestBody,
+        'x-request-body': fileRequestBody,
         response: answers(
           {
             200: jsonAnswer(
@@ -92,21 +56,7 @@ export function uploadRoutes(app: App, service: Service): void {
             ),
             201: jsonAnswer('The record that was made.', sweepWithSummarySchema),
           },
-          [
-            ...commonProblems,
-            'not-found',
-            'digest-mismatch',
-            'digest-unsupported',
-            'file-of-other-antenna',
-            'too-large',
-            'unsupported-media-type',
-            'unknown-file-kind',
-            'unreadable-file',
-            'columns-to-confirm',
-            'unknown-reference',
-            'implausible-fact',
-            'storage-full',
-          ],
+          [...uploadProblems, 'file-of-other-antenna', 'unknown-reference'],
         ),
       },
     },
@@ -125,11 +75,7 @@ async function toldOf(
   query: UploadQuery,
 ): Promise<Told> {
   const { measured_at: measuredAt = null, analyzer } = query;
-  if (measuredAt !== null && Date.parse(measuredAt) > service.now() + clockToleranceMs) {
-    throw new Problem('implausible-fact', {
-      errors: [{ detail: `${measuredAt} has not been yet.`, parameter: 'measured_at' }],
-    });
-  }
+  refuseFuture(measuredAt, service.now());
   const place = { parameter: 'analyzer' };
   const known =
     analyzer === undefined

@@ -188,6 +188,38 @@ export interface NewSweep {
   readonly summary: StoredSummary;
 }
 
+/** What is told about a sweep of a known load. */
+export interface LoadCheckFacts {
+  readonly analyzerId: string;
+  /** The resistance of the load, ohm; 0 is a short, null an open. */
+  readonly loadOhm: number | null;
+  readonly measuredAt: string | null;
+  readonly note: string;
+  readonly invented: boolean;
+}
+
+/** A sweep of a known load by an analyzer, kept for good. */
+export interface LoadCheckRecord {
+  readonly id: string;
+  readonly clubId: string;
+  readonly receivedAt: string;
+  readonly uploadedBy: string;
+  readonly facts: LoadCheckFacts;
+  readonly measured: SweepMeasured;
+}
+
+export interface NewLoadCheck {
+  readonly record: LoadCheckRecord;
+  readonly file: Uint8Array;
+  readonly points: StoredPoints;
+}
+
+/** `known`: the club has a check of these bytes, the one that is answered. */
+export interface AddLoadCheckOutcome {
+  readonly outcome: 'added' | 'known';
+  readonly record: LoadCheckRecord;
+}
+
 /** `same`: these bytes are this antenna's already. `elsewhere`: they are another antenna's. */
 export type AddSweepOutcome =
   | { readonly outcome: 'added'; readonly record: SweepRecord }
@@ -264,6 +296,16 @@ export interface Store {
   readSweepFile(clubId: string, id: string): Promise<Uint8Array | null>;
   readSweepPoints(clubId: string, id: string): Promise<StoredPoints | null>;
   readSummary(clubId: string, id: string, analysisVersion: string): Promise<StoredSummary | null>;
+
+  /** Keeps a sweep of a known load in one act; the same bytes never make a twin. */
+  addLoadCheck(check: NewLoadCheck): Promise<AddLoadCheckOutcome>;
+  /** Newest first by (measuredAt or receivedAt, id). */
+  listLoadChecks(
+    clubId: string,
+    analyzerId: string,
+    page: PageRequest,
+  ): Promise<Page<LoadCheckRecord>>;
+  readLoadCheckPoints(clubId: string, id: string): Promise<StoredPoints | null>;
 
   /** Makes a verified copy of everything in a new file; never half of one. */
   backup(path: string): Promise<void>;

@@ -1,9 +1,10 @@
 import { z } from 'zod';
-import type { SweepRecord } from '../store/port.ts';
+import type { SweepMeasured, SweepRecord } from '../store/port.ts';
 import { frequencySchema, idSchema, inventedSchema, noteSchema, timeSchema } from './common.ts';
 import { assumptionSchema, phaseSchema, planeSchema, summarySchema } from './summary.ts';
 
-const fileSchema = z.object({
+/** The file of a measurement, as it was sent. */
+export const fileSchema = z.object({
   sha256: z.string().regex(/^[0-9a-f]{64}$/),
   bytes: z.int(),
   name: z.string().nullable().meta({ description: 'As the member called it.' }),
@@ -47,6 +48,18 @@ export const sweepWithSummarySchema = z
   .object({ ...sweepSchema.shape, summary: summarySchema })
   .meta({ id: 'SweepWithSummary', description: 'One measurement with what follows from it.' });
 
+/** What is known of a file, as it is sent. */
+export function fileToWire(measured: SweepMeasured): z.output<typeof fileSchema> {
+  return {
+    sha256: measured.fileSha256,
+    bytes: measured.fileBytes,
+    name: measured.fileName,
+    format: measured.format,
+    columns: measured.columns,
+    port: measured.port,
+  };
+}
+
 /** A record as it is sent. */
 export function sweepToWire(record: SweepRecord): z.output<typeof sweepSchema> {
   const { facts, measured } = record;
@@ -61,14 +74,7 @@ export function sweepToWire(record: SweepRecord): z.output<typeof sweepSchema> {
     note: facts.note,
     plane: facts.plane,
     invented: facts.invented,
-    file: {
-      sha256: measured.fileSha256,
-      bytes: measured.fileBytes,
-      name: measured.fileName,
-      format: measured.format,
-      columns: measured.columns,
-      port: measured.port,
-    },
+    file: fileToWire(measured),
     phase: measured.phase,
     reference_ohm: measured.referenceOhm,
     points: measured.points,

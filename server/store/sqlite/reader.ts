@@ -1,7 +1,14 @@
 import type { ClubRecord, EditableKind, PageRequest, TokenRecord } from '../port.ts';
 import type { Codec } from './compression.ts';
 import type { Connection } from './connection.ts';
-import { type ResourceRow, resourceColumns, type SweepRow, sweepColumns } from './rows.ts';
+import {
+  type LoadCheckRow,
+  loadCheckColumns,
+  type ResourceRow,
+  resourceColumns,
+  type SweepRow,
+  sweepColumns,
+} from './rows.ts';
 
 export interface FileRow {
   readonly sha256: Buffer;
@@ -26,6 +33,9 @@ export const listQueries = {
     WHERE sweep_current.club_id = @clubId AND antenna_id = @antennaId
       AND (sort_at, sweep_current.sweep_id) < (@sortAt, @id)
     ORDER BY sort_at DESC, sweep_current.sweep_id DESC LIMIT @limit`,
+  loadChecks: `SELECT ${loadCheckColumns}
+    WHERE club_id = @clubId AND analyzer_id = @analyzerId AND (sort_at, id) < (@sortAt, @id)
+    ORDER BY sort_at DESC, id DESC LIMIT @limit`,
 } as const;
 
 /** Later than any time, so that a first page begins at the newest. */
@@ -90,6 +100,16 @@ export class Reader {
     return this.prepared.points.get(clubId, sweepId)?.points ?? null;
   }
 
+  /** One row more than the page holds, if there is one. */
+  loadChecks(clubId: string, analyzerId: string, { limit, after }: PageRequest): LoadCheckRow[] {
+    const [sortAt, id] = after ?? [afterAllTimes, ''];
+    return this.prepared.loadChecks.all({ clubId, analyzerId, sortAt, id, limit: limit + 1 });
+  }
+
+  loadCheckPoints(clubId: string, id: string): Buffer | null {
+    return this.prepared.loadCheckPoints.get(clubId, id)?.points ?? null;
+  }
+
   summary(clubId: string, sweepId: string, analysisVersion: string): SummaryRow | null {
     return this.prepared.summary.get(clubId, sweepId, analysisVersion) ?? null;
   }
@@ -131,6 +151,10 @@ function prepareAll(connection: Connection) {
     ),
     points: prepare<{ readonly points: Buffer }>(
       'SELECT points FROM sweep WHERE club_id = ? AND id = ?',
+    ),
+    loadChecks: prepare<LoadCheckRow>(listQueries.loadChecks),
+    loadCheckPoints: prepare<{ readonly points: Buffer }>(
+      'SELECT points FROM load_check WHERE club_id = ? AND id = ?',
     ),
     summary: prepare<SummaryRow>(
       'SELECT summary, usable FROM summary WHERE club_id = ? AND sweep_id = ? AND analysis_version = ?',

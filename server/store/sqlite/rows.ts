@@ -1,4 +1,10 @@
-import type { Editable, EditableKind, EditableKinds, SweepRecord } from '../port.ts';
+import type {
+  Editable,
+  EditableKind,
+  EditableKinds,
+  LoadCheckRecord,
+  SweepRecord,
+} from '../port.ts';
 
 export interface ResourceRow {
   readonly clubId: string;
@@ -37,6 +43,27 @@ export function toEditable<K extends EditableKind>(row: ResourceRow): Editable<E
   const { clubId, id, key, revision, createdAt, updatedAt } = row;
   const facts: EditableKinds[K] = JSON.parse(row.facts);
   return { id, clubId, key, revision, createdAt, updatedAt, facts };
+}
+
+export interface LoadCheckRow {
+  readonly clubId: string;
+  readonly id: string;
+  readonly receivedAt: string;
+  readonly sortAt: string;
+  readonly uploadedBy: string;
+  readonly facts: string;
+  readonly measured: string;
+}
+
+/** Columns and table of a `LoadCheckRow`, for SELECT. */
+export const loadCheckColumns = `club_id AS clubId, id, received_at AS receivedAt, sort_at AS sortAt,
+  uploaded_by AS uploadedBy, facts, measured FROM load_check`;
+
+/** A row as the record that callers know. */
+export function toLoadCheckRecord(row: LoadCheckRow): LoadCheckRecord {
+  const { id, clubId, receivedAt, uploadedBy } = row;
+  const facts: LoadCheckRecord['facts'] = JSON.parse(row.facts);
+  return { id, clubId, receivedAt, uploadedBy, facts, measured: JSON.parse(row.measured) };
 }
 
 /** A row as the record that callers know. */

@@ -1,11 +1,14 @@
 import { createHash } from 'node:crypto';
 import {
   type Actor,
+  type AddLoadCheckOutcome,
   type AddSweepOutcome,
   type ClubRecord,
   type Editable,
   type EditableKind,
   type EditableKinds,
+  type LoadCheckRecord,
+  type NewLoadCheck,
   type NewSweep,
   type Page,
   type PageRequest,
@@ -20,7 +23,7 @@ import { pack, packText, unpack, unpackText } from './compression.ts';
 import { storeErrorOf } from './errors.ts';
 import { packPoints, unpackPoints } from './points-codec.ts';
 import type { Reader } from './reader.ts';
-import { toEditable, toSweepRecord } from './rows.ts';
+import { toEditable, toLoadCheckRecord, toSweepRecord } from './rows.ts';
 import type { Writer } from './writer.ts';
 
 /** The Store port over one SQLite file: one writer in its thread, one reader here. */
@@ -157,6 +160,29 @@ export class SqliteStore implements Store {
       unpackText(row.usable),
     ]);
     return { analysisVersion, summaryJson, usableJson };
+  }
+
+  async addLoadCheck({ record, file, points }: NewLoadCheck): Promise<AddLoadCheckOutcome> {
+    const { outcome, row } = await this.writer.run('addLoadCheck', {
+      record,
+      file: await pack(file),
+      points: packPoints(points),
+    });
+    return { outcome, record: toLoadCheckRecord(row) };
+  }
+
+  async listLoadChecks(
+    clubId: string,
+    analyzerId: string,
+    page: PageRequest,
+  ): Promise<Page<LoadCheckRecord>> {
+    const rows = this.read((reader) => reader.loadChecks(clubId, analyzerId, page));
+    return pageOf(rows, page, toLoadCheckRecord, ({ sortAt, id }) => [sortAt, id]);
+  }
+
+  async readLoadCheckPoints(clubId: string, id: string): Promise<StoredPoints | null> {
+    const packed = this.read((reader) => reader.loadCheckPoints(clubId, id));
+    return packed === null ? null : unpackPoints(packed);
   }
 
   async backup(path: string): Promise<void> {

@@ -2,13 +2,21 @@ import {
   type Actor,
   type ClubRecord,
   type EditableKind,
+  type LoadCheckRecord,
   StoreError,
   type SweepRecord,
   type TokenRecord,
 } from '../port.ts';
 import type { Packed } from './compression.ts';
 import type { Connection } from './connection.ts';
-import { type ResourceRow, resourceColumns, type SweepRow, sweepColumns } from './rows.ts';
+import {
+  type LoadCheckRow,
+  loadCheckColumns,
+  type ResourceRow,
+  resourceColumns,
+  type SweepRow,
+  sweepColumns,
+} from './rows.ts';
 import { makeVerifiedCopy } from './verified-copy.ts';
 
 /** A sweep packed for the writer. */
@@ -20,6 +28,13 @@ export interface PackedSweep {
   /** Deflated texts. */
   readonly summary: Uint8Array;
   readonly usable: Uint8Array;
+}
+
+/** A sweep of a known load packed for the writer. */
+export interface PackedLoadCheck {
+  readonly record: LoadCheckRecord;
+  readonly file: Packed;
+  readonly points: Uint8Array;
 }
 
 export interface FreshResource {
@@ -42,6 +57,10 @@ export interface WriteActs {
   addResource(fresh: FreshResource): ResourceRow;
   editResource(edited: EditedResource): ResourceRow;
   addSweep(sweep: PackedSweep): { readonly outcome: 'added' | 'known'; readonly row: SweepRow };
+  addLoadCheck(check: PackedLoadCheck): {
+    readonly outcome: 'added' | 'known';
+    readonly row: LoadCheckRow;
+  };
   /** A verified copy of the whole database in a new file. */
   copyTo(path: string): null;
   checkpoint(): null;
@@ -87,6 +106,14 @@ export function writeActs(connection: Connection): WriteActs {
   );
   const selectByFile = connection.prepare<unknown[], SweepRow>(
     `SELECT ${sweepColumns} WHERE sweep.club_id = ? AND sweep.file_sha256 = ?`,
+  );
+
+  const insertLoadCheck = connection.prepare(
+    `INSERT INTO load_check (club_id, id, analyzer_id, received_at, sort_at, uploaded_by, file_sha256, facts, measured, points)
+     VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?)`,
+  );
+  const selectLoadCheckByFile = connection.prepare<unknown[], LoadCheckRow>(
+    `SELECT ${loadCheckColumns} WHERE club_id = ? AND file_sha256 = ?`,
   );
 
   const withKeyChecked = (key: string, act: () => ResourceRow | undefined) => {
@@ -146,6 +173,29 @@ export function writeActs(connection: Connection): WriteActs {
       insertEvent.run(clubId, 'sweep_added', id, receivedAt, uploadedBy);
       const row = selectByFile.get(clubId, sha256);
       if (row === undefined) throw new StoreError('unavailable', 'The sweep was not kept.');
+      return { outcome: 'added', row };
+    },
+    addLoadCheck({ record, file, points }) {
+      const { id, clubId, receivedAt, uploadedBy, facts, measured } = record;
+      const sha256 = Buffer.from(measured.fileSha256, 'hex');
+      const known = selectLoadCheckByFile.get(clubId, sha256);
+      if (known !== undefined) return { outcome: 'known', row: known };
+      insertFile.run(clubId, sha256, measured.fileBytes, file.codec, file.body);
+      insertLoadCheck.run(
+        clubId,
+        id,
+        facts.analyzerId,
+        receivedAt,
+        facts.measuredAt ?? receivedAt,
+        uploadedBy,
+        sha256,
+        JSON.stringify(facts),
+        JSON.stringify(measured),
+        points,
+      );
+      insertEvent.run(clubId, 'load_check_added', id, receivedAt, uploadedBy);
+      const row = selectLoadCheckByFile.get(clubId, sha256);
+      if (row === undefined) throw new StoreError('unavailable', 'The check was not kept.');
       return { outcome: 'added', row };
     },
     copyTo(path) {

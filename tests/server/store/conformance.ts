@@ -184,6 +184,26 @@ export function describeStore(name: string, open: () => Promise<OpenedStore>): v
       expect(rest.next).toBeNull();
     });
 
+    it('keeps sweeps of known loads, newest first, each file once', async () => {
+      const checkOf = (number: number, text: string, measuredAt: string | null) => {
+        const { record, file, points } = newSweep(club, idOf(number), idOf(20), text);
+        const { id, clubId, receivedAt, uploadedBy, measured } = record;
+        const facts = { analyzerId: idOf(7), loadOhm: 50, measuredAt, note: '', invented: true };
+        return { record: { id, clubId, receivedAt, uploadedBy, facts, measured }, file, points };
+      };
+      const old = checkOf(40, 'old', '2025-01-01T00:00:00.000Z');
+      const young = checkOf(41, 'young', null);
+      expect(await store.addLoadCheck(old)).toEqual({ outcome: 'added', record: old.record });
+      await store.addLoadCheck(young);
+      const again = await store.addLoadCheck(checkOf(42, 'old', null));
+      expect(again).toEqual({ outcome: 'known', record: old.record });
+      const page = await store.listLoadChecks(club, idOf(7), firstPage);
+      expect(page.items).toEqual([young.record, old.record]);
+      expect(await store.readLoadCheckPoints(club, idOf(40))).toEqual(old.points);
+      expect((await store.listLoadChecks(otherClub, idOf(7), firstPage)).items).toEqual([]);
+      expect(await store.readLoadCheckPoints(otherClub, idOf(40))).toBeNull();
+    });
+
     it('is ready while it is open, and unavailable afterwards', async () => {
       await store.ready();
       await store.close();

@@ -67,9 +67,20 @@ describe('the database file', () => {
     const store = await storeWithClub(path);
     await store.addEditable('sites', actorOf(club), { id: idOf(5), key: 's', facts: siteFacts });
     await store.addSweep(newSweep(club, idOf(30), idOf(20), 'x'));
+    const check = newSweep(club, idOf(31), idOf(20), 'check');
+    const facts = { analyzerId: idOf(7), loadOhm: 50, measuredAt: null, note: '', invented: true };
+    await store.addLoadCheck({ ...check, record: { ...check.record, facts } });
     await store.close();
     const hand = new Database(path);
-    const kept = ['file', 'sweep', 'sweep_facts', 'summary', 'resource_revision', 'event'];
+    const kept = [
+      'load_check',
+      'file',
+      'sweep',
+      'sweep_facts',
+      'summary',
+      'resource_revision',
+      'event',
+    ];
     for (const table of kept) {
       expect(() => hand.exec(`DELETE FROM ${table}`), table).toThrow(/is kept/);
       expect(() => hand.exec(`UPDATE ${table} SET club_id = 'x'`), table).toThrow(/is kept/);

@@ -5,7 +5,10 @@ import type { Points } from './points.ts';
 import type { Normalisation } from './port-reflection.ts';
 import type { Sections } from './sections.ts';
 
-/** References of the ports, and whether immittances are divided by them. */
+/**
+ * References of the ports, and whether immittances are divided by them. Errors: `references_differ`,
+ * `parameters_incomplete` where the file's entries do not say what the reflection is.
+ */
 export function normalisationOf(
   points: Points,
   { keywords, option }: Sections,
@@ -29,6 +32,15 @@ export function normalisationOf(
   if (option.parameter !== 'S' && isNormalised && reference1 !== reference2) {
     const detail = 'Immittances normalised to unequal references are not defined by the format.';
     return refuse('references_differ', detail, 'Export S-parameters.', { line });
+  }
+  const isHybrid = option.parameter === 'H' || option.parameter === 'G';
+  if (points.layout.ports === 1 && isHybrid) {
+    const detail = `${option.parameter}-parameters take two ports, and the file has one.`;
+    return refuse('parameters_incomplete', detail, 'Export S-parameters.', { line });
+  }
+  if (points.layout.ports === 2 && points.layout.at22 === null && option.parameter !== 'S') {
+    const detail = `The file holds two of four ${option.parameter}-parameters; the reflection takes all.`;
+    return refuse('parameters_incomplete', detail, 'Export S-parameters.', { line });
   }
   return ok({ port, reference1, reference2, isNormalised });
 }

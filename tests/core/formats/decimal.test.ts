@@ -101,6 +101,33 @@ describe('a unit', () => {
 });
 
 describe('a scanner', () => {
+  it('reads a number in a text as it would alone', () => {
+    const number = fc.oneof(
+      fc.double({ noNaN: true, noDefaultInfinity: true }).map(String),
+      fc.stringMatching(/^[+-]?[0-9]{0,20}\.?[0-9]{0,20}([eE][+-]?[0-9]{1,6})?$/),
+    );
+    fc.assert(
+      fc.property(fc.string(), number, fc.constantFrom(0, 3, 6, 9), (before, text, shift) => {
+        const scanner = new DecimalScanner(`${before}${text} 1`);
+        const value = scanner.read(before.length, shift);
+        expect(Object.is(value, parseDecimal(text, shift))).toBe(true);
+      }),
+      { numRuns: 3000 },
+    );
+  });
+
+  it('reads none where an exponent lacks its digits, but what stands before', () => {
+    const scanner = new DecimalScanner('5e+ 1e99999999');
+    expect([scanner.read(0), scanner.end]).toEqual([5, 1]);
+    expect([scanner.read(4), scanner.end]).toEqual([Number.NaN, 14]);
+  });
+
+  it('sees no digit in what is beyond ASCII', () => {
+    expect(new DecimalScanner('１２').read(0)).toBeNaN();
+    const scanner = new DecimalScanner('Ω 12°');
+    expect([scanner.read(2), scanner.end]).toEqual([12, 4]);
+  });
+
   it('stops behind each number and says where', () => {
     const scanner = new DecimalScanner('12 -3.5e2x');
     expect([scanner.read(0), scanner.end]).toEqual([12, 2]);

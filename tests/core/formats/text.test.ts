@@ -30,6 +30,7 @@ describe('the bytes of a file', () => {
 
   it.each([
     ['a zero byte', Uint8Array.of(0x61, 0)],
+    ['a zero byte among letters that are no UTF-8', Uint8Array.of(0xb0, 0)],
     ['a zero letter in UTF-16', Uint8Array.of(0xff, 0xfe, 0, 0)],
     ['half a letter of UTF-16', Uint8Array.of(0xff, 0xfe, 0x61)],
   ])('are no text with %s', (_, bytes) => {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { readSweep } from '../../../../core/formats/read-sweep.ts';
+import { readTouchstone } from '../../../../core/formats/touchstone/read-touchstone.ts';
 import { pointsOf, refused, taken } from './reading.ts';
 
 // One test for each row of the policy for odd files: what is beyond doubt is taken with a word,
@@ -185,6 +186,14 @@ describe('numbers', () => {
     });
   });
 
+  it('whose commas may all part thousands are refused', () => {
+    expect(refused('# kHz S RI R 50\n14,000 1 0\n14,500 1 0\n')).toMatchObject({
+      code: 'decimal_ambiguous',
+      line: 2,
+    });
+    expect(taken('# MHz S RI R 50\n14,000 0,123 0\n').codes).toEqual(['decimal_comma']);
+  });
+
   it.each(['14,0.1,0.2', '14;0.1;0.2', '14, 0.1, 0.2'])('%s is delimited text', (row) => {
     expect(refused(`# MHz S RI R 50\n${row}\n`)).toMatchObject({
       code: 'separator_not_blank',
@@ -224,6 +233,17 @@ describe('numbers', () => {
     const { sweep, codes } = taken('# MHz S MA R 50\n14 -0.5 0\n');
     expect(sweep.reflectionRe[0]).toBe(-0.5);
     expect(codes).toEqual(['magnitude_negative']);
+  });
+});
+
+describe('reflections above one', () => {
+  it('are kept with a word, as residues of a calibration', () => {
+    const read = readTouchstone('# MHz S RI R 50\n14 1 0\n15 1.01 0\n', {
+      limits: { maxPoints: 9 },
+    });
+    if (!read.ok) throw new Error(read.error.code);
+    expect(read.value.sweep).toMatchObject({ reflectionRe: Float64Array.of(1, 1.01) });
+    expect(read.value.assumptions).toMatchObject([{ code: 'reflection_above_one', line: 3 }]);
   });
 });
 
@@ -321,6 +341,31 @@ describe('rows and ports', () => {
   it('entries of exact zero count as not measured', () => {
     const { codes } = taken('# MHz S RI R 50\n14 .1 .2 0 0 0 0 0 0\n', { port: 1 });
     expect(codes).toEqual(['others_not_measured']);
+  });
+
+  it('which are minus infinity in decibels, where zero is the whole', () => {
+    const row = (other: string) => `# MHz S DB R 50\n14 -10 0 ${other} ${other} ${other}\n`;
+    expect(taken(row('-inf 0'), { port: 1 }).codes).toEqual(['others_not_measured']);
+    expect(taken(row('0 0'), { port: 1 }).codes).toEqual(['other_port_matched']);
+  });
+
+  it('a port of which nothing was measured is refused', () => {
+    const text = '# MHz S RI R 50\n14 .1 .2 0 0 0 0 0 0\n15 .1 .2 .5 0 .5 0 0 0\n';
+    expect(refused(text, { port: 2 })).toMatchObject({ code: 'port_not_measured', line: 2 });
+    const turned = '# MHz S RI R 50\n14 0 0 0 0 0 0 .1 .2\n';
+    expect(refused(turned)).toMatchObject({ code: 'port_not_measured' });
+    expect(taken(turned, { port: 2 }).codes).toEqual(['others_not_measured']);
+  });
+
+  it('two of four immittances do not say what the reflection is', () => {
+    expect(refused('# MHz Z RI R 50\n14 1 0 .5 0\n').code).toBe('parameters_incomplete');
+  });
+
+  it.each(['H', 'G'])('%s-parameters take two ports', (parameter) => {
+    expect(refused(`# MHz ${parameter} RI R 50\n14 1 0\n`)).toMatchObject({
+      code: 'parameters_incomplete',
+      line: 2,
+    });
   });
 
   it('rows of five are S11 and S21', () => {

@@ -4,6 +4,7 @@ import type { Assumption, ReadError } from '../read-types.ts';
 import { inOrder } from '../touchstone/ascending.ts';
 import { refuse } from '../touchstone/faults.ts';
 import type { Reflections } from '../touchstone/reflections.ts';
+import { suspectMagnitude } from '../touchstone/suspicions.ts';
 
 export interface SweepOfPoints {
   readonly sweep: Sweep;
@@ -37,6 +38,7 @@ export function sweepOfPoints(
   const assumptions = [
     ...turned,
     ...ordered.value.assumptions,
+    ...suspectMagnitude(ordered.value.reflections),
     ...suspectFrequencies(frequencyHz, line[0]),
   ];
   return ok({ sweep: sweep.value, assumptions });

@@ -46,7 +46,11 @@ function mismatchSquare(re: number, im: number, factor: number): number {
   return numerator / ((1 - k * re) ** 2 + (k * im) ** 2);
 }
 
-function suspectMagnitude({ reflectionRe: re, reflectionIm: im, line }: Reflections): Assumption[] {
+export function suspectMagnitude({
+  reflectionRe: re,
+  reflectionIm: im,
+  line,
+}: Reflections): Assumption[] {
   let count = 0;
   let largest = 1;
   let first = 0;

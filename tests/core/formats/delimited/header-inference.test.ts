@@ -284,5 +284,10 @@ describe('a table without columns told', () => {
     expect(refusalOf('14,---\n14.1,inf\n').code).toBe('no_points');
     expect(refusalOf('MHz,SWR\n14,1.5\n14.1,x\n')).toMatchObject({ code: 'not_a_number', line: 3 });
     expect(refusalOf('MHz,SWR\n14,"1.5\n').code).toBe('quote_not_closed');
+    expect(refusalOf('MHz,SWR\n14,1.5\n14,1.6\n')).toMatchObject({
+      code: 'frequency_twice',
+      line: 3,
+    });
+    expect(refusalOf('a;1,2,b;3\nc;2,3,d;4\n').code).toBe('dialect_ambiguous');
   });
 });

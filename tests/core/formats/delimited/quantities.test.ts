@@ -202,13 +202,13 @@ describe('the sign of a return loss', () => {
   it('is turned, and told, where it is negative throughout', () => {
     const read = readText('14,-20\n14.1,-10\n14.2,0.1\n', { columns });
     expect(scalarOf(read).reflectionMagnitude[0]).toBeCloseTo(0.1, 12);
-    expect(assumedIn(read)).toEqual(['return_loss_sign_turned']);
+    expect(assumedIn(read)).toEqual(['return_loss_sign_turned', 'reflection_above_one']);
   });
 
   it('is left where it is positive but for noise', () => {
     const read = readText('14,20\n14.1,-0.1\n', { columns });
     expect(scalarOf(read).reflectionMagnitude[0]).toBeCloseTo(0.1, 12);
-    expect(assumedIn(read)).toEqual([]);
+    expect(assumedIn(read)).toEqual(['reflection_above_one']);
   });
 
   it('is refused where it is both', () => {

@@ -42,6 +42,7 @@ describe('a redundant column', () => {
     ['conductance:mS', (r: number, x: number) => ((1000 * r) / (r * r + x * x)).toFixed(3)],
     ['susceptance:mS', (r: number, x: number) => ((-1000 * x) / (r * r + x * x)).toFixed(3)],
     ['parallel_resistance', (r: number, x: number) => ((r * r + x * x) / r).toFixed(1)],
+    ['parallel_reactance:kohm', (r: number, x: number) => ((r * r + x * x) / x / 1000).toFixed(4)],
     ['return_loss', (r: number, x: number) => lossOf(r, x).toFixed(2)],
     ['reflection_db', (r: number, x: number) => (-lossOf(r, x)).toFixed(2)],
     ['reflection_magnitude', (r: number, x: number) => (10 ** (-lossOf(r, x) / 20)).toFixed(3)],

@@ -35,6 +35,8 @@ describe('delimited text', () => {
     ['a preamble', 'Notes of a sweep\nPoints,3\nf,R,X\n8.2,50,0\n16.1,50,50\n32.3,25,0\n'],
     ['names and units', 'f,R,X\nMHz,ohm,ohm\n8.2,50,0\n16.1,50,50\n32.3,25,0\n'],
     ['a delimiter announced', 'sep=;\nf;R;X\n8,2;50;0\n16,1;50;50\n32,3;25;0\n'],
+    ['a comma announced', 'sep=,\r\n# a\r\n8.2,50,0\r\n! b\r\n16.1,50,50\r\n32.3,25,0\r\n'],
+    ['a tab announced', 'sep=\t\n8.2\t50\t0\n16.1\t50\t50\n32.3\t25\t0\n'],
     ['quotes', '"f","R","X"\n"8.2","50","0"\n"16.1","50","50"\n"32.3","25","0"\n'],
     ['quoted decimal commas', '"8,2","50","0"\n"16,1","50,0","50"\n"32,3","25","0"\n'],
     ['quoted decimal commas and semicolons', '"8,2";50;0\n"16,1";50;50\n"32,3";25;0\n'],
@@ -91,6 +93,13 @@ describe('delimited text', () => {
     expect(last('7100,5;2')).toBe(7_100_500);
     expect(last('7100.5;2')).toBe(7_100_500);
     expect(last('7100;2')).toBe(7_100_000);
+  });
+});
+
+describe('a mapping that breaks the grammar', () => {
+  it('is refused before the text is read', () => {
+    const error = refusalOf('14,1.5\n', { columns: 'frequency:MHz;swr' });
+    expect(error).toMatchObject({ code: 'columns_unit_unknown', parameter: 'columns' });
   });
 });
 
@@ -251,6 +260,13 @@ describe('points', () => {
 
   it('an SWR ratio of two numbers other than one is refused', () => {
     expect(refusalOf('14,2\n14.1,3:2\n', { columns: swrColumns }).code).toBe('not_a_number');
+  });
+
+  it('that reflect more than arrives are kept, and that is told', () => {
+    const read = readText('14,1.02,0\n', {
+      columns: 'frequency:MHz,reflection_re,reflection_im,reference=50',
+    });
+    expect(assumedIn(read)).toEqual(['reflection_above_one']);
   });
 
   it('at zero frequency are kept, and that is told', () => {

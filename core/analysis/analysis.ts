@@ -57,8 +57,7 @@ function analyseScalar(sweep: Sweep, instrument: InstrumentError | null): Analys
   const nothing = new Float64Array(re.length);
   const square = re.map((value) => Math.max(0, value));
   const scan: Scan = { frequencyHz, square, re: nothing, im: nothing };
-  const rough = differenceNoise(magnitude, magnitude);
-  const noise = realPart === null ? (magnitude.length < 6 ? null : rough) : noiseOf(realPart);
+  const noise = realPart === null ? magnitudeNoise(magnitude, noiseOf(model)) : noiseOf(realPart);
   return {
     ...turnsOf(scalarMismatch(model), scan),
     sweep,
@@ -67,6 +66,15 @@ function analyseScalar(sweep: Sweep, instrument: InstrumentError | null): Analys
     noise,
     instrument,
   };
+}
+
+/** Noise of a magnitude: at least that between neighbours, and what the squares' fit leaves. */
+function magnitudeNoise(magnitude: Float64Array, ofSquares: number | null): number | null {
+  if (ofSquares === null) return null;
+  const squares = magnitude.reduce((sum, value) => sum + value * value, 0);
+  if (squares === 0) return ofSquares;
+  const rms = Math.sqrt(squares / magnitude.length);
+  return Math.max(differenceNoise(magnitude, magnitude), ofSquares / (2 * rms));
 }
 
 function modelOf(

@@ -6,33 +6,43 @@ export interface Run {
 
 /** A shorter run of equal values may be chance or rounding. */
 const shortestRun = 5;
+/** On a rounded top the steps beside the highest are a fifth as long; on a cut-off one far shorter. */
+const timesNeighbour = 8;
 
 /**
- * Runs in which values stand still at their greatest, entered or left by a jump of more than two of
- * the smallest steps between neighbours, as a curve that is cut off has and one that is only rounded
- * has not.
+ * Runs in which values stand still at their greatest and beside which they do not: a curve that is
+ * cut off comes to its limit at full slope, one that is only rounded comes in ever longer steps.
  */
 export function clippedRuns(values: Float64Array): readonly Run[] {
   let greatest = values[0];
-  let smallestStep = Number.POSITIVE_INFINITY;
-  for (let i = 1; i < values.length; i++) {
-    greatest = Math.max(greatest, values[i]);
-    const step = Math.abs(values[i] - values[i - 1]);
-    if (step > 0) smallestStep = Math.min(smallestStep, step);
-  }
+  for (const value of values) greatest = Math.max(greatest, value);
   const runs: Run[] = [];
-  let first = -1;
-  for (let i = 0; i <= values.length; i++) {
-    if (i < values.length && values[i] === greatest) {
-      if (first < 0) first = i;
-      continue;
+  let before = 0;
+  for (const { first, last } of equalRuns(values)) {
+    const length = last - first + 1;
+    const after = last + 1 < values.length ? runFrom(values, last + 1) : 0;
+    const beside = Math.max(before, after);
+    if (values[first] === greatest && length >= shortestRun) {
+      if (beside > 0 && length >= timesNeighbour * beside) runs.push({ first, last });
     }
-    if (first >= 0 && i - first >= shortestRun) {
-      const before = first > 0 ? greatest - values[first - 1] : 0;
-      const after = i < values.length ? greatest - values[i] : 0;
-      if (Math.max(before, after) > 2 * smallestStep) runs.push({ first, last: i - 1 });
-    }
-    first = -1;
+    before = length;
   }
   return runs;
+}
+
+function equalRuns(values: Float64Array): Run[] {
+  const runs: Run[] = [];
+  for (let first = 0; first < values.length; ) {
+    const length = runFrom(values, first);
+    runs.push({ first, last: first + length - 1 });
+    first += length;
+  }
+  return runs;
+}
+
+/** Length of the run of equal values that begins at a place. */
+function runFrom(values: Float64Array, first: number): number {
+  let end = first + 1;
+  while (end < values.length && values[end] === values[first]) end += 1;
+  return end - first;
 }

@@ -12,6 +12,9 @@ export interface Compressed extends Samples {
 const mostKeptWhole = 200;
 /** A longer one is cut into so many blocks at first. */
 const firstBlocks = 48;
+/** From so many samples on, what no instrument resolves counts as noise, so that exact ones shrink too. */
+export const long = 2000;
+export const leastNoise = 1e-7;
 /** A block of at most so many samples is not halved. */
 const smallestBlock = 8;
 /** A block's scatter may exceed the noise by this many standard deviations of such a scatter. */
@@ -27,13 +30,14 @@ const scatterLimit = 3;
 export function compress(samples: Samples, noise: number): Compressed {
   const count = samples.frequencyHz.length;
   const out: Growing = { frequencyHz: [], re: [], im: [], weight: [], squaresInside: 0 };
-  if (count <= mostKeptWhole || noise === 0) {
+  const tolerated = count < long ? noise : Math.max(noise, leastNoise);
+  if (count <= mostKeptWhole || tolerated === 0) {
     keepWhole(samples, 0, count, out);
   } else {
     for (let b = 0; b < firstBlocks; b++) {
       const from = Math.round((b * count) / firstBlocks);
       const to = Math.round(((b + 1) * count) / firstBlocks);
-      block(samples, from, to, noise, out);
+      block(samples, from, to, tolerated, out);
     }
   }
   return {

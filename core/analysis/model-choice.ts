@@ -1,5 +1,5 @@
 import { studentQuantile } from '../record/statistics/distributions.ts';
-import { compress } from './compress.ts';
+import { compress, leastNoise, long } from './compress.ts';
 import { differenceNoise } from './difference-noise.ts';
 import { momentsFor } from './normal-equations.ts';
 import { numbersIn, type RationalForm, unknownsOf } from './rational-basis.ts';
@@ -40,6 +40,8 @@ const hopefulWithin = 30;
 const leastHopefulNoise = 1e-6;
 /** Below this a fit counts as exact: no file and no instrument knows better. */
 const exactBelow = 1e-9;
+/** Residuals above this, if they hang together, are no fit, however much neighbouring samples differ. */
+export const hopeless = 0.05;
 /** Degrees that may fail to help before the search ends. */
 const patience = 3;
 /**
@@ -111,7 +113,8 @@ export function chooseFits(samples: Samples, form: RationalForm): ChosenFits | n
     )
       score += sharpPolePenalty;
     scored.push({ fit, score, squares });
-    failures = score < best ? 0 : failures + 1;
+    const isHopeless = squares > numbers * hopeless ** 2;
+    failures = score < best || isHopeless ? 0 : failures + 1;
     best = Math.min(best, score);
     if (squares < numbers * arithmeticFloor ** 2) break;
   }
@@ -148,7 +151,7 @@ function judged(
   const members = shares.map(({ fit, weight }) => ({ fit, weight: weight / total }));
   const { fit, squares } = shares.reduce((a, b) => (b.weight > a.weight ? b : a));
   const freedom = numbers - unknownsOf(fit.degree);
-  const isTiny = squares < numbers * exactBelow ** 2;
+  const isTiny = squares < numbers * exactBelowFor(numbers, fit.form) ** 2;
   const correlation = isTiny ? 0 : neighbourCorrelation(fit, samples);
   const isWhite = correlation < 3 / Math.sqrt(numbersIn(fit.form, samples.re.length));
   const student = studentQuantile(0.975, freedom);
@@ -159,6 +162,11 @@ function judged(
     isWhite,
     isExplained: squares < explainedWithin ** 2 * roughNoise ** 2 * numbers,
   };
+}
+
+/** The residuals of a long sweep hold what its compression neglected. */
+function exactBelowFor(numbers: number, form: RationalForm): number {
+  return numbers < numbersIn(form, long) ? exactBelow : 3 * leastNoise;
 }
 
 /** Correlation of each residual with the next, at most 0.9. */

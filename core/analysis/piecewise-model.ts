@@ -1,5 +1,5 @@
 import { type InstrumentError, reflectionErrorBound } from './instrument-error.ts';
-import { type ChosenFits, chooseFits } from './model-choice.ts';
+import { type ChosenFits, chooseFits, hopeless } from './model-choice.ts';
 import { frequencyScale, type RationalForm } from './rational-basis.ts';
 import type { RationalFit } from './rational-fit.ts';
 import {
@@ -38,7 +38,7 @@ const overlap = 0.35;
 /**
  * Stands rational functions for a sweep: for all of it where they explain all but noise, else for
  * halves of it, and so on. Each piece is fitted beyond its ends, where fits are weakest. Below five
- * samples the pieces are straight lines and know no noise. Needs two samples.
+ * samples, and where nothing fits, the pieces are straight lines and know no noise. Needs two samples.
  */
 export function piecewiseModel(
   samples: Samples,
@@ -68,11 +68,12 @@ function cover(
   pieces: ModelPiece[],
 ): void {
   const { frequencyHz } = samples;
-  if (chosen === null) {
+  const isSmall = last - first < fewestToHalve;
+  if (chosen === null || (isSmall && isHopeless(chosen))) {
     for (let i = first; i < last; i++) pieces.push(straightLine(samples, form, i));
     return;
   }
-  if (!chosen.isWhite && last - first >= fewestToHalve) {
+  if (!chosen.isWhite && !isSmall) {
     const middle = (first + last) >> 1;
     const left = chooseOn(samples, form, first, middle);
     const right = chooseOn(samples, form, middle, last);
@@ -87,8 +88,13 @@ function cover(
 }
 
 /** A fit that misses the samples themselves: halves of halves may do what halves cannot yet. */
-function isFarOff({ noise, isExplained }: ChosenFits): boolean {
-  return noise !== null && noise > farOff && !isExplained;
+function isFarOff(chosen: ChosenFits): boolean {
+  const { noise, isExplained } = chosen;
+  return isHopeless(chosen) || (noise !== null && noise > farOff && !isExplained);
+}
+
+function isHopeless({ noise, isWhite }: ChosenFits): boolean {
+  return !isWhite && noise !== null && noise > hopeless;
 }
 
 /**

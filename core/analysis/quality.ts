@@ -64,8 +64,9 @@ function megahertz(frequencyHz: number): string {
 function passivityFlag({ sweep, noise }: Analysis): Flag[] {
   const magnitude = reflectionMagnitude(sweep);
   const { frequencyHz } = sweep;
-  // Three deviations above 1 may be noise on a total reflection.
-  const limit = 1 + 3 * (noise ?? 0) + 1e-9;
+  // So far above 1 the noise on a total reflection may reach somewhere among so many points.
+  const reach = 1 + Math.sqrt(2 * Math.log(magnitude.length));
+  const limit = 1 + reach * (noise ?? 0) + 1e-9;
   const above = magnitude.reduce((count, m) => (m > limit ? count + 1 : count), 0);
   if (above === 0) return [];
   const lowHz = frequencyHz[magnitude.findIndex((m) => m > limit)];
@@ -76,18 +77,27 @@ function passivityFlag({ sweep, noise }: Analysis): Flag[] {
 
 function coarseGridFlags({ sweep }: Analysis, { resonances }: Findings): Flag[] {
   const { frequencyHz } = sweep;
-  return resonances.flatMap((resonance): Flag[] => {
-    if (resonance.q === null || resonance.grazing) return [];
-    const widthHz = resonance.frequencyHz / resonance.q;
-    const lowHz = resonance.frequencyHz - widthHz / 2;
-    const highHz = resonance.frequencyHz + widthHz / 2;
+  const coarse = resonances.filter((resonance) => {
+    if (resonance.q === null || resonance.grazing) return false;
     const next = frequencyHz.findIndex((f) => f >= resonance.frequencyHz);
     const upper = Math.max(1, next);
-    const points = widthHz / (frequencyHz[upper] - frequencyHz[upper - 1]);
-    if (points >= fewestPointsInBandwidth) return [];
-    const detail = `The resonance at ${megahertz(resonance.frequencyHz)} has ${points.toFixed(1)} points in its bandwidth. Sweep again with more points or a narrower span.`;
-    return [{ code: 'coarse_grid', detail, lowHz, highHz }];
+    const stepHz = frequencyHz[upper] - frequencyHz[upper - 1];
+    return resonance.frequencyHz / resonance.q < fewestPointsInBandwidth * stepHz;
   });
+  if (coarse.length === 0) return [];
+  const places = placesOf(coarse.map((resonance) => resonance.frequencyHz));
+  const detail = `Fewer than ${fewestPointsInBandwidth} points lie in the bandwidth of ${coarse.length === 1 ? 'the resonance' : `${coarse.length} resonances`} at ${places}. Sweep again with more points or a narrower span.`;
+  return [{ code: 'coarse_grid', detail, ...stretchOf(coarse.map((r) => r.frequencyHz)) }];
+}
+
+/** Up to five frequencies by name. */
+function placesOf(frequencyHz: readonly number[]): string {
+  const named = frequencyHz.slice(0, 5).map(megahertz).join(', ');
+  return frequencyHz.length > 5 ? `${named} and others` : named;
+}
+
+function stretchOf(frequencyHz: readonly number[]) {
+  return { lowHz: Math.min(...frequencyHz), highHz: Math.max(...frequencyHz) };
 }
 
 function noiseFlag({ noise }: Analysis): Flag[] {
@@ -139,9 +149,11 @@ function largestOf(values: Float64Array, from: number, to: number): number {
 }
 
 function grazingFlags({ grazingHz }: Findings): Flag[] {
-  return grazingHz.map(({ maxSwr, frequencyHz }): Flag => {
-    const detail = `Near ${megahertz(frequencyHz)} the SWR touches ${maxSwr} within the noise: whether it passes cannot be told, and no span edge was set there. Sweep that stretch again with more points or more averaging.`;
-    return { code: 'swr_grazes_limit', detail, lowHz: frequencyHz, highHz: frequencyHz };
+  const limits = [...new Set(grazingHz.map(({ maxSwr }) => maxSwr))];
+  return limits.map((limit): Flag => {
+    const at = grazingHz.filter(({ maxSwr }) => maxSwr === limit).map((g) => g.frequencyHz);
+    const detail = `Near ${placesOf(at)} the SWR touches ${limit} within the noise: whether it passes cannot be told, and no span edge was set there. Sweep that stretch again with more points or more averaging.`;
+    return { code: 'swr_grazes_limit', detail, ...stretchOf(at) };
   });
 }
 

@@ -72,7 +72,8 @@ function resistanceAt(
   referenceOhm: number,
 ): AtResonance {
   const real = value.re;
-  if (real >= 1) return { resistanceOhm: null, resistanceU95Ohm: null, swr: null, swrU95: null };
+  const isThere = real < 1 && real > Number.NEGATIVE_INFINITY;
+  if (!isThere) return { resistanceOhm: null, resistanceU95Ohm: null, swr: null, swrU95: null };
   const along = value.slopeIm === 0 ? 0 : value.slopeRe / value.slopeIm;
   const functional: Functional = { valueRe: 1, valueIm: along, slopeRe: 0, slopeIm: 0 };
   const realU95 = halfWidthAt(model, frequencyHz, functional);

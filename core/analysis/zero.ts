@@ -1,6 +1,6 @@
 /**
- * The zero of a function between two frequencies, ascending, at which it has different signs, by bisection
- * with a secant first (C. J. F. Ridders, IEEE Trans. Circuits and Systems 26(11), 1979). To the last
+ * The zero of a function between two frequencies, ascending, at which it has different signs, by
+ * bisection with a secant first (C. J. F. Ridders, IEEE Trans. Circuits and Systems 26(11), 1979). To the last
  * bits; `low` itself where the signs do not differ.
  */
 export function zeroBetween(value: (x: number) => number, low: number, high: number): number {
@@ -16,8 +16,11 @@ export function zeroBetween(value: (x: number) => number, low: number, high: num
     if (middle === a || middle === b) break;
     const fm = value(middle);
     if (fm === 0) return middle;
-    const root = Math.sqrt(fm * fm - fa * fb);
-    const x = middle + (middle - a) * ((fa > fb ? 1 : -1) * (fm / root));
+    // Over the largest of them, so that no square is too large or small to be held.
+    const size = Math.max(Math.abs(fa), Math.abs(fb), Math.abs(fm));
+    const root = Math.sqrt((fm / size) ** 2 - (fa / size) * (fb / size));
+    const secant = middle + (middle - a) * ((fa > fb ? 1 : -1) * (fm / size / root));
+    const x = secant > a && secant < b ? secant : middle;
     const fx = value(x);
     if (fx === 0) return x;
     const [nextLow, nextHigh] = tightest([a, fa], [middle, fm], [x, fx], [b, fb]);

@@ -37,9 +37,7 @@ type Point = readonly [x: number, value: number];
 /** The narrowest neighbours with different signs among four points of which the ends differ. */
 function tightest(low: Point, first: Point, second: Point, high: Point): [Point, Point] {
   const inner = first[0] <= second[0] ? [first, second] : [second, first];
-  const points = [low, ...inner, high];
-  for (let i = 1; i < points.length; i++) {
-    if (points[i - 1][1] > 0 !== points[i][1] > 0) return [points[i - 1], points[i]];
-  }
-  return [low, high];
+  if (low[1] > 0 !== inner[0][1] > 0) return [low, inner[0]];
+  if (inner[0][1] > 0 !== inner[1][1] > 0) return [inner[0], inner[1]];
+  return [inner[1], high];
 }

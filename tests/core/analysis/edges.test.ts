@@ -173,6 +173,11 @@ describe('a usable span', () => {
     expect(summarise(sweep).spans.map(({ maxSwr }) => maxSwr)).toEqual([1.5, 2, 3]);
   });
 
+  it('is the same from the curve as in the summary', () => {
+    expect(swrCurve(sweep).spans(2)).toEqual(summarise(sweep, { swrLimits: [2] }).spans);
+    expect(swrCurve(points([0.2], [0.4])).spans(2)).toEqual([]);
+  });
+
   it('has its worst SWR at the end that is farther in octaves and its best inside', () => {
     const curve = swrCurve(sweep);
     const extremes = curve.extremes(7e6, 7.2e6);

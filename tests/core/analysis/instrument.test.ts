@@ -3,6 +3,7 @@ import { residualError } from '../../../core/analysis/check-load.ts';
 import {
   instrumentErrorOf,
   reflectionErrorBound,
+  statedInstrumentError,
 } from '../../../core/analysis/instrument-error.ts';
 import { swrCurve } from '../../../core/analysis/refined-swr.ts';
 import { summarise } from '../../../core/analysis/summarise.ts';
@@ -27,6 +28,19 @@ describe('the residual error of an analyzer', () => {
     expect(
       instrumentErrorOf({ directivityDb: null, sourceMatchDb: null, trackingDb: null }),
     ).toEqual({ directivity: null, sourceMatch: null, tracking: null });
+  });
+
+  it('comes back as the decibels it was stated in', () => {
+    const stated = { directivityDb: 40, sourceMatchDb: 30, trackingDb: 0.1 };
+    const back = statedInstrumentError(instrumentErrorOf(stated));
+    expect(back.directivityDb).toBeCloseTo(40, 9);
+    expect(back.sourceMatchDb).toBeCloseTo(30, 9);
+    expect(back.trackingDb).toBeCloseTo(0.1, 9);
+    expect(statedInstrumentError({ directivity: 0, sourceMatch: null, tracking: null })).toEqual({
+      directivityDb: null,
+      sourceMatchDb: null,
+      trackingDb: null,
+    });
   });
 
   it('bounds a return loss of 20 dB by 18.6 and 21.7 dB, as in a published example', () => {

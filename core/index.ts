@@ -35,6 +35,17 @@ export type {
   UsableReport,
   UsableVerdict,
 } from './bands/usable-report.ts';
+export {
+  type Assumption,
+  defaultReadLimits,
+  type FileFormat,
+  type ReadError,
+  type ReadLimits,
+  type ReadSweep,
+} from './formats/read-types.ts';
+export { type DecodedText, decodeText } from './formats/text.ts';
+export { readTouchstone, type TouchstoneOptions } from './formats/touchstone/read-touchstone.ts';
+export { type WriteError, writeTouchstone } from './formats/touchstone/write-touchstone.ts';
 export { type BothEnds, bothEnds, type LineReport, lineReport } from './line/both-ends.ts';
 export { type Cable, fitCable, type StatedCable } from './line/cable.ts';
 export { type CatalogueCable, cables, findCable } from './line/cables.ts';

@@ -52,10 +52,12 @@ function checkColumn(
 }
 
 function checkFrequency(values: Float64Array, line: Int32Array): Checked {
-  const at = values.findIndex((value) => value < 0);
-  if (at < 0) return nothing;
-  const detail = `Line ${line[at]} has the negative frequency ${values[at]} Hz.`;
-  return refuse('frequency_negative', detail, 'Correct the frequency.', { line: line[at] });
+  for (let i = 0; i < values.length; i++) {
+    if (!(values[i] < 0)) continue;
+    const detail = `Line ${line[i]} has the negative frequency ${values[i]} Hz.`;
+    return refuse('frequency_negative', detail, 'Correct the frequency.', { line: line[i] });
+  }
+  return nothing;
 }
 
 /** Positive for a passive antenna (T. S. Bird, IEEE Antennas and Propagation Magazine 51(2), 2009). */

@@ -15,9 +15,9 @@ export interface Dialect {
 
 type Told = { readonly [Part in 'delimiter' | 'decimal']: Dialect[Part] | null };
 
-const sampleHead = 20;
-const sampleMiddle = 20;
-const longestSampled = 2000;
+/** A text of this length is looked at as a whole, of a longer one parts from its middle and end. */
+const wholeLength = 4000;
+const partLength = 1000;
 
 const delimiters: readonly Delimiter[] = ['semicolon', 'tab', 'comma', 'blanks'];
 
@@ -73,31 +73,34 @@ function announcedDelimiter(text: string): Delimiter | null {
   return announced === ';' ? 'semicolon' : 'tab';
 }
 
-/** Lines from the start and the middle of the text, without comments and what holds no digit. */
+/** Lines without comments, from where the rows must be: the middle and the end of the text. */
 function sampleOf(text: string): string[] {
-  const head = takeLines(text, 0, sampleHead);
-  if (head.end === text.length) return head.lines;
-  const middle = Math.max(head.end, text.length >> 1);
-  const rest = takeLines(text, middle, sampleMiddle + 1);
-  // The first line there may be the tail of a line.
-  return [...head.lines, ...(middle === head.end ? rest.lines : rest.lines.slice(1))];
+  if (text.length <= wholeLength) return linesOf(text);
+  const middle = (text.length - partLength) >> 1;
+  return [
+    ...wholeLinesOf(text, middle, middle + partLength),
+    ...wholeLinesOf(text, text.length - partLength, text.length),
+  ];
 }
 
-function takeLines(
-  text: string,
-  from: number,
-  most: number,
-): { readonly lines: string[]; readonly end: number } {
-  const part = text.slice(from, from + most * longestSampled);
-  const walker = new LineWalker(part);
+/** Lines that lie wholly in a part of the text; the part itself where it lies in one long line. */
+function wholeLinesOf(text: string, start: number, end: number): string[] {
+  const part = text.slice(start, end);
+  const first = part.search(/[\r\n]/);
+  if (first < 0) return [part];
+  const last = Math.max(part.lastIndexOf('\n'), part.lastIndexOf('\r'));
+  return linesOf(part.slice(first, end === text.length ? undefined : last));
+}
+
+function linesOf(text: string): string[] {
+  const walker = new LineWalker(text);
   const lines: string[] = [];
-  while (lines.length < most && walker.advance()) {
+  while (walker.advance()) {
     const ink = walker.firstInk();
-    if (ink === walker.end || isCommentAt(part, ink, null)) continue;
-    lines.push(part.slice(walker.start, Math.min(walker.end, walker.start + longestSampled)));
+    if (ink === walker.end || isCommentAt(text, ink, null)) continue;
+    lines.push(text.slice(walker.start, walker.end));
   }
-  const isWhole = lines.length < most && from + part.length === text.length;
-  return { lines, end: isWhole ? text.length : from + walker.end };
+  return lines;
 }
 
 function candidates(sample: readonly string[], told: Told, hasQuotes: boolean): Dialect[] {
@@ -107,7 +110,7 @@ function candidates(sample: readonly string[], told: Told, hasQuotes: boolean): 
     semicolon: sample.some((line) => line.includes(';')),
     tab: hasTab,
     comma: sample.some((line) => line.includes(',')),
-    blanks: sample.some((line) => /\S[ \t]+\S/.test(line)),
+    blanks: sample.some((line) => /\S[ \t]/.test(line.trimEnd())),
   };
   for (const delimiter of delimiters) {
     if (told.delimiter === null ? !isPresent[delimiter] : told.delimiter !== delimiter) continue;
@@ -151,7 +154,7 @@ function scoreOf(sample: readonly string[], dialect: Dialect): number {
   return score;
 }
 
-/** The cells of a sample of lines from the start and the middle of a text. */
+/** The cells of a sample of the lines of a text. */
 export function sampleRows(text: string, dialect: Dialect): readonly string[][] {
   return rowsOf(sampleOf(text), dialect);
 }

@@ -42,7 +42,7 @@ describe('a half-wave dipole put through the whole service', () => {
     expect(summary.minimum_swr.swr).toBeCloseTo(1.343255, 4);
     expect(summary.resonance_offset_hz).toBeCloseTo(
       summary.minimum_swr.frequency_hz - summary.resonances[0].frequency_hz,
-      6,
+      3,
     );
   });
 });

@@ -11,6 +11,35 @@ export { feedPointStress, lineStress, powerCautions } from './advice/power.ts';
 export { type RadiatorKind, radiatorOf } from './advice/radiator.ts';
 export { trimAdvice } from './advice/trim.ts';
 export type { TrimAdvice, TrimRequest } from './advice/trim-request.ts';
+export { type Analysis, analyse } from './analysis/analysis.ts';
+export { type LoadCheck, type LoadCheckError, residualError } from './analysis/check-load.ts';
+export {
+  type InstrumentError,
+  instrumentErrorOf,
+  type StatedInstrumentError,
+} from './analysis/instrument-error.ts';
+export { qualityFlagCodes } from './analysis/quality.ts';
+export { curveOf, swrCurve } from './analysis/refined-swr.ts';
+export { noiseOfRepeats } from './analysis/repeat-noise.ts';
+export {
+  analysisVersion,
+  type SummariseOptions,
+  summarise,
+  summariseAnalysis,
+} from './analysis/summarise.ts';
+export type {
+  Absence,
+  Caution,
+  MatchedBandwidth,
+  Plane,
+  QualityFlag,
+  ReactanceMagnitudeMinimum,
+  Resonance,
+  Summary,
+  SwrMinimum,
+  UsableSpan,
+} from './analysis/summary.ts';
+export type { SwrCurve, SwrExtremes } from './analysis/swr-curve.ts';
 export { type BandsOfOptions, bandsOf, licencesOf, type PlanBand } from './bands/bands-of.ts';
 export {
   type BandName,
@@ -35,6 +64,16 @@ export type {
   UsableReport,
   UsableVerdict,
 } from './bands/usable-report.ts';
+export { columnsGrammar } from './formats/delimited/columns-grammar.ts';
+export { formatColumns } from './formats/delimited/format-columns.ts';
+export type { ColumnMapping, MappedColumn } from './formats/delimited/mapping.ts';
+export { parseColumns } from './formats/delimited/parse-columns.ts';
+export { type Quantity, quantities, type Unit } from './formats/delimited/quantities.ts';
+export { sweepCsvColumns, writeSweepCsv } from './formats/delimited/write-sweep-csv.ts';
+export { detect } from './formats/detect.ts';
+export { sweepJsonSchema } from './formats/json/schema.ts';
+export { writeSweepJson } from './formats/json/write-sweep-json.ts';
+export { type ReadSweepOptions, readSweep } from './formats/read-sweep.ts';
 export {
   type Assumption,
   defaultReadLimits,

@@ -27,23 +27,31 @@ export function openWriter(path: string): Connection {
   const connection = new Database(path);
   return guarded(connection, () => {
     checkSqliteVersion(versionOf(connection));
+    // Before the journal mode, which is a change to the file itself.
+    checkOwner(connection);
     connection.pragma(`page_size = ${pageBytes}`);
     expectPragma(connection, 'journal_mode', 'wal', 'WAL');
     // The bundled build's default under WAL is NORMAL, which may lose acknowledged records.
     expectPragma(connection, 'synchronous', 2, 'FULL');
     expectPragma(connection, 'journal_size_limit', walLimitBytes);
+    // Without it, REPLACE removes kept rows past the triggers that refuse it.
+    expectPragma(connection, 'recursive_triggers', 1);
     setCommon(connection);
-    checkOwner(connection);
   });
 }
 
 /** Opens the file for reading only. */
 export function openReader(path: string): Connection {
-  const connection = new Database(path, { readonly: true, fileMustExist: true });
+  const connection = openForCopying(path);
   return guarded(connection, () => {
     expectPragma(connection, 'query_only', 1);
     setCommon(connection);
   });
+}
+
+/** Opens the file read-only for VACUUM INTO, which `query_only` would refuse. */
+export function openForCopying(path: string): Connection {
+  return new Database(path, { readonly: true, fileMustExist: true });
 }
 
 function setCommon(connection: Connection): void {

@@ -1,6 +1,5 @@
-import { StoreError } from '../port.ts';
 import type { Connection } from './connection.ts';
-import { type Failure, failureOf } from './errors.ts';
+import { type Failure, failureOf, toStoreError } from './errors.ts';
 import type { WriteActs } from './write-acts.ts';
 
 /** One act waiting for the writer. */
@@ -15,12 +14,13 @@ export type JobResult =
   | { readonly id: number; readonly failure: Failure };
 
 /** Acts that SQLite does not let run inside a transaction. */
-const aloneActs: ReadonlySet<keyof WriteActs> = new Set(['copyTo', 'checkpoint']);
+const aloneActs: ReadonlySet<keyof WriteActs> = new Set(['takeLock']);
 
 /**
  * Runs waiting jobs and answers them once they are durable: all in one IMMEDIATE transaction, each
  * in a savepoint, so that one commit (one flush to disk) serves all and one failing job takes no
- * other with it. Where a failure ends the transaction itself, each job is tried alone.
+ * other with it. Where a full disk ends the transaction itself, each job is tried alone: a smaller one
+ * may fit. After any other such failure none is tried again.
  */
 export function runTogether(
   connection: Connection,
@@ -42,8 +42,10 @@ function runInOne(connection: Connection, acts: WriteActs, jobs: readonly Job[])
   } catch (error) {
     // A full disk may have ended the transaction already.
     if (connection.inTransaction) connection.exec('ROLLBACK');
-    if (jobs.length > 1) return jobs.flatMap((job) => runInOne(connection, acts, [job]));
     const failure = failureOf(error);
+    if (failure.kind === 'full' && jobs.length > 1) {
+      return jobs.flatMap((job) => runInOne(connection, acts, [job]));
+    }
     return jobs.map(({ id }) => ({ id, failure }));
   }
 }
@@ -52,8 +54,7 @@ function inSavepoint(connection: Connection, acts: WriteActs, job: Job): JobResu
   connection.exec('SAVEPOINT job');
   const result = attempt(acts, job);
   if ('failure' in result) {
-    const { kind, message } = result.failure;
-    if (!connection.inTransaction) throw new StoreError(kind, message);
+    if (!connection.inTransaction) throw toStoreError(result.failure);
     connection.exec('ROLLBACK TO job');
   }
   connection.exec('RELEASE job');

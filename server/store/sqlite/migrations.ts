@@ -39,16 +39,21 @@ export function migrate(
   connection: Connection,
   migrations: readonly Migration[],
   at: string,
-  beforeChange: (fromVersion: number) => void,
+  beforeChange: () => void,
 ): void {
-  const present = Number(connection.pragma('user_version', { simple: true }));
+  const present = schemaVersion(connection);
   if (present > migrations.length) {
     const detail = `The database has schema ${present}, this service knows ${migrations.length}. Start the newer service.`;
     throw new StoreError('unavailable', detail);
   }
   if (present > 0) checkApplied(connection, migrations);
-  if (present > 0 && present < migrations.length) beforeChange(present);
+  if (present > 0 && present < migrations.length) beforeChange();
   for (const migration of migrations.slice(present)) apply(connection, migration, at);
+}
+
+/** The version of the schema that the file has; 0 if it has none yet. */
+export function schemaVersion(connection: Connection): number {
+  return Number(connection.pragma('user_version', { simple: true }));
 }
 
 function checkApplied(connection: Connection, migrations: readonly Migration[]): void {

@@ -1,7 +1,7 @@
 import { join } from 'node:path';
-import { pathToFileURL } from 'node:url';
 import { projectRoot } from '../../project-files.ts';
 import { openReader } from './connection.ts';
+import { storeErrorOf } from './errors.ts';
 import { Reader } from './reader.ts';
 import { SqliteStore } from './sqlite-store.ts';
 import { Writer } from './writer.ts';
@@ -19,15 +19,17 @@ export interface SqliteStoreOptions {
 /** Opens (and if need be makes or migrates) the store of a file. Throws `StoreError`. */
 export async function openSqliteStore(options: SqliteStoreOptions): Promise<SqliteStore> {
   const { path, now = Date.now, maxPages } = options;
-  const root = projectRoot();
-  const { migrationsFolder = join(root, 'migrations') } = options;
-  // Always the compiled file: a thread cannot run the sources, as tests do.
-  const entry = pathToFileURL(join(root, 'dist/server/store/sqlite/writer-thread.js'));
-  const writer = await Writer.start(entry, {
+  const { migrationsFolder = join(projectRoot(), 'migrations') } = options;
+  const writer = await Writer.start({
     path,
     migrationsFolder,
     startedAt: new Date(now()).toISOString(),
     ...(maxPages === undefined ? {} : { maxPages }),
   });
-  return new SqliteStore(new Reader(openReader(path)), writer);
+  try {
+    return new SqliteStore(path, new Reader(openReader(path)), writer);
+  } catch (error) {
+    await writer.close();
+    throw storeErrorOf(error);
+  }
 }

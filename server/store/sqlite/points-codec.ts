@@ -1,3 +1,4 @@
+import { crc32 } from 'node:zlib';
 import { type StoredPoints, StoreError } from '../port.ts';
 
 /**
@@ -6,8 +7,10 @@ import { type StoredPoints, StoreError } from '../port.ts';
  * from the one before; any other column as it is. Little-endian throughout.
  *
  * Layout: a byte of the columns present (bit 0 real and imaginary part, bit 1 magnitude), the count
- * of points, then the columns, each with a byte of its places (255: eight bytes a value).
+ * of points, the columns, each with a byte of its places (255: eight bytes a value), and the CRC-32
+ * of all that, without which a flipped bit would be one more measured value.
  */
+const checksumBytes = 4;
 const asDoubles = 255;
 const mostPlaces = 15;
 /** Twice the difference of two whole numbers below this is exact. */
@@ -22,12 +25,12 @@ export function packPoints(points: StoredPoints): Uint8Array {
   writer.byte((reflectionRe === null ? 0 : 1) | (reflectionMagnitude === null ? 0 : 2));
   writer.whole(frequencyHz.length);
   for (const column of present) packColumn(writer, column);
-  return writer.bytes();
+  return writer.sealed();
 }
 
 /** Unpacks what `packPoints` made. Throws `corrupt`. */
 export function unpackPoints(bytes: Uint8Array): StoredPoints {
-  const reader = new ByteReader(bytes);
+  const reader = new ByteReader(checked(bytes));
   const present = reader.byte();
   const count = reader.whole();
   const frequencyHz = unpackColumn(reader, count);
@@ -36,6 +39,14 @@ export function unpackPoints(bytes: Uint8Array): StoredPoints {
   const reflectionIm = isComplex ? unpackColumn(reader, count) : null;
   const reflectionMagnitude = (present & 2) !== 0 ? unpackColumn(reader, count) : null;
   return { frequencyHz, reflectionRe, reflectionIm, reflectionMagnitude };
+}
+
+function checked(bytes: Uint8Array): Uint8Array {
+  const end = bytes.length - checksumBytes;
+  const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+  const body = bytes.subarray(0, Math.max(0, end));
+  if (end >= 0 && view.getUint32(end, true) === crc32(body)) return body;
+  throw new StoreError('corrupt', 'The stored points are not what was kept.');
 }
 
 function packColumn(writer: ByteWriter, column: Float64Array): void {
@@ -121,7 +132,10 @@ class ByteWriter {
     this.at += 8;
   }
 
-  bytes(): Uint8Array {
+  /** What was written, with its checksum. */
+  sealed(): Uint8Array {
+    this.view.setUint32(this.at, crc32(this.buffer.subarray(0, this.at)), true);
+    this.at += checksumBytes;
     return this.buffer.slice(0, this.at);
   }
 }
@@ -137,7 +151,6 @@ class ByteReader {
   }
 
   byte(): number {
-    this.expect(1);
     return this.buffer[this.at++];
   }
 
@@ -154,13 +167,7 @@ class ByteReader {
   }
 
   double(): number {
-    this.expect(8);
     this.at += 8;
     return this.view.getFloat64(this.at - 8, true);
-  }
-
-  private expect(bytes: number): void {
-    if (this.at + bytes <= this.buffer.length) return;
-    throw new StoreError('corrupt', 'The stored points end before their count.');
   }
 }

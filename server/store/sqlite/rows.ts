@@ -1,9 +1,10 @@
-import type {
-  Editable,
-  EditableKind,
-  EditableKinds,
-  LoadCheckRecord,
-  SweepRecord,
+import {
+  type Editable,
+  type EditableKind,
+  type EditableKinds,
+  type LoadCheckRecord,
+  StoreError,
+  type SweepRecord,
 } from '../port.ts';
 
 export interface ResourceRow {
@@ -41,7 +42,7 @@ export const sweepColumns = `sweep.club_id AS clubId, sweep.id AS id, received_a
 /** A row as the record that callers know. */
 export function toEditable<K extends EditableKind>(row: ResourceRow): Editable<EditableKinds[K]> {
   const { clubId, id, key, revision, createdAt, updatedAt } = row;
-  const facts: EditableKinds[K] = JSON.parse(row.facts);
+  const facts: EditableKinds[K] = parsed(row.facts);
   return { id, clubId, key, revision, createdAt, updatedAt, facts };
 }
 
@@ -62,8 +63,8 @@ export const loadCheckColumns = `club_id AS clubId, id, received_at AS receivedA
 /** A row as the record that callers know. */
 export function toLoadCheckRecord(row: LoadCheckRow): LoadCheckRecord {
   const { id, clubId, receivedAt, uploadedBy } = row;
-  const facts: LoadCheckRecord['facts'] = JSON.parse(row.facts);
-  return { id, clubId, receivedAt, uploadedBy, facts, measured: JSON.parse(row.measured) };
+  const facts: LoadCheckRecord['facts'] = parsed(row.facts);
+  return { id, clubId, receivedAt, uploadedBy, facts, measured: parsed(row.measured) };
 }
 
 /** A row as the record that callers know. */
@@ -74,7 +75,15 @@ export function toSweepRecord(row: SweepRow): SweepRecord {
     clubId,
     receivedAt,
     uploadedBy,
-    facts: JSON.parse(row.facts),
-    measured: JSON.parse(row.measured),
+    facts: parsed(row.facts),
+    measured: parsed(row.measured),
   };
+}
+
+function parsed<Kept>(text: string): Kept {
+  try {
+    return JSON.parse(text);
+  } catch (error) {
+    throw new StoreError('corrupt', 'A stored record does not read as JSON.', undefined, error);
+  }
 }

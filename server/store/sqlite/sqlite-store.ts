@@ -20,6 +20,7 @@ import {
   type TokenRecord,
 } from '../port.ts';
 import { pack, packText, unpack, unpackText } from './compression.ts';
+import { copyInThread } from './copy-in-thread.ts';
 import { storeErrorOf } from './errors.ts';
 import { packPoints, unpackPoints } from './points-codec.ts';
 import type { Reader } from './reader.ts';
@@ -28,10 +29,14 @@ import type { Writer } from './writer.ts';
 
 /** The Store port over one SQLite file: one writer in its thread, one reader here. */
 export class SqliteStore implements Store {
+  private readonly path: string;
   private readonly reader: Reader;
   private readonly writer: Writer;
+  /** Those under way. */
+  private readonly copies = new Set<Promise<void>>();
 
-  constructor(reader: Reader, writer: Writer) {
+  constructor(path: string, reader: Reader, writer: Writer) {
+    this.path = path;
     this.reader = reader;
     this.writer = writer;
   }
@@ -186,16 +191,23 @@ export class SqliteStore implements Store {
   }
 
   async backup(path: string): Promise<void> {
-    await this.writer.run('copyTo', path);
+    const copying = copyInThread({ from: this.path, to: path });
+    this.copies.add(copying);
+    try {
+      await copying;
+    } finally {
+      this.copies.delete(copying);
+    }
   }
 
   async ready(): Promise<void> {
     this.read((reader) => reader.clubs());
-    await this.writer.run('checkpoint');
+    await this.writer.run('takeLock');
   }
 
   async close(): Promise<void> {
     this.reader.close();
+    await Promise.allSettled(this.copies);
     await this.writer.close();
   }
 

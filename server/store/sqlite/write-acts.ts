@@ -17,7 +17,6 @@ import {
   type SweepRow,
   sweepColumns,
 } from './rows.ts';
-import { makeVerifiedCopy } from './verified-copy.ts';
 
 /** A sweep packed for the writer. */
 export interface PackedSweep {
@@ -61,9 +60,8 @@ export interface WriteActs {
     readonly outcome: 'added' | 'known';
     readonly row: LoadCheckRow;
   };
-  /** A verified copy of the whole database in a new file. */
-  copyTo(path: string): null;
-  checkpoint(): null;
+  /** Takes the lock that every write needs and gives it back: tells whether a write could begin. */
+  takeLock(): null;
 }
 
 /** Prepares the acts on the writer's connection. */
@@ -116,14 +114,6 @@ export function writeActs(connection: Connection): WriteActs {
     `SELECT ${loadCheckColumns} WHERE club_id = ? AND file_sha256 = ?`,
   );
 
-  const withKeyChecked = (key: string, act: () => ResourceRow | undefined) => {
-    try {
-      return act();
-    } catch (error) {
-      if (!isUniqueKey(error)) throw error;
-      throw new StoreError('conflict', `The key ${key} is in use.`, 'key', error);
-    }
-  };
   const keepRevision = (kind: EditableKind, actor: Actor, row: ResourceRow) => {
     const { at, memberId } = actor;
     const { clubId, id, revision, key, facts } = row;
@@ -140,9 +130,7 @@ export function writeActs(connection: Connection): WriteActs {
     },
     addResource({ kind, actor, id, key, siteId, facts }) {
       const { clubId, at, memberId } = actor;
-      const row = withKeyChecked(key, () =>
-        insertResource.get({ clubId, kind, id, key, siteId, at, facts }),
-      );
+      const row = insertResource.get({ clubId, kind, id, key, siteId, at, facts });
       if (row === undefined) throw new StoreError('unavailable', 'The insert gave no row.');
       keepRevision(kind, actor, row);
       insertEvent.run(clubId, `${kind}_added`, id, at, memberId);
@@ -150,9 +138,7 @@ export function writeActs(connection: Connection): WriteActs {
     },
     editResource({ kind, actor, id, key, siteId, facts, revision }) {
       const { clubId, at, memberId } = actor;
-      const row = withKeyChecked(key, () =>
-        updateResource.get({ clubId, kind, id, key, siteId, at, facts, revision }),
-      );
+      const row = updateResource.get({ clubId, kind, id, key, siteId, at, facts, revision });
       if (row === undefined) {
         throw new StoreError('stale', `Revision ${revision} of ${id} is not the present one.`);
       }
@@ -198,17 +184,9 @@ export function writeActs(connection: Connection): WriteActs {
       if (row === undefined) throw new StoreError('unavailable', 'The check was not kept.');
       return { outcome: 'added', row };
     },
-    copyTo(path) {
-      makeVerifiedCopy(connection, path);
-      return null;
-    },
-    checkpoint() {
-      connection.pragma('wal_checkpoint(PASSIVE)');
+    takeLock() {
+      connection.exec('BEGIN IMMEDIATE; ROLLBACK');
       return null;
     },
   };
-}
-
-function isUniqueKey(error: unknown): boolean {
-  return error instanceof Error && /UNIQUE constraint failed: .*resource\.key/.test(error.message);
 }

@@ -1,5 +1,5 @@
 import { parentPort, receiveMessageOnPort, workerData } from 'node:worker_threads';
-import { openWriter } from './connection.ts';
+import { type Connection, openWriter } from './connection.ts';
 import { failureOf } from './errors.ts';
 import { type Job, runTogether } from './group-commit.ts';
 import { prepareFile } from './prepare-file.ts';
@@ -19,11 +19,10 @@ export interface WriterOptions {
 if (parentPort !== null) serve(parentPort, workerData);
 
 function serve(port: NonNullable<typeof parentPort>, options: WriterOptions): void {
-  const connection = openWriter(options.path);
+  let connection: Connection;
   try {
-    prepareFile(connection, options);
+    connection = openPrepared(options);
   } catch (error) {
-    connection.close();
     port.postMessage({ id: 0, failure: failureOf(error) });
     port.close();
     return;
@@ -40,10 +39,30 @@ function serve(port: NonNullable<typeof parentPort>, options: WriterOptions): vo
     }
     for (const result of runTogether(connection, acts, jobs)) port.postMessage(result);
     if (!isClosing) return;
-    connection.pragma('optimize');
-    connection.pragma('wal_checkpoint(TRUNCATE)');
-    connection.close();
+    closeTidily(connection);
     port.close();
   });
   port.postMessage({ id: 0, value: null });
+}
+
+function openPrepared(options: WriterOptions): Connection {
+  const connection = openWriter(options.path);
+  try {
+    prepareFile(connection, options);
+    return connection;
+  } catch (error) {
+    connection.close();
+    throw error;
+  }
+}
+
+function closeTidily(connection: Connection): void {
+  try {
+    connection.pragma('optimize');
+    connection.pragma('wal_checkpoint(TRUNCATE)');
+  } catch {
+    // On a full disk neither may work, and nothing is lost: what is in the log is read at next start.
+  } finally {
+    connection.close();
+  }
 }

@@ -1,7 +1,8 @@
 import { Worker } from 'node:worker_threads';
 import { StoreError } from '../port.ts';
-import type { Failure } from './errors.ts';
+import { toStoreError } from './errors.ts';
 import type { JobResult } from './group-commit.ts';
+import { threadEntry } from './thread-entry.ts';
 import type { WriteActs } from './write-acts.ts';
 import type { WriterOptions } from './writer-thread.ts';
 
@@ -31,8 +32,8 @@ export class Writer {
   }
 
   /** Starts the thread; resolves once the file is open and its schema up to date. */
-  static async start(entry: URL, options: WriterOptions): Promise<Writer> {
-    const writer = new Writer(new Worker(entry, { workerData: options }));
+  static async start(options: WriterOptions): Promise<Writer> {
+    const writer = new Writer(new Worker(threadEntry('writer-thread'), { workerData: options }));
     await new Promise<never>((resolve, reject) => writer.waiting.set(0, { resolve, reject }));
     return writer;
   }
@@ -67,7 +68,7 @@ export class Writer {
   private settle(result: JobResult): void {
     const waiting = this.waiting.get(result.id);
     this.waiting.delete(result.id);
-    if ('failure' in result) waiting?.reject(errorOf(result.failure));
+    if ('failure' in result) waiting?.reject(toStoreError(result.failure));
     else waiting?.resolve(result.value as never);
   }
 
@@ -76,8 +77,4 @@ export class Writer {
     for (const { reject } of this.waiting.values()) reject(new StoreError('unavailable', message));
     this.waiting.clear();
   }
-}
-
-function errorOf({ kind, message, field }: Failure): StoreError {
-  return new StoreError(kind, message, field ?? undefined);
 }

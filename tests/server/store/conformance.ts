@@ -57,6 +57,23 @@ export function describeStore(name: string, open: () => Promise<OpenedStore>): v
       expect((await store.listClubs()).map(({ key }) => key)).toEqual(['ours', 'theirs']);
     });
 
+    it('refuses a second club of the same key', async () => {
+      const again = { id: idOf(3), key: 'ours', name: 'Twin', invented: true, createdAt: at };
+      const token = {
+        id: idOf(103),
+        clubId: idOf(3),
+        memberId: idOf(900),
+        label: 'first',
+        createdAt: at,
+        secretSha256: new Uint8Array(32).fill(3),
+      };
+      await expect(store.addClub(again, token)).rejects.toMatchObject({
+        kind: 'conflict',
+        field: 'key',
+      });
+      expect(await store.findToken(token.secretSha256)).toBeNull();
+    });
+
     it('finds what was added by id and by key, and not for another club', async () => {
       const fresh = { id: idOf(10), key: 'field', facts: siteFacts };
       const added = await store.addEditable('sites', actorOf(club), fresh);

@@ -44,6 +44,22 @@ describe('packed points', () => {
     expect(packed.length).toBeGreaterThan(401);
   });
 
+  it('are told as corrupt when one bit is not as it was', () => {
+    const points = {
+      frequencyHz: Float64Array.of(14e6, 14.1e6, 14.2e6),
+      reflectionRe: Float64Array.of(0.1, -0.25, 1 / 3),
+      reflectionIm: Float64Array.of(-0.5, 0, 0.123456),
+      reflectionMagnitude: null,
+    };
+    const packed = packPoints(points);
+    expect(packed.length).toBeGreaterThan(20);
+    for (let bit = 0; bit < 8 * packed.length; bit++) {
+      const damaged = Uint8Array.from(packed);
+      damaged[bit >> 3] ^= 1 << (bit & 7);
+      expect(() => unpackPoints(damaged), `bit ${bit}`).toThrow(/not what was kept/);
+    }
+  });
+
   it('that were cut off are told as corrupt', () => {
     const points = {
       frequencyHz: Float64Array.of(1, 2.5, 1e300),
@@ -52,6 +68,8 @@ describe('packed points', () => {
       reflectionMagnitude: Float64Array.of(0.1, 0.2, 0.3),
     };
     const packed = packPoints(points);
-    expect(() => unpackPoints(packed.subarray(0, packed.length - 1))).toThrow(/end before/);
+    for (let length = 0; length < packed.length; length++) {
+      expect(() => unpackPoints(packed.subarray(0, length))).toThrow(/not what was kept/);
+    }
   });
 });

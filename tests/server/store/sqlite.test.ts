@@ -1,5 +1,12 @@
-import { copyFileSync, existsSync, mkdirSync, readdirSync, writeFileSync } from 'node:fs';
-import { join } from 'node:path';
+import {
+  copyFileSync,
+  existsSync,
+  mkdirSync,
+  readdirSync,
+  readFileSync,
+  writeFileSync,
+} from 'node:fs';
+import { dirname, join } from 'node:path';
 import Database from 'better-sqlite3';
 import { afterEach, describe, expect, it } from 'vitest';
 import { projectRoot } from '../../../server/project-files.ts';
@@ -10,35 +17,13 @@ import {
 } from '../../../server/store/sqlite/connection.ts';
 import { openSqliteStore } from '../../../server/store/sqlite/open.ts';
 import { listQueries } from '../../../server/store/sqlite/reader.ts';
-import type { SqliteStore } from '../../../server/store/sqlite/sqlite-store.ts';
-import { actorOf, at, idOf, newSweep, siteFacts } from '../../support/store-records.ts';
+import { club, storeWithClub } from '../../support/open-test-store.ts';
+import { actorOf, idOf, newSweep, siteFacts } from '../../support/store-records.ts';
 import { temporaryFolders } from '../../support/temporary-folders.ts';
 import { describeStore } from './conformance.ts';
 
 const { newFolder, removeAll } = temporaryFolders();
 afterEach(removeAll);
-
-const club = idOf(1);
-
-async function storeWithClub(path: string, options: { maxPages?: number } = {}) {
-  const store = await openSqliteStore({ path, ...options });
-  await addClub(store);
-  return store;
-}
-
-async function addClub(store: SqliteStore) {
-  await store.addClub(
-    { id: club, key: 'ours', name: 'Ours', invented: true, createdAt: at },
-    {
-      id: idOf(2),
-      clubId: club,
-      memberId: idOf(900),
-      label: 'first',
-      createdAt: at,
-      secretSha256: new Uint8Array(32).fill(7),
-    },
-  );
-}
 
 describeStore('a SQLite file', async () => {
   const store = await openSqliteStore({ path: join(newFolder(), 'ledger.sqlite') });
@@ -88,6 +73,12 @@ describe('the database file', () => {
     expect(() => hand.exec('DELETE FROM resource')).toThrow(/is kept/);
     expect(() => hand.exec('DELETE FROM sweep_current')).toThrow(/is kept/);
     hand.close();
+    const writer = openWriter(path);
+    for (const table of kept) {
+      const replacing = `REPLACE INTO ${table} SELECT * FROM ${table}`;
+      expect(() => writer.exec(replacing), table).toThrow(/is kept/);
+    }
+    writer.close();
   });
 
   it('answers every list from an index, without sorting', async () => {
@@ -107,12 +98,20 @@ describe('the database file', () => {
     hand.close();
   });
 
-  it('is told from the file of another program', async () => {
+  it('is told from the file of another program, which stays as it was', async () => {
     const path = join(newFolder(), 'ledger.sqlite');
     const other = new Database(path);
     other.exec('CREATE TABLE theirs (x)');
     other.close();
+    const before = readFileSync(path);
     await expect(openSqliteStore({ path })).rejects.toMatchObject({ kind: 'unavailable' });
+    expect(readFileSync(path).equals(before)).toBe(true);
+  });
+
+  it('is told as corrupt where it is no database at all', async () => {
+    const path = join(newFolder(), 'ledger.sqlite');
+    writeFileSync(path, 'not a database '.repeat(1000));
+    await expect(openSqliteStore({ path })).rejects.toMatchObject({ kind: 'corrupt' });
   });
 
   it('finds a changed byte of a kept file', async () => {
@@ -195,19 +194,22 @@ describe('migrations', () => {
     await expect(openSqliteStore({ path, migrationsFolder })).rejects.toThrow(/was changed/);
   });
 
-  it('keep a verified copy of what was there before a change', async () => {
+  it('keep a verified copy of what was there before a change, whatever copies there are', async () => {
     const path = join(newFolder(), 'ledger.sqlite');
     await (await storeWithClub(path)).close();
     const migrationsFolder = copyOfMigrations();
     const next = readdirSync(migrationsFolder).length + 1;
     const name = `${String(next).padStart(4, '0')}_more.sql`;
     writeFileSync(join(migrationsFolder, name), 'CREATE TABLE more (x INTEGER) STRICT;\n');
-    const store = await openSqliteStore({ path, migrationsFolder });
+    writeFileSync(`${path}.schema-${next - 1}`, 'of an earlier try');
+    const now = () => Date.parse('2026-06-01T12:00:00.000Z');
+    const store = await openSqliteStore({ path, migrationsFolder, now });
     expect((await store.listClubs()).length).toBe(1);
     await store.close();
-    const kept = new Database(`${path}.schema-${next - 1}`, { readonly: true });
+    const copy = `${path}.schema-${next - 1}-20260601T120000000Z`;
+    const kept = new Database(copy, { readonly: true });
     expect(kept.prepare('SELECT count(*) FROM club').pluck().get()).toBe(1);
-    expect(existsSync(`${path}.schema-${next - 1}.part`)).toBe(false);
+    expect(existsSync(`${copy}.part`)).toBe(false);
     kept.close();
   });
 
@@ -221,7 +223,8 @@ describe('migrations', () => {
       join(migrationsFolder, name),
       'CREATE TABLE half (x INTEGER) STRICT; nonsense;\n',
     );
-    await expect(openSqliteStore({ path, migrationsFolder })).rejects.toThrow();
+    await expect(openSqliteStore({ path, migrationsFolder })).rejects.toThrow(/nonsense/);
+    expect(readdirSync(dirname(path))).toEqual(['ledger.sqlite']);
     const store = await openSqliteStore({ path });
     expect((await store.listClubs()).length).toBe(1);
     await store.close();
@@ -248,5 +251,30 @@ describe('a backup', () => {
     const restored = await openSqliteStore({ path: join(folder, 'backup.sqlite') });
     expect(await restored.readSweepFile(club, idOf(105))).not.toBeNull();
     await restored.close();
+  });
+
+  it('that cannot be finished leaves nothing', async () => {
+    const folder = newFolder();
+    const store = await storeWithClub(join(folder, 'ledger.sqlite'));
+    const taken = join(folder, 'taken');
+    mkdirSync(taken);
+    await expect(store.backup(taken)).rejects.toMatchObject({ kind: 'unavailable' });
+    expect(existsSync(`${taken}.part`)).toBe(false);
+    await store.close();
+  });
+
+  it('is refused where a file of it does not match its hash', async () => {
+    const folder = newFolder();
+    const path = join(folder, 'ledger.sqlite');
+    const store = await storeWithClub(path);
+    await store.addSweep(newSweep(club, idOf(30), idOf(20), 'a line of a file\n'.repeat(100)));
+    const hand = new Database(path);
+    hand.exec("DROP TRIGGER file_is_kept_update; UPDATE file SET body = x'00'");
+    hand.close();
+    await expect(store.backup(join(folder, 'backup.sqlite'))).rejects.toMatchObject({
+      kind: 'corrupt',
+    });
+    expect(existsSync(join(folder, 'backup.sqlite'))).toBe(false);
+    await store.close();
   });
 });

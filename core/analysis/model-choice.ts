@@ -25,6 +25,8 @@ export interface ChosenFits {
   readonly factor95: number;
   /** Neighbouring residuals do not hang together: the fit explains all but noise. */
   readonly isWhite: boolean;
+  /** The best degree is as high as any that was tried, so that a higher one might do better. */
+  readonly isCapped: boolean;
   /** The residuals are not much larger than the noise between neighbouring samples. */
   readonly isExplained: boolean;
 }
@@ -160,6 +162,7 @@ function judged(
     noise: Math.sqrt(squares / freedom),
     factor95: isWhite ? student : student * Math.sqrt((1 + correlation) / (1 - correlation)),
     isWhite,
+    isCapped: fit.degree >= highestDegree - 1,
     isExplained: squares < explainedWithin ** 2 * roughNoise ** 2 * numbers,
   };
 }

@@ -77,7 +77,7 @@ function cover(
     const middle = (first + last) >> 1;
     const left = chooseOn(samples, form, first, middle);
     const right = chooseOn(samples, form, middle, last);
-    if (isFarOff(chosen) || pays(chosen, left, right)) {
+    if (chosen.isCapped || isFarOff(chosen) || pays(chosen, left, right)) {
       cover(samples, form, first, middle, left, pieces);
       cover(samples, form, middle, last, right, pieces);
       return;

@@ -1,6 +1,9 @@
 import { standingCautions } from '../core/advice/cautions.ts';
 import { type Analysis, analyse } from '../core/analysis/analysis.ts';
-import { instrumentErrorOf } from '../core/analysis/instrument-error.ts';
+import {
+  instrumentErrorOf,
+  type StatedInstrumentError,
+} from '../core/analysis/instrument-error.ts';
 import { curveOf } from '../core/analysis/refined-swr.ts';
 import { analysisVersion, summariseAnalysis } from '../core/analysis/summarise.ts';
 import { findPlan } from '../core/bands/plans.ts';
@@ -10,13 +13,7 @@ import { renormaliseSweep } from '../core/network/renormalise.ts';
 import type { Sweep } from '../core/sweep.ts';
 import { Problem } from './problems.ts';
 import type { Service } from './service.ts';
-import type {
-  AntennaFacts,
-  ResidualErrors,
-  SweepFacts,
-  SweepMeasured,
-  SweepRecord,
-} from './store/port.ts';
+import type { AntennaFacts, SweepFacts, SweepMeasured, SweepRecord } from './store/port.ts';
 import { toSweep } from './stored-points.ts';
 import { toSnakeCase } from './wire/case.ts';
 import { type SweepIdentity, summaryToWire } from './wire/summary.ts';
@@ -32,7 +29,7 @@ export interface ReportBasis {
   readonly licence: string | null;
   readonly designBands: readonly string[];
   /** What is known of the analyzer's own error; null: nothing. */
-  readonly residualErrors: ResidualErrors | null;
+  readonly residualErrors: StatedInstrumentError | null;
 }
 
 /** What of a record bears on how its sweep can be judged. */
@@ -47,7 +44,7 @@ export interface JudgedRecord {
  */
 export function basisOf(
   antenna: AntennaFacts,
-  residualErrors: ResidualErrors | null,
+  residualErrors: StatedInstrumentError | null,
   { facts, measured }: JudgedRecord,
 ): ReportBasis {
   const { maxSwr, plan, licence, designBands } = antenna;
@@ -77,7 +74,7 @@ export async function reportBasisOf(service: Service, record: SweepRecord): Prom
 async function residualErrorsOf(
   service: Service,
   { clubId, facts }: SweepRecord,
-): Promise<ResidualErrors | null> {
+): Promise<StatedInstrumentError | null> {
   if (facts.analyzerId === null) return null;
   const analyzer = await service.store.findEditable('analyzers', clubId, facts.analyzerId);
   return analyzer?.facts.residualErrors ?? null;

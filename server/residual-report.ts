@@ -1,14 +1,17 @@
 import { type LoadCheck, residualError } from '../core/analysis/check-load.ts';
-import { statedInstrumentError } from '../core/analysis/instrument-error.ts';
+import {
+  type StatedInstrumentError,
+  statedInstrumentError,
+} from '../core/analysis/instrument-error.ts';
 import type { Service } from './service.ts';
-import type { AnalyzerRecord, LoadCheckRecord, ResidualErrors } from './store/port.ts';
+import type { AnalyzerRecord, LoadCheckRecord } from './store/port.ts';
 import { toSweep } from './stored-points.ts';
 
 /** Checks older than this many are not looked at: a set of loads is a handful. */
 const latestChecks = 50;
 
 export interface ResidualReport {
-  readonly errors: ResidualErrors | null;
+  readonly errors: StatedInstrumentError | null;
   readonly fromChecks: readonly string[];
   readonly detail: string;
 }

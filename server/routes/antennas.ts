@@ -1,5 +1,6 @@
 import type { FastifyRequest } from 'fastify';
 import { z } from 'zod';
+import type { AntennaKind } from '../../core/advice/antenna-kind.ts';
 import { bandsOf } from '../../core/bands/bands-of.ts';
 import { bandNames } from '../../core/bands/plan.ts';
 import { findPlan } from '../../core/bands/plans.ts';
@@ -8,7 +9,7 @@ import type { App } from '../http/app-type.ts';
 import { pageRequest, sendPage } from '../http/pages.ts';
 import { Problem } from '../problems.ts';
 import type { Service } from '../service.ts';
-import type { AntennaFacts, AntennaKind, AntennaRecord } from '../store/port.ts';
+import type { AntennaFacts, AntennaRecord } from '../store/port.ts';
 import { toCamelCase, toSnakeCase } from '../wire/case.ts';
 import {
   editHeaders,

@@ -4,6 +4,10 @@
  * Ids (UUIDv7) and times (RFC 3339 UTC, milliseconds, `Z`) are made by the caller.
  */
 
+import type { AntennaKind } from '../../core/advice/antenna-kind.ts';
+import type { StatedInstrumentError } from '../../core/analysis/instrument-error.ts';
+import type { FeedLineSection } from '../../core/line/feed-line.ts';
+
 /** Where and by whom a change was made: written with it. */
 export interface Actor {
   readonly clubId: string;
@@ -57,29 +61,6 @@ export interface SiteFacts {
   readonly invented: boolean;
 }
 
-/** One section of a feed line, from the analyzer's end to the antenna. Null is unknown. */
-export interface FeedLineSectionFacts {
-  readonly cable: string;
-  readonly lengthM: number | null;
-  readonly lengthU95M: number | null;
-  readonly extraLossDb: number;
-  readonly choke: boolean;
-}
-
-export type AntennaKind =
-  | 'dipole'
-  | 'loaded_dipole'
-  | 'trap_dipole'
-  | 'off_centre_fed'
-  | 'end_fed'
-  | 'vertical'
-  | 'vertical_with_radials'
-  | 'five_eighths_vertical'
-  | 'loop'
-  | 'small_loop'
-  | 'beam'
-  | 'other';
-
 export interface AntennaFacts {
   readonly siteId: string;
   readonly name: string;
@@ -93,22 +74,15 @@ export interface AntennaFacts {
   readonly maxSwr: number;
   readonly referenceOhm: number;
   /** Null: not known. Empty: the analyzer is connected at the feed point. */
-  readonly feedLine: readonly FeedLineSectionFacts[] | null;
+  readonly feedLine: readonly FeedLineSection[] | null;
   readonly note: string;
   readonly invented: boolean;
-}
-
-/** Residual errors of a calibrated analyzer, dB; null where one is not known. */
-export interface ResidualErrors {
-  readonly directivityDb: number | null;
-  readonly sourceMatchDb: number | null;
-  readonly trackingDb: number | null;
 }
 
 export interface AnalyzerFacts {
   readonly name: string;
   /** What is left of its errors after calibration, stated or measured; null: none is known. */
-  readonly residualErrors: ResidualErrors | null;
+  readonly residualErrors: StatedInstrumentError | null;
   readonly note: string;
   readonly invented: boolean;
 }

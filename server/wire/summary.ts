@@ -1,6 +1,6 @@
 import { z } from 'zod';
+import type { StatedInstrumentError } from '../../core/analysis/instrument-error.ts';
 import type { Summary } from '../../core/analysis/summary.ts';
-import type { ResidualErrors } from '../store/port.ts';
 import { toSnakeCase } from './case.ts';
 import { frequencySchema, idSchema } from './common.ts';
 import { residualErrorsSchema } from './residual-errors.ts';
@@ -157,7 +157,7 @@ export interface SweepIdentity {
 export function summaryToWire(
   { sweepId, antennaId }: SweepIdentity,
   summary: Summary,
-  residualErrors: ResidualErrors | null,
+  residualErrors: StatedInstrumentError | null,
 ): z.output<typeof summarySchema> {
   return {
     sweep_id: sweepId,

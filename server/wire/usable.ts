@@ -1,8 +1,8 @@
 import { z } from 'zod';
+import type { StatedInstrumentError } from '../../core/analysis/instrument-error.ts';
 import type { Plane } from '../../core/analysis/summary.ts';
 import { bandNames } from '../../core/bands/plan.ts';
 import type { UsableReport } from '../../core/bands/usable-report.ts';
-import type { ResidualErrors } from '../store/port.ts';
 import { toSnakeCase } from './case.ts';
 import { frequencySchema, idSchema } from './common.ts';
 import { familySchema, statusSchema } from './plan.ts';
@@ -71,7 +71,7 @@ export const usableSchema = z
 
 /** How a sweep is looked at for a report, beside what the report itself says. */
 interface ReportBasis {
-  readonly residualErrors: ResidualErrors | null;
+  readonly residualErrors: StatedInstrumentError | null;
   readonly analysisVersion: string;
   readonly plane: Plane;
   readonly referenceOhm: number;

@@ -1,4 +1,4 @@
-import type { FeedLineSectionFacts } from '../../store/port.ts';
+import type { FeedLineSection } from '../../../core/line/feed-line.ts';
 import type { FeedLine } from './lumped.ts';
 
 /** Kinds of cable by what they are made of; no maker's product. Matched loss per metre at 1 MHz. */
@@ -18,6 +18,6 @@ export function genericLine(cable: GenericCable, lengthM: number, lossFactor = 1
 }
 
 /** The same length as the record states it. */
-export function statedLine(cable: GenericCable, lengthM: number): FeedLineSectionFacts {
+export function statedLine(cable: GenericCable, lengthM: number): FeedLineSection {
   return { cable, lengthM, lengthU95M: 0.1, extraLossDb: 0, choke: false };
 }

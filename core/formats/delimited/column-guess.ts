@@ -73,8 +73,9 @@ function unitByRange(quantity: Quantity, values: Float64Array, doubts: Doubt[]):
     return isRadian ? 'rad' : units[0];
   }
   const likely = likelyFrequencyUnits(values);
-  if (likely.length === 1) return likely[0];
-  doubts.push(other('its unit is not written, and its numbers do not tell'));
+  const only =
+    likely.length === 1 ? ` (only ${likely[0]} places them where antennas are swept)` : '';
+  doubts.push(other(`its unit is not written, and numbers are no proof of it${only}`));
   return likely[0] ?? 'MHz';
 }
 

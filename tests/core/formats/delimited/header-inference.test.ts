@@ -113,17 +113,17 @@ describe('a header that says all', () => {
   it('may have a delimiter at the end of every row', () => {
     expect(readText('MHz,SWR,\n14,1.5,\n14.1,1.6,\n').columns).toBe('frequency:MHz,swr');
   });
-
-  it('needs no frequency unit where only one is possible', () => {
-    const at = (hz: number) => `Frequency,SWR\n${hz},1.5\n${hz * 1.01},1.4\n`;
-    expect(readText(at(14.1e6)).columns).toBe('frequency:Hz,swr');
-    expect(readText(at(7.1)).columns).toBe('frequency:MHz,swr');
-    // 144 might be kilohertz: the long waves.
-    expect(proposalFor(at(144)).columns).toBe('frequency:MHz,swr');
-  });
 });
 
 describe('a header that leaves doubts', () => {
+  it('asks for a frequency unit that is not written, and proposes the likely one', () => {
+    const at = (hz: number) => `Frequency,SWR\n${hz},1.5\n${hz * 1.01},1.4\n`;
+    expect(proposalFor(at(14.1e6)).columns).toBe('frequency:Hz,swr');
+    expect(proposalFor(at(7.1)).columns).toBe('frequency:MHz,swr');
+    // 144 might be kilohertz: the long waves.
+    expect(proposalFor(at(144)).columns).toBe('frequency:MHz,swr');
+  });
+
   it.each([
     ['R and X alone', table('MHz,R (ohm),X (ohm)', series), 'frequency:MHz,resistance,reactance'],
     ['no unit', table('MHz,Resistance,Reactance', series), 'frequency:MHz,resistance,reactance'],

@@ -63,7 +63,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
   takeJsonOnly(app);
   keepKnownMethods(app);
   logAnswers(app);
-  const metricsText = measureRequests(app);
+  const metricsText = measureRequests(app, service.lastBackupAt);
   await app.register(helmet, securityHeaders);
   // After the hooks above, so that a refusal is logged, counted and has its headers too.
   answerErrorsAsProblems(app, publicUrl);

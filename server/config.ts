@@ -23,6 +23,9 @@ export const configSchema = z.object({
   ),
   MAX_UPLOAD_BYTES: setting(wholeNumber(1024, 64 * 1024 * 1024).default(16 * 1024 * 1024)),
   MAX_POINTS: setting(wholeNumber(1, 1_000_000).default(100_001)),
+  DISK_RESERVE_BYTES: setting(wholeNumber(0, 2 ** 40).default(64 * 1024 * 1024)),
+  BACKUP_EVERY_HOURS: setting(wholeNumber(0, 24 * 366).default(24)),
+  BACKUP_KEEP: setting(wholeNumber(1, 1000).default(7)),
   SHUTDOWN_SECONDS: setting(wholeNumber(1, 60).default(8)),
 });
 
@@ -37,6 +40,11 @@ export interface Config {
   readonly logLevel: string;
   readonly maxUploadBytes: number;
   readonly maxPoints: number;
+  /** Uploads are refused while the disk has less than this free. */
+  readonly diskReserveBytes: number;
+  /** 0: none are made. */
+  readonly backupEveryHours: number;
+  readonly backupKeep: number;
   readonly shutdownSeconds: number;
 }
 
@@ -69,6 +77,9 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     logLevel: settings.LOG_LEVEL,
     maxUploadBytes: settings.MAX_UPLOAD_BYTES,
     maxPoints: settings.MAX_POINTS,
+    diskReserveBytes: settings.DISK_RESERVE_BYTES,
+    backupEveryHours: settings.BACKUP_EVERY_HOURS,
+    backupKeep: settings.BACKUP_KEEP,
     shutdownSeconds: settings.SHUTDOWN_SECONDS,
   });
 }

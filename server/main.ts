@@ -1,9 +1,11 @@
 import { randomBytes } from 'node:crypto';
 import { mkdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
+import type { FastifyBaseLogger } from 'fastify';
 import type { OpenAPIV3_1 } from 'openapi-types';
 import { defaultReadLimits } from '../core/formats/read-types.ts';
 import { buildApp } from './app.ts';
+import { type BackupSchedule, scheduleBackups } from './backup-schedule.ts';
 import { type Config, ConfigError, httpUrl, readConfig } from './config.ts';
 import { demoClub } from './demo/demo-club.ts';
 import { addFirstClub } from './first-run.ts';
@@ -13,29 +15,50 @@ import { loadDemo } from './load-demo.ts';
 import { makeLog } from './log.ts';
 import { projectRoot } from './project-files.ts';
 import type { Service } from './service.ts';
+import { ledgerPath } from './store/ledger-path.ts';
 import { openSqliteStore } from './store/sqlite/open.ts';
 import { firstSteps } from './welcome.ts';
 
 async function main(): Promise<void> {
   const config = readConfig(process.env);
-  const service = await openService(config);
   const log = makeLog(config.logLevel);
+  const opened = await openService(config);
+  const backups = backupsOf(opened, log, config);
+  const service = backups === null ? opened : { ...opened, lastBackupAt: backups.lastGoodAt };
   const app = await buildApp({ service, log, document: readDocument() });
-  closeOnSignal(app, service, config);
+  closeOnSignal(app, service, config, backups);
   await firstRun(service, config);
   await app.listen({ host: config.host, port: config.port });
   say(`Sweep Ledger listens on ${listeningUrl(app, config)} (documentation: /docs).\n`);
+  await backups?.makeIfDue();
 }
 
 async function openService(config: Config): Promise<Service> {
   mkdirSync(config.dataDir, { recursive: true, mode: 0o700 });
   return {
-    store: await openSqliteStore({ path: join(config.dataDir, 'ledger.sqlite') }),
+    store: await openSqliteStore({
+      path: ledgerPath(config.dataDir),
+      reserveBytes: config.diskReserveBytes,
+    }),
     now: Date.now,
     newId: makeIdSource(Date.now, randomBytes),
     publicUrl: config.publicUrl,
     limits: { ...defaultReadLimits, maxBytes: config.maxUploadBytes, maxPoints: config.maxPoints },
   };
+}
+
+function backupsOf(
+  { store, now }: Service,
+  log: FastifyBaseLogger,
+  { dataDir, backupEveryHours, backupKeep }: Config,
+): BackupSchedule | null {
+  if (backupEveryHours === 0) return null;
+  const folder = join(dataDir, 'backups');
+  return scheduleBackups(store, now, log, {
+    folder,
+    everyHours: backupEveryHours,
+    keep: backupKeep,
+  });
 }
 
 function readDocument(): OpenAPIV3_1.Document {
@@ -62,11 +85,17 @@ function listeningUrl(app: App, config: Config): string {
  * On SIGTERM or SIGINT: takes no new connections, lets running requests end, then flushes and closes
  * the store. Connections that are still open at the deadline are cut.
  */
-function closeOnSignal(app: App, service: Service, config: Config): void {
+function closeOnSignal(
+  app: App,
+  service: Service,
+  config: Config,
+  backups: BackupSchedule | null,
+): void {
   let closing = false;
   const close = async (signal: NodeJS.Signals) => {
     if (closing) return;
     closing = true;
+    backups?.stop();
     app.log.info({ signal }, 'closing');
     const deadline = setTimeout(
       () => app.server.closeAllConnections(),

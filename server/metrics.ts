@@ -13,7 +13,10 @@ interface Series {
  * Counts and times the requests of an instance, by route template (never by id, so that the number
  * of series stays bounded). Returns the present values in the Prometheus text format.
  */
-export function measureRequests(app: FastifyInstance): () => string {
+export function measureRequests(
+  app: FastifyInstance,
+  lastBackupAt: () => number | null = () => null,
+): () => string {
   const series = new Map<string, Series>();
   app.addHook('onResponse', async (request, reply) => {
     const route = request.routeOptions.url ?? 'none';
@@ -22,7 +25,7 @@ export function measureRequests(app: FastifyInstance): () => string {
     series.set(labels, found);
     observe(found, reply.elapsedTime / 1000);
   });
-  return () => requestText([...series.values()]) + processText();
+  return () => requestText([...series.values()]) + processText() + backupText(lastBackupAt());
 }
 
 function emptySeries(labels: string): Series {
@@ -59,6 +62,14 @@ function processText(): string {
       `${started} ${Math.round(performance.timeOrigin) / 1000}`,
     ])
   );
+}
+
+/** Nothing where no backup was made: a rule on its absence then tells, where a 0 may mislead. */
+function backupText(lastBackupAt: number | null): string {
+  if (lastBackupAt === null) return '';
+  const name = 'sweep_ledger_last_backup_timestamp_seconds';
+  const lines = [`${name} ${lastBackupAt / 1000}`];
+  return metricText(name, 'gauge', 'Begin of the newest good backup since 1970-01-01.', lines);
 }
 
 function metricText(name: string, type: string, help: string, lines: readonly string[]): string {

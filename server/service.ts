@@ -10,6 +10,8 @@ export interface Service {
   /** Without a slash at its end. */
   readonly publicUrl: string;
   readonly limits: ReadLimits;
+  /** When the newest good backup was begun, ms since 1970; null if there is none or none are made. */
+  readonly lastBackupAt?: () => number | null;
 }
 
 /** The present time as it is stored and sent: RFC 3339, UTC, milliseconds. */

@@ -10,7 +10,7 @@ import type { WriterOptions } from './writer-thread.ts';
  * that a service which fails at every start does not fill the disk with copies.
  */
 export function prepareFile(connection: Connection, options: WriterOptions): void {
-  const { path, migrationsFolder, startedAt, maxPages } = options;
+  const { path, migrationsFolder, startedAt, maxPages, synchronous } = options;
   const migrations = readMigrations(migrationsFolder);
   const before = schemaVersion(connection);
   const copy = `${path}.schema-${before}-${startedAt.replaceAll(/[-:.]/g, '')}`;
@@ -21,4 +21,5 @@ export function prepareFile(connection: Connection, options: WriterOptions): voi
     throw error;
   }
   if (maxPages !== undefined) connection.pragma(`max_page_count = ${maxPages}`);
+  if (synchronous !== undefined) connection.pragma(`synchronous = ${synchronous}`);
 }

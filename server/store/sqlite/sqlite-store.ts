@@ -21,6 +21,7 @@ import {
 } from '../port.ts';
 import { pack, packText, unpack, unpackText } from './compression.ts';
 import { copyInThread } from './copy-in-thread.ts';
+import { refuseBelowReserve } from './disk-reserve.ts';
 import { storeErrorOf } from './errors.ts';
 import { packPoints, unpackPoints } from './points-codec.ts';
 import type { Reader } from './reader.ts';
@@ -32,13 +33,15 @@ export class SqliteStore implements Store {
   private readonly path: string;
   private readonly reader: Reader;
   private readonly writer: Writer;
+  private readonly reserveBytes: number;
   /** Those under way. */
   private readonly copies = new Set<Promise<void>>();
 
-  constructor(path: string, reader: Reader, writer: Writer) {
+  constructor(path: string, reader: Reader, writer: Writer, reserveBytes: number) {
     this.path = path;
     this.reader = reader;
     this.writer = writer;
+    this.reserveBytes = reserveBytes;
   }
 
   async addClub(
@@ -101,6 +104,7 @@ export class SqliteStore implements Store {
   }
 
   async addSweep({ record, file, points, summary }: NewSweep): Promise<AddSweepOutcome> {
+    await refuseBelowReserve(this.path, this.reserveBytes);
     const [packedFile, packedSummary, packedUsable] = await Promise.all([
       pack(file),
       packText(summary.summaryJson),
@@ -168,6 +172,7 @@ export class SqliteStore implements Store {
   }
 
   async addLoadCheck({ record, file, points }: NewLoadCheck): Promise<AddLoadCheckOutcome> {
+    await refuseBelowReserve(this.path, this.reserveBytes);
     const { outcome, row } = await this.writer.run('addLoadCheck', {
       record,
       file: await pack(file),

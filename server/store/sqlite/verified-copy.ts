@@ -33,7 +33,8 @@ export function makeVerifiedCopy(connection: Connection, path: string): void {
   flush(dirname(path));
 }
 
-function flush(path: string): void {
+/** Waits until the file or folder is on disk. */
+export function flush(path: string): void {
   const handle = openSync(path, 'r');
   fsyncSync(handle);
   closeSync(handle);

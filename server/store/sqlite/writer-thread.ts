@@ -12,6 +12,8 @@ export interface WriterOptions {
   readonly startedAt: string;
   /** For tests of a full disk: the most pages that the file may have. */
   readonly maxPages?: number;
+  /** For the test that counts flushes to disk: what the service never runs with. */
+  readonly synchronous?: 'NORMAL';
 }
 
 // The one writer, in a thread of its own: a commit waits for the disk, and that wait must not stop

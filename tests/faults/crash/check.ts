@@ -19,6 +19,18 @@ export function readLedger(path: string): readonly Acknowledged[] {
     .map(([number, id, sha256]) => ({ number: Number(number), id, sha256 }));
 }
 
+/** Does it for all, eight at a time. */
+async function eachOf<Item>(
+  items: readonly Item[],
+  act: (item: Item) => Promise<void>,
+): Promise<void> {
+  const waiting = items.values();
+  const work = async () => {
+    for (const item of waiting) await act(item);
+  };
+  await Promise.all(Array.from({ length: 8 }, work));
+}
+
 /** What of the acknowledged uploads the service does not give back as it was sent, in words. */
 export async function lostUploads(
   url: string,
@@ -27,14 +39,14 @@ export async function lostUploads(
 ): Promise<readonly string[]> {
   const headers = { authorization: `Bearer ${token}` };
   const lost: string[] = [];
-  for (const { number, id, sha256 } of acknowledged) {
+  await eachOf(acknowledged, async ({ number, id, sha256 }) => {
     const answer = await fetch(`${url}/v1/sweeps/${id}/file`, { headers });
     const bytes = Buffer.from(await answer.arrayBuffer());
     const found = createHash('sha256').update(bytes).digest('hex');
     if (answer.status !== 200) lost.push(`upload ${number}: ${answer.status}`);
     else if (found !== sha256) lost.push(`upload ${number}: another SHA-256`);
-  }
-  return lost;
+  });
+  return lost.sort();
 }
 
 /** Which acknowledged uploads, sent again, are not answered with their first record, in words. */
@@ -44,14 +56,14 @@ export async function doubledUploads(
   acknowledged: readonly Acknowledged[],
 ): Promise<readonly string[]> {
   const doubled: string[] = [];
-  for (const { number, id } of acknowledged) {
+  await eachOf(acknowledged, async ({ number, id }) => {
     const answer = await uploadNumbered(url, token, number);
     const body = (await answer.json()) as { id: string };
     if (answer.status !== 200 || body.id !== id) {
       doubled.push(`upload ${number}: ${answer.status} ${body.id} for ${id}`);
     }
-  }
-  return doubled;
+  });
+  return doubled.sort();
 }
 
 // A sweep is whole with its file, facts, current row, summary, points and event.

@@ -57,10 +57,13 @@ export async function killAgainAndAgain(
       else await killWhileUploading(service, random, ledger, () => uploading.exitCode);
       service = startService(folder, port);
       await service.listening;
+      // The client rests meanwhile, so that its ledger stands still.
+      uploading.kill('SIGSTOP');
       const acknowledged = readLedger(ledger);
       faults.push(...(await lostUploads(url, token, acknowledged.slice(checked))));
       faults.push(...databaseFaults(path));
       checked = acknowledged.length;
+      uploading.kill('SIGCONT');
       tell(`kill ${kill}: ${checked} acknowledged, ${faults.length} faults`);
     }
     const stopped = once(uploading, 'exit');

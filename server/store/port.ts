@@ -6,6 +6,9 @@
 
 import type { AntennaKind } from '../../core/advice/antenna-kind.ts';
 import type { StatedInstrumentError } from '../../core/analysis/instrument-error.ts';
+import type { AttenuationPoint } from '../../core/line/attenuation.ts';
+import type { FarEnd } from '../../core/line/check/checked-line.ts';
+import type { WindowId } from '../../core/line/check/windows.ts';
 import type { FeedLineSection } from '../../core/line/feed-line.ts';
 
 /** Where and by whom a change was made: written with it. */
@@ -194,6 +197,80 @@ export interface AddLoadCheckOutcome {
   readonly record: LoadCheckRecord;
 }
 
+/** A cable as the club states it; what it states no half-width of is assumed. */
+export interface CableFacts {
+  readonly name: string;
+  readonly characteristicOhm: number;
+  readonly characteristicU95Ohm: number | null;
+  readonly velocityFactor: number;
+  readonly velocityFactorU95: number | null;
+  readonly points: readonly AttenuationPoint[];
+  readonly lossU95Fraction: number | null;
+  /** Where the figures are from. */
+  readonly source: string;
+  readonly note: string;
+  readonly invented: boolean;
+}
+
+/** A club's own cable, never edited: what was computed with it stays true. */
+export interface CableRecord {
+  readonly id: string;
+  readonly clubId: string;
+  readonly key: string;
+  readonly createdAt: string;
+  readonly createdBy: string;
+  readonly facts: CableFacts;
+}
+
+/** What a line is taken for in a check; with other values the same file is another check. */
+export interface TestedLine {
+  readonly farEnd: FarEnd;
+  /** What a loaded end was loaded with, ohm; null if nobody said, and for other ends. */
+  readonly loadOhm: number | null;
+  readonly cable: string | null;
+  readonly lengthM: number | null;
+  readonly lengthU95M: number | null;
+  readonly velocityFactor: number | null;
+  readonly velocityFactorU95: number | null;
+  readonly window: WindowId;
+  readonly compensateLoss: boolean;
+}
+
+/** What is told about a sweep into a feed line. */
+export interface LineCheckFacts {
+  readonly antennaId: string;
+  readonly analyzerId: string | null;
+  readonly measuredAt: string | null;
+  readonly note: string;
+  readonly invented: boolean;
+}
+
+/** A sweep into a feed line and what it told, kept for good. */
+export interface LineCheckRecord {
+  readonly id: string;
+  readonly clubId: string;
+  readonly receivedAt: string;
+  readonly uploadedBy: string;
+  readonly tested: TestedLine;
+  readonly facts: LineCheckFacts;
+  readonly measured: SweepMeasured;
+  /** Wire JSON of what the check found, without its trace. */
+  readonly reportJson: string;
+}
+
+export interface NewLineCheck {
+  readonly record: LineCheckRecord;
+  readonly file: Uint8Array;
+  /** Wire JSON of the trace. */
+  readonly traceJson: string;
+}
+
+/** `known`: this antenna has a check of these bytes under these facts, the one that is answered. */
+export interface AddLineCheckOutcome {
+  readonly outcome: 'added' | 'known';
+  readonly record: LineCheckRecord;
+}
+
 /** `same`: these bytes are this antenna's already. `elsewhere`: they are another antenna's. */
 export type AddSweepOutcome =
   | { readonly outcome: 'added'; readonly record: SweepRecord }
@@ -280,6 +357,27 @@ export interface Store {
     page: PageRequest,
   ): Promise<Page<LoadCheckRecord>>;
   readLoadCheckPoints(clubId: string, id: string): Promise<StoredPoints | null>;
+
+  /** Keeps a club's own cable. Throws `conflict` on a key in use. */
+  addCable(
+    actor: Actor,
+    fresh: { readonly id: string; readonly key: string; readonly facts: CableFacts },
+  ): Promise<CableRecord>;
+  /** By id or key; null if the club has none such. */
+  findCable(clubId: string, idOrKey: string): Promise<CableRecord | null>;
+  /** Ascending by key. */
+  listCables(clubId: string, page: PageRequest): Promise<Page<CableRecord>>;
+
+  /** Keeps a line check in one act; the same bytes under the same facts never make a twin. */
+  addLineCheck(check: NewLineCheck): Promise<AddLineCheckOutcome>;
+  findLineCheck(clubId: string, id: string): Promise<LineCheckRecord | null>;
+  /** Newest first by (measuredAt or receivedAt, id). */
+  listLineChecks(
+    clubId: string,
+    antennaId: string,
+    page: PageRequest,
+  ): Promise<Page<LineCheckRecord>>;
+  readLineCheckTrace(clubId: string, id: string): Promise<string | null>;
 
   /** Makes a verified copy of everything in a new file; never half of one. */
   backup(path: string): Promise<void>;

@@ -3,6 +3,8 @@ import type {
   Actor,
   AnalyzerFacts,
   AntennaFacts,
+  CableFacts,
+  NewLineCheck,
   NewSweep,
   SiteFacts,
 } from '../../server/store/port.ts';
@@ -49,6 +51,54 @@ export function antennaFacts(siteId: string): AntennaFacts {
     feedLine: null,
     note: '',
     invented: true,
+  };
+}
+
+export const cableFacts: CableFacts = {
+  name: 'Own coax',
+  characteristicOhm: 50,
+  characteristicU95Ohm: null,
+  velocityFactor: 0.8,
+  velocityFactorU95: 0.01,
+  points: [{ frequencyHz: 1e7, lossDbPer100M: 2 }],
+  lossU95Fraction: null,
+  source: 'its sheet',
+  note: '',
+  invented: true,
+};
+
+/** A line check whose file holds the text. */
+export function newLineCheck(
+  clubId: string,
+  id: string,
+  antennaId: string,
+  text: string,
+): NewLineCheck {
+  const { record, file } = newSweep(clubId, id, antennaId, text);
+  const { receivedAt, uploadedBy, measured } = record;
+  return {
+    record: {
+      id,
+      clubId,
+      receivedAt,
+      uploadedBy,
+      tested: {
+        farEnd: 'open',
+        loadOhm: null,
+        cable: 'own',
+        lengthM: 22,
+        lengthU95M: null,
+        velocityFactor: null,
+        velocityFactorU95: null,
+        window: 'kaiser_6',
+        compensateLoss: true,
+      },
+      facts: { antennaId, analyzerId: null, measuredAt: null, note: '', invented: true },
+      measured,
+      reportJson: '{"length_m":22}',
+    },
+    file,
+    traceJson: '{"magnitude":[0,1]}',
   };
 }
 

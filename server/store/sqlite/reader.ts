@@ -2,7 +2,11 @@ import type { ClubRecord, EditableKind, PageRequest, TokenRecord } from '../port
 import type { Codec } from './compression.ts';
 import type { Connection } from './connection.ts';
 import {
+  type CableRow,
+  cableColumns,
+  type LineCheckRow,
   type LoadCheckRow,
+  lineCheckColumns,
   loadCheckColumns,
   type ResourceRow,
   resourceColumns,
@@ -35,6 +39,11 @@ export const listQueries = {
     ORDER BY sort_at DESC, sweep_current.sweep_id DESC LIMIT @limit`,
   loadChecks: `SELECT ${loadCheckColumns}
     WHERE club_id = @clubId AND analyzer_id = @analyzerId AND (sort_at, id) < (@sortAt, @id)
+    ORDER BY sort_at DESC, id DESC LIMIT @limit`,
+  cables: `SELECT ${cableColumns}
+    WHERE club_id = @clubId AND key > @key ORDER BY key LIMIT @limit`,
+  lineChecks: `SELECT ${lineCheckColumns}
+    WHERE club_id = @clubId AND antenna_id = @antennaId AND (sort_at, id) < (@sortAt, @id)
     ORDER BY sort_at DESC, id DESC LIMIT @limit`,
 } as const;
 
@@ -110,6 +119,31 @@ export class Reader {
     return this.prepared.loadCheckPoints.get(clubId, id)?.points ?? null;
   }
 
+  cable(clubId: string, idOrKey: string): CableRow | null {
+    const { cableById, cableByKey } = this.prepared;
+    return cableById.get(clubId, idOrKey) ?? cableByKey.get(clubId, idOrKey) ?? null;
+  }
+
+  /** One row more than the page holds, if there is one. */
+  cables(clubId: string, { limit, after }: PageRequest): CableRow[] {
+    const [key] = after ?? ['', ''];
+    return this.prepared.cables.all({ clubId, key, limit: limit + 1 });
+  }
+
+  lineCheck(clubId: string, id: string): LineCheckRow | null {
+    return this.prepared.lineCheck.get(clubId, id) ?? null;
+  }
+
+  /** One row more than the page holds, if there is one. */
+  lineChecks(clubId: string, antennaId: string, { limit, after }: PageRequest): LineCheckRow[] {
+    const [sortAt, id] = after ?? [afterAllTimes, ''];
+    return this.prepared.lineChecks.all({ clubId, antennaId, sortAt, id, limit: limit + 1 });
+  }
+
+  lineCheckTrace(clubId: string, id: string): Buffer | null {
+    return this.prepared.lineCheckTrace.get(clubId, id)?.trace ?? null;
+  }
+
   summary(clubId: string, sweepId: string, analysisVersion: string): SummaryRow | null {
     return this.prepared.summary.get(clubId, sweepId, analysisVersion) ?? null;
   }
@@ -155,6 +189,14 @@ function prepareAll(connection: Connection) {
     loadChecks: prepare<LoadCheckRow>(listQueries.loadChecks),
     loadCheckPoints: prepare<{ readonly points: Buffer }>(
       'SELECT points FROM load_check WHERE club_id = ? AND id = ?',
+    ),
+    cableById: prepare<CableRow>(`SELECT ${cableColumns} WHERE club_id = ? AND id = ?`),
+    cableByKey: prepare<CableRow>(`SELECT ${cableColumns} WHERE club_id = ? AND key = ?`),
+    cables: prepare<CableRow>(listQueries.cables),
+    lineCheck: prepare<LineCheckRow>(`SELECT ${lineCheckColumns} WHERE club_id = ? AND id = ?`),
+    lineChecks: prepare<LineCheckRow>(listQueries.lineChecks),
+    lineCheckTrace: prepare<{ readonly trace: Buffer }>(
+      'SELECT trace FROM line_check WHERE club_id = ? AND id = ?',
     ),
     summary: prepare<SummaryRow>(
       'SELECT summary, usable FROM summary WHERE club_id = ? AND sweep_id = ? AND analysis_version = ?',

@@ -1,7 +1,9 @@
 import {
+  type CableRecord,
   type Editable,
   type EditableKind,
   type EditableKinds,
+  type LineCheckRecord,
   type LoadCheckRecord,
   StoreError,
   type SweepRecord,
@@ -65,6 +67,50 @@ export function toLoadCheckRecord(row: LoadCheckRow): LoadCheckRecord {
   const { id, clubId, receivedAt, uploadedBy } = row;
   const facts: LoadCheckRecord['facts'] = parsed(row.facts);
   return { id, clubId, receivedAt, uploadedBy, facts, measured: parsed(row.measured) };
+}
+
+export interface CableRow {
+  readonly clubId: string;
+  readonly id: string;
+  readonly key: string;
+  readonly createdAt: string;
+  readonly createdBy: string;
+  readonly facts: string;
+}
+
+/** Columns and table of a `CableRow`, for SELECT. */
+export const cableColumns =
+  'club_id AS clubId, id, key, created_at AS createdAt, created_by AS createdBy, facts FROM cable';
+
+/** A row as the record that callers know. */
+export function toCableRecord(row: CableRow): CableRecord {
+  return { ...row, facts: parsed(row.facts) };
+}
+
+export interface LineCheckRow {
+  readonly clubId: string;
+  readonly id: string;
+  readonly receivedAt: string;
+  readonly sortAt: string;
+  readonly uploadedBy: string;
+  readonly tested: string;
+  readonly facts: string;
+  readonly measured: string;
+  readonly report: string;
+}
+
+/** Columns and table of a `LineCheckRow`, for SELECT. */
+export const lineCheckColumns = `club_id AS clubId, id, received_at AS receivedAt, sort_at AS sortAt,
+  uploaded_by AS uploadedBy, tested, facts, measured, report FROM line_check`;
+
+/** A row as the record that callers know. */
+export function toLineCheckRecord(row: LineCheckRow): LineCheckRecord {
+  const { id, clubId, receivedAt, uploadedBy } = row;
+  const facts: LineCheckRecord['facts'] = parsed(row.facts);
+  const tested: LineCheckRecord['tested'] = parsed(row.tested);
+  const measured: LineCheckRecord['measured'] = parsed(row.measured);
+  const reportJson = row.report;
+  return { id, clubId, receivedAt, uploadedBy, tested, facts, measured, reportJson };
 }
 
 /** A row as the record that callers know. */

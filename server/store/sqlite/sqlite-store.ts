@@ -1,13 +1,18 @@
 import { createHash } from 'node:crypto';
 import {
   type Actor,
+  type AddLineCheckOutcome,
   type AddLoadCheckOutcome,
   type AddSweepOutcome,
+  type CableFacts,
+  type CableRecord,
   type ClubRecord,
   type Editable,
   type EditableKind,
   type EditableKinds,
+  type LineCheckRecord,
   type LoadCheckRecord,
+  type NewLineCheck,
   type NewLoadCheck,
   type NewSweep,
   type Page,
@@ -25,7 +30,13 @@ import { refuseBelowReserve } from './disk-reserve.ts';
 import { storeErrorOf } from './errors.ts';
 import { packPoints, unpackPoints } from './points-codec.ts';
 import type { Reader } from './reader.ts';
-import { toEditable, toLoadCheckRecord, toSweepRecord } from './rows.ts';
+import {
+  toCableRecord,
+  toEditable,
+  toLineCheckRecord,
+  toLoadCheckRecord,
+  toSweepRecord,
+} from './rows.ts';
 import type { Writer } from './writer.ts';
 
 /** The Store port over one SQLite file: one writer in its thread, one reader here. */
@@ -193,6 +204,52 @@ export class SqliteStore implements Store {
   async readLoadCheckPoints(clubId: string, id: string): Promise<StoredPoints | null> {
     const packed = this.read((reader) => reader.loadCheckPoints(clubId, id));
     return packed === null ? null : unpackPoints(packed);
+  }
+
+  async addCable(
+    actor: Actor,
+    fresh: { readonly id: string; readonly key: string; readonly facts: CableFacts },
+  ): Promise<CableRecord> {
+    return toCableRecord(await this.writer.run('addCable', { actor, ...fresh }));
+  }
+
+  async findCable(clubId: string, idOrKey: string): Promise<CableRecord | null> {
+    const row = this.read((reader) => reader.cable(clubId, idOrKey));
+    return row === null ? null : toCableRecord(row);
+  }
+
+  async listCables(clubId: string, page: PageRequest): Promise<Page<CableRecord>> {
+    const rows = this.read((reader) => reader.cables(clubId, page));
+    return pageOf(rows, page, toCableRecord, ({ key, id }) => [key, id]);
+  }
+
+  async addLineCheck({ record, file, traceJson }: NewLineCheck): Promise<AddLineCheckOutcome> {
+    await refuseBelowReserve(this.path, this.reserveBytes);
+    const { outcome, row } = await this.writer.run('addLineCheck', {
+      record,
+      file: await pack(file),
+      trace: await packText(traceJson),
+    });
+    return { outcome, record: toLineCheckRecord(row) };
+  }
+
+  async findLineCheck(clubId: string, id: string): Promise<LineCheckRecord | null> {
+    const row = this.read((reader) => reader.lineCheck(clubId, id));
+    return row === null ? null : toLineCheckRecord(row);
+  }
+
+  async listLineChecks(
+    clubId: string,
+    antennaId: string,
+    page: PageRequest,
+  ): Promise<Page<LineCheckRecord>> {
+    const rows = this.read((reader) => reader.lineChecks(clubId, antennaId, page));
+    return pageOf(rows, page, toLineCheckRecord, ({ sortAt, id }) => [sortAt, id]);
+  }
+
+  async readLineCheckTrace(clubId: string, id: string): Promise<string | null> {
+    const packed = this.read((reader) => reader.lineCheckTrace(clubId, id));
+    return packed === null ? null : unpackText(packed);
   }
 
   async backup(path: string): Promise<void> {

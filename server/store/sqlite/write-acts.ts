@@ -1,7 +1,9 @@
 import {
   type Actor,
+  type CableFacts,
   type ClubRecord,
   type EditableKind,
+  type LineCheckRecord,
   type LoadCheckRecord,
   StoreError,
   type SweepRecord,
@@ -10,7 +12,11 @@ import {
 import type { Packed } from './compression.ts';
 import type { Connection } from './connection.ts';
 import {
+  type CableRow,
+  cableColumns,
+  type LineCheckRow,
   type LoadCheckRow,
+  lineCheckColumns,
   loadCheckColumns,
   type ResourceRow,
   resourceColumns,
@@ -36,6 +42,21 @@ export interface PackedLoadCheck {
   readonly points: Uint8Array;
 }
 
+/** A line check packed for the writer. */
+export interface PackedLineCheck {
+  readonly record: LineCheckRecord;
+  readonly file: Packed;
+  /** Deflated text. */
+  readonly trace: Uint8Array;
+}
+
+export interface FreshCable {
+  readonly actor: Actor;
+  readonly id: string;
+  readonly key: string;
+  readonly facts: CableFacts;
+}
+
 export interface FreshResource {
   readonly kind: EditableKind;
   readonly actor: Actor;
@@ -59,6 +80,11 @@ export interface WriteActs {
   addLoadCheck(check: PackedLoadCheck): {
     readonly outcome: 'added' | 'known';
     readonly row: LoadCheckRow;
+  };
+  addCable(fresh: FreshCable): CableRow;
+  addLineCheck(check: PackedLineCheck): {
+    readonly outcome: 'added' | 'known';
+    readonly row: LineCheckRow;
   };
   /** Takes the lock that every write needs and gives it back: tells whether a write could begin. */
   takeLock(): null;
@@ -112,6 +138,21 @@ export function writeActs(connection: Connection): WriteActs {
   );
   const selectLoadCheckByFile = connection.prepare<unknown[], LoadCheckRow>(
     `SELECT ${loadCheckColumns} WHERE club_id = ? AND file_sha256 = ?`,
+  );
+
+  const insertCable = connection.prepare(
+    'INSERT INTO cable (club_id, id, key, created_at, created_by, facts) VALUES (?, ?, ?, ?, ?, ?)',
+  );
+  const selectCable = connection.prepare<unknown[], CableRow>(
+    `SELECT ${cableColumns} WHERE club_id = ? AND id = ?`,
+  );
+  const insertLineCheck = connection.prepare(
+    `INSERT INTO line_check (club_id, id, antenna_id, received_at, sort_at, uploaded_by, file_sha256, tested, facts, measured, report, trace)
+     VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)`,
+  );
+  const selectLineCheckByFile = connection.prepare<unknown[], LineCheckRow>(
+    `SELECT ${lineCheckColumns}
+     WHERE club_id = ? AND antenna_id = ? AND file_sha256 = ? AND tested = ?`,
   );
 
   const keepRevision = (kind: EditableKind, actor: Actor, row: ResourceRow) => {
@@ -181,6 +222,40 @@ export function writeActs(connection: Connection): WriteActs {
       );
       insertEvent.run(clubId, 'load_check_added', id, receivedAt, uploadedBy);
       const row = selectLoadCheckByFile.get(clubId, sha256);
+      if (row === undefined) throw new StoreError('unavailable', 'The check was not kept.');
+      return { outcome: 'added', row };
+    },
+    addCable({ actor, id, key, facts }) {
+      const { clubId, at, memberId } = actor;
+      insertCable.run(clubId, id, key, at, memberId, JSON.stringify(facts));
+      insertEvent.run(clubId, 'cable_added', id, at, memberId);
+      const row = selectCable.get(clubId, id);
+      if (row === undefined) throw new StoreError('unavailable', 'The cable was not kept.');
+      return row;
+    },
+    addLineCheck({ record, file, trace }) {
+      const { id, clubId, receivedAt, uploadedBy, tested, facts, measured, reportJson } = record;
+      const sha256 = Buffer.from(measured.fileSha256, 'hex');
+      const line = JSON.stringify(tested);
+      const known = selectLineCheckByFile.get(clubId, facts.antennaId, sha256, line);
+      if (known !== undefined) return { outcome: 'known', row: known };
+      insertFile.run(clubId, sha256, measured.fileBytes, file.codec, file.body);
+      insertLineCheck.run(
+        clubId,
+        id,
+        facts.antennaId,
+        receivedAt,
+        facts.measuredAt ?? receivedAt,
+        uploadedBy,
+        sha256,
+        line,
+        JSON.stringify(facts),
+        JSON.stringify(measured),
+        reportJson,
+        trace,
+      );
+      insertEvent.run(clubId, 'line_check_added', id, receivedAt, uploadedBy);
+      const row = selectLineCheckByFile.get(clubId, facts.antennaId, sha256, line);
       if (row === undefined) throw new StoreError('unavailable', 'The check was not kept.');
       return { outcome: 'added', row };
     },

@@ -5,7 +5,9 @@ import {
   analyzerFacts,
   antennaFacts,
   at,
+  cableFacts,
   idOf,
+  newLineCheck,
   newSweep,
   siteFacts,
 } from '../../support/store-records.ts';
@@ -219,6 +221,55 @@ export function describeStore(name: string, open: () => Promise<OpenedStore>): v
       expect(await store.readLoadCheckPoints(club, idOf(40))).toEqual(old.points);
       expect((await store.listLoadChecks(otherClub, idOf(7), firstPage)).items).toEqual([]);
       expect(await store.readLoadCheckPoints(otherClub, idOf(40))).toBeNull();
+    });
+
+    it('keeps a club’s own cables under keys of their own, ascending', async () => {
+      const own = { id: idOf(50), key: 'own', facts: cableFacts };
+      const added = await store.addCable(actorOf(club), own);
+      expect(added).toEqual({ ...own, clubId: club, createdAt: at, createdBy: idOf(900) });
+      expect(await store.findCable(club, 'own')).toEqual(added);
+      expect(await store.findCable(club, idOf(50))).toEqual(added);
+      expect(await store.findCable(otherClub, 'own')).toBeNull();
+      const twin = { ...own, id: idOf(51) };
+      await expect(store.addCable(actorOf(club), twin)).rejects.toMatchObject({
+        kind: 'conflict',
+        field: 'key',
+      });
+      await store.addCable(actorOf(otherClub), twin);
+      await store.addCable(actorOf(club), { ...own, id: idOf(52), key: 'a' });
+      const page = await store.listCables(club, { limit: 1, after: null });
+      expect(page.items.map(({ key }) => key)).toEqual(['a']);
+      const rest = await store.listCables(club, { limit: 1, after: page.next });
+      expect(rest).toEqual({ items: [added], next: null });
+    });
+
+    it('keeps line checks, newest first, each file once for an antenna and what was told', async () => {
+      const old = newLineCheck(club, idOf(60), idOf(20), 'open end');
+      const dated = { ...old.record.facts, measuredAt: '2025-01-01T00:00:00.000Z' };
+      const first = { ...old, record: { ...old.record, facts: dated } };
+      expect(await store.addLineCheck(first)).toEqual({ outcome: 'added', record: first.record });
+      const again = await store.addLineCheck(newLineCheck(club, idOf(61), idOf(20), 'open end'));
+      expect(again).toEqual({ outcome: 'known', record: first.record });
+      const corrected = newLineCheck(club, idOf(62), idOf(20), 'open end');
+      const tested = { ...corrected.record.tested, farEnd: 'short' as const };
+      const told = { ...corrected, record: { ...corrected.record, tested } };
+      expect((await store.addLineCheck(told)).outcome).toBe('added');
+      const shared = newLineCheck(club, idOf(63), idOf(21), 'open end');
+      expect((await store.addLineCheck(shared)).outcome).toBe('added');
+
+      expect(await store.findLineCheck(club, idOf(62))).toEqual(told.record);
+      expect(await store.readLineCheckTrace(club, idOf(62))).toBe(told.traceJson);
+      const page = await store.listLineChecks(club, idOf(20), { limit: 1, after: null });
+      expect(page.items).toEqual([told.record]);
+      const rest = await store.listLineChecks(club, idOf(20), { limit: 9, after: page.next });
+      expect(rest).toEqual({ items: [first.record], next: null });
+    });
+
+    it('tells nothing of a line check to another club', async () => {
+      await store.addLineCheck(newLineCheck(club, idOf(60), idOf(20), 'open end'));
+      expect(await store.findLineCheck(otherClub, idOf(60))).toBeNull();
+      expect(await store.readLineCheckTrace(otherClub, idOf(60))).toBeNull();
+      expect((await store.listLineChecks(otherClub, idOf(20), firstPage)).items).toEqual([]);
     });
 
     it('is ready while it is open, and unavailable afterwards', async () => {

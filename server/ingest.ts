@@ -1,10 +1,12 @@
 import { readSweep } from '../core/formats/read-sweep.ts';
 import type { ReadError, ReadLimits, ReadSweep } from '../core/formats/read-types.ts';
 import { fail, ok, type Result } from '../core/result.ts';
-import { analyseOn, basisOf, summaryOf, usableOf } from './reports.ts';
+import { basisOf } from './report-basis.ts';
+import { summaryOf, usableOf } from './reports.ts';
 import type {
   AnalyzerRecord,
   AntennaRecord,
+  CableRecord,
   LoadCheckFacts,
   NewLoadCheck,
   NewSweep,
@@ -14,11 +16,14 @@ import type {
   SweepRecord,
 } from './store/port.ts';
 import { toStoredPoints } from './stored-points.ts';
+import { viewOf } from './sweep-view.ts';
 
 /** A file on its way in, and what was told about it. */
 export interface Incoming extends IncomingFile {
   readonly antenna: AntennaRecord;
   readonly analyzer: AnalyzerRecord | null;
+  /** The club's own cables that the antenna's feed line names. */
+  readonly ownCables: readonly CableRecord[];
   readonly facts: SweepFacts;
 }
 
@@ -80,16 +85,17 @@ function readIncoming(incoming: IncomingFile): Result<ReadSweep, ReadError> {
 }
 
 function derivedFrom(
-  { antenna, analyzer }: Incoming,
+  { antenna, analyzer, ownCables }: Incoming,
   record: SweepRecord,
   { sweep, assumptions }: ReadSweep,
 ): StoredSummary {
-  const basis = basisOf(antenna.facts, analyzer?.facts.residualErrors ?? null, record);
-  const analysis = analyseOn(basis, sweep);
+  const residualErrors = analyzer?.facts.residualErrors ?? null;
+  const basis = basisOf(antenna.facts, residualErrors, ownCables, record);
+  const view = viewOf(basis, sweep, assumptions);
   return {
     analysisVersion: basis.analysisVersion,
-    summaryJson: JSON.stringify(summaryOf(record, analysis, assumptions, basis)),
-    usableJson: JSON.stringify(usableOf(record, analysis, basis)),
+    summaryJson: JSON.stringify(summaryOf(record, view, basis)),
+    usableJson: JSON.stringify(usableOf(record, view, basis)),
   };
 }
 

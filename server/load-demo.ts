@@ -45,6 +45,7 @@ async function keepUpload(
     uploadedBy: actor.memberId,
     antenna,
     analyzer,
+    ownCables: [],
     facts: {
       antennaId: antenna.id,
       analyzerId: analyzer.id,

@@ -1,110 +1,44 @@
 import { standingCautions } from '../core/advice/cautions.ts';
-import { type Analysis, analyse } from '../core/analysis/analysis.ts';
-import {
-  instrumentErrorOf,
-  type StatedInstrumentError,
-} from '../core/analysis/instrument-error.ts';
-import { curveOf } from '../core/analysis/refined-swr.ts';
-import { analysisVersion, summariseAnalysis } from '../core/analysis/summarise.ts';
 import { findPlan } from '../core/bands/plans.ts';
 import { usableBands } from '../core/bands/usable.ts';
+import type { UsableReport } from '../core/bands/usable-report.ts';
 import type { Assumption } from '../core/formats/read-types.ts';
-import { renormaliseSweep } from '../core/network/renormalise.ts';
 import type { Sweep } from '../core/sweep.ts';
 import { Problem } from './problems.ts';
+import { type ReportBasis, summaryMark, usableMark } from './report-basis.ts';
 import type { Service } from './service.ts';
-import type { AntennaFacts, SweepFacts, SweepMeasured, SweepRecord } from './store/port.ts';
+import type { SweepRecord } from './store/port.ts';
 import { toSweep } from './stored-points.ts';
-import { toSnakeCase } from './wire/case.ts';
+import { lineToRemove, type SweepView, viewOf } from './sweep-view.ts';
+import { lineToWire } from './wire/line.ts';
 import { type SweepIdentity, summaryToWire } from './wire/summary.ts';
 import { usableToWire } from './wire/usable.ts';
 
-/** All that a summary or a report follows from, beside the sweep itself. */
-export interface ReportBasis {
-  readonly analysisVersion: string;
-  readonly plane: SweepFacts['plane'];
-  readonly referenceOhm: number;
-  readonly maxSwr: number;
-  readonly plan: string;
-  readonly licence: string | null;
-  readonly designBands: readonly string[];
-  /** What is known of the analyzer's own error; null: nothing. */
-  readonly residualErrors: StatedInstrumentError | null;
-}
-
-/** What of a record bears on how its sweep can be judged. */
-export interface JudgedRecord {
-  readonly facts: Pick<SweepFacts, 'plane'>;
-  readonly measured: Pick<SweepMeasured, 'phase' | 'referenceOhm'>;
-}
-
-/**
- * The basis by which an antenna wants a sweep judged. A sweep without phase keeps the reference of
- * its file: it cannot be moved to another.
- */
-export function basisOf(
-  antenna: AntennaFacts,
-  residualErrors: StatedInstrumentError | null,
-  { facts, measured }: JudgedRecord,
-): ReportBasis {
-  const { maxSwr, plan, licence, designBands } = antenna;
-  const { plane } = facts;
-  const referenceOhm = measured.phase === 'none' ? measured.referenceOhm : antenna.referenceOhm;
-  return {
-    analysisVersion,
-    plane,
-    referenceOhm,
-    maxSwr,
-    plan,
-    licence,
-    designBands,
-    residualErrors,
-  };
-}
-
-/** The basis by which the sweep's antenna wants it judged at present. */
-export async function reportBasisOf(service: Service, record: SweepRecord): Promise<ReportBasis> {
-  const { antennaId } = record.facts;
-  const antenna = await service.store.findEditable('antennas', record.clubId, antennaId);
-  if (antenna === null) throw new Error(`The antenna ${antennaId} of sweep ${record.id} is gone.`);
-  return basisOf(antenna.facts, await residualErrorsOf(service, record), record);
-}
-
-/** What is known of the error of the analyzer that took a sweep. */
-async function residualErrorsOf(
-  service: Service,
-  { clubId, facts }: SweepRecord,
-): Promise<StatedInstrumentError | null> {
-  if (facts.analyzerId === null) return null;
-  const analyzer = await service.store.findEditable('analyzers', clubId, facts.analyzerId);
-  return analyzer?.facts.residualErrors ?? null;
-}
-
-/** The analysis from which both the summary and the report on this basis are read. */
-export function analyseOn({ referenceOhm, residualErrors }: ReportBasis, sweep: Sweep): Analysis {
-  const instrument = residualErrors === null ? null : instrumentErrorOf(residualErrors);
-  return analyse(renormaliseSweep(sweep, referenceOhm), instrument);
-}
-
-/** The summary of a sweep as it is sent; `analysis` is that on this basis. */
-export function summaryOf(
-  record: SweepRecord,
-  analysis: Analysis,
-  assumptions: readonly Assumption[],
-  { plane, residualErrors }: ReportBasis,
-) {
-  const summary = summariseAnalysis(analysis, { plane, assumptions });
+/** The summary of a sweep as it is sent; `view` is that on this basis. */
+export function summaryOf(record: SweepRecord, { summary, line }: SweepView, basis: ReportBasis) {
   const cautions = [...summary.cautions, ...standingCautions];
-  return summaryToWire(identityOf(record), { ...summary, cautions }, residualErrors);
+  return summaryToWire(
+    identityOf(record),
+    { ...summary, cautions },
+    basis.residualErrors,
+    line === null || basis.line === null ? null : lineToWire(basis.line, basis.maxSwr, line),
+  );
 }
 
-/** The usable-band report of a sweep as it is sent; `analysis` is that on this basis. */
-export function usableOf(record: SweepRecord, analysis: Analysis, basis: ReportBasis) {
+/** The usable-band report of a view on this basis. */
+export function usableReport({ curve }: SweepView, basis: ReportBasis): UsableReport {
   const { maxSwr, licence, designBands } = basis;
   const plan = findPlan(basis.plan);
   if (plan === null) throw new Error(`The plan ${basis.plan} is gone.`);
-  const report = usableBands(curveOf(analysis), plan, { maxSwr, licence, designBands });
-  return usableToWire(identityOf(record), basis, report);
+  return usableBands(curve, plan, { maxSwr, licence, designBands });
+}
+
+/** The usable-band report of a sweep as it is sent; `view` is that on this basis. */
+export function usableOf(record: SweepRecord, view: SweepView, basis: ReportBasis) {
+  const report = usableReport(view, basis);
+  const reasons = view.line?.conditioning?.reasons ?? [];
+  const cautions = [...reasons, ...report.cautions];
+  return usableToWire(identityOf(record), basis, { ...report, cautions });
 }
 
 /** The summary as JSON: the stored text if it was made on this basis, else computed. */
@@ -114,10 +48,11 @@ export async function summaryText(
   basis: ReportBasis,
 ): Promise<string> {
   const stored = await service.store.readSummary(record.clubId, record.id, basis.analysisVersion);
-  if (stored !== null && holds(stored.summaryJson, summaryMark(basis))) return stored.summaryJson;
-  const analysis = analyseOn(basis, await readSweepOf(service, record));
-  const assumptions: Assumption[] = JSON.parse(record.measured.assumptionsJson);
-  return JSON.stringify(summaryOf(record, analysis, assumptions, basis));
+  if (stored !== null && holds(JSON.parse(stored.summaryJson), summaryMark(basis))) {
+    return stored.summaryJson;
+  }
+  const view = viewOf(basis, await readSweepOf(service, record), assumptionsOf(record));
+  return JSON.stringify(summaryOf(record, view, basis));
 }
 
 /** The report as JSON: the stored text if it was made on this basis, else computed. */
@@ -127,9 +62,12 @@ export async function usableText(
   basis: ReportBasis,
 ): Promise<string> {
   const stored = await service.store.readSummary(record.clubId, record.id, basis.analysisVersion);
-  if (stored !== null && holds(stored.usableJson, toSnakeCase(basis))) return stored.usableJson;
-  const analysis = analyseOn(basis, await readSweepOf(service, record));
-  return JSON.stringify(usableOf(record, analysis, basis));
+  // What is stored holds at the plane of the sweep.
+  const isStored = stored !== null && lineToRemove(basis) === null;
+  if (isStored && holds(JSON.parse(stored.usableJson), usableMark(basis))) return stored.usableJson;
+  const sweep = await readSweepOf(service, record);
+  const view = viewOf(basis, sweep, assumptionsOf(record), [basis.maxSwr]);
+  return JSON.stringify(usableOf(record, view, basis));
 }
 
 /** The points of a record as a sweep. */
@@ -139,19 +77,21 @@ export async function readSweepOf(service: Service, record: SweepRecord): Promis
   return toSweep(record.measured, points);
 }
 
+/** What was assumed in reading the file of a record. */
+export function assumptionsOf({ measured }: SweepRecord): readonly Assumption[] {
+  return JSON.parse(measured.assumptionsJson);
+}
+
 function identityOf({ id, facts }: SweepRecord): SweepIdentity {
   return { sweepId: id, antennaId: facts.antennaId };
 }
 
-/** The fields by which a stored summary tells what it follows from. */
-export function summaryMark({ plane, referenceOhm, residualErrors }: ReportBasis) {
-  return toSnakeCase({ plane, referenceOhm, residualErrors });
-}
-
 /** Whether a stored answer has these fields, so that it is the answer that is asked for. */
-function holds(json: string, mark: object): boolean {
-  const stored = new Map<string, unknown>(Object.entries(JSON.parse(json)));
-  return Object.entries(mark).every(
-    ([name, value]) => JSON.stringify(stored.get(name)) === JSON.stringify(value),
-  );
+function holds(stored: unknown, mark: unknown): boolean {
+  if (typeof mark !== 'object' || mark === null || Array.isArray(mark)) {
+    return JSON.stringify(stored) === JSON.stringify(mark);
+  }
+  if (typeof stored !== 'object' || stored === null) return false;
+  const fields = new Map<string, unknown>(Object.entries(stored));
+  return Object.entries(mark).every(([name, value]) => holds(fields.get(name), value));
 }

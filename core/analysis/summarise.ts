@@ -28,7 +28,8 @@ export interface SummariseOptions {
   readonly instrument?: InstrumentError | null;
 }
 
-const usualLimits = [1.5, 2, 3];
+/** Limits of the usable spans where none are asked. */
+export const usualSwrLimits: readonly number[] = [1.5, 2, 3];
 
 /** The resonance and minimum-SWR summary of a sweep. */
 export function summarise(sweep: Sweep, options: SummariseOptions = {}): Summary {
@@ -40,7 +41,7 @@ export function summarise(sweep: Sweep, options: SummariseOptions = {}): Summary
 /** The summary of a sweep that was analysed already, against the reference it was analysed at. */
 export function summariseAnalysis(analysis: Analysis, options: SummariseOptions = {}): Summary {
   const { sweep } = analysis;
-  const { plane = 'measured', assumptions = [], swrLimits = usualLimits } = options;
+  const { plane = 'measured', assumptions = [], swrLimits = usualSwrLimits } = options;
   const resonances = resonancesOf(analysis);
   const swrMinima = analysis.minima.flatMap((turn) => swrMinimumAt(analysis, turn) ?? []);
   const minimum = lowest(swrMinima);

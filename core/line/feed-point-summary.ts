@@ -6,13 +6,14 @@ import { type Conditioning, judgeRemoval } from './conditioning.ts';
 import { extrapolatedLoss, type FeedLine } from './feed-line.ts';
 import { growHalfWidths, type SummaryPair } from './grown-half-widths.ts';
 import { type LineError, toFeedPoint } from './line.ts';
-import { removeLine } from './removal-half-width.ts';
+import { type Removal, removeLine } from './removal-half-width.ts';
 import { lineVariants } from './variants.ts';
 
 /** A summary at the feed point and how far it can be relied on. */
 export interface FeedPointSummary {
   readonly summary: Summary;
   readonly conditioning: Conditioning;
+  readonly removal: Removal;
 }
 
 /** Half-width of a measured reflection where none is stated: an effective directivity of 40 dB. */
@@ -67,7 +68,7 @@ export function feedPointSummary(
     ],
     cautions: [...conditioning.reasons, ...grown.cautions],
   };
-  return ok({ summary, conditioning });
+  return ok({ summary, conditioning, removal: removal.value });
 }
 
 /** Every n-th point and the last, so that the repeated summaries of a long sweep stay cheap. */

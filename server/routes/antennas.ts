@@ -24,6 +24,7 @@ import {
   readHeaders,
 } from '../wire/common.ts';
 import { editableFields, editableToWire, withEdits } from '../wire/editable.ts';
+import { sectionSchema } from '../wire/line.ts';
 import { answers, jsonAnswer, notModified } from '../wire/problem.ts';
 import {
   addEditable,
@@ -52,25 +53,6 @@ const antennaKinds = [
   'beam',
   'other',
 ] as const satisfies readonly AntennaKind[];
-
-const sectionSchema = z
-  .strictObject({
-    cable: z.string().min(1).max(100).meta({ description: 'Type of the cable.' }),
-    length_m: z.number().min(0).max(2000).nullable(),
-    length_u95_m: z
-      .number()
-      .min(0)
-      .max(2000)
-      .nullable()
-      .meta({ description: 'Half-width of the 95 % interval of the length.' }),
-    extra_loss_db: z
-      .number()
-      .min(0)
-      .max(60)
-      .meta({ description: 'Loss beside that of the cable: connectors, a balun.' }),
-    choke: z.boolean().meta({ description: 'Whether a common-mode choke is in it.' }),
-  })
-  .meta({ description: 'One section of feed line. Null is unknown.' });
 
 const facts = {
   key: keySchema,

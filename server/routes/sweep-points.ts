@@ -2,21 +2,24 @@ import { z } from 'zod';
 import { writeSweepCsv } from '../../core/formats/delimited/write-sweep-csv.ts';
 import { writeSweepJson } from '../../core/formats/json/write-sweep-json.ts';
 import { writeTouchstone } from '../../core/formats/touchstone/write-touchstone.ts';
+import type { FeedLine } from '../../core/line/feed-line.ts';
+import { toFeedPoint } from '../../core/line/line.ts';
 import type { Sweep } from '../../core/sweep.ts';
 import { negotiate } from '../http/accept.ts';
 import type { App } from '../http/app-type.ts';
 import { isNotModified } from '../http/conditional.ts';
 import { derivedTag } from '../http/etags.ts';
 import { Problem } from '../problems.ts';
+import { reportBasisOf } from '../report-basis.ts';
 import { readSweepOf } from '../reports.ts';
 import type { Service } from '../service.ts';
-import type { SweepRecord } from '../store/port.ts';
+import { lineToRemove } from '../sweep-view.ts';
 import { readHeaders } from '../wire/common.ts';
 import { pointsSchema } from '../wire/points.ts';
 import { answers, notModified } from '../wire/problem.ts';
-import { planeSchema } from '../wire/summary.ts';
+import { atPlane } from './asked-plane.ts';
 import { findProblems } from './editables.ts';
-import { refuseOtherPlane } from './sweep-reports.ts';
+import { planeQuery } from './sweep-reports.ts';
 import { downloadName, findSweepOrRefuse, sweepParams } from './sweeps.ts';
 
 /** The forms by name; Touchstone has no media type of its own, so it goes as plain text. */
@@ -43,7 +46,7 @@ export function sweepPointRoutes(app: App, service: Service): void {
         params: sweepParams,
         querystring: z.strictObject({
           as: z.enum(formNames).optional().meta({ description: 'Goes before `Accept`.' }),
-          plane: planeSchema.optional(),
+          plane: planeQuery,
         }),
         headers: acceptHeaders,
         response: answers(
@@ -65,12 +68,18 @@ export function sweepPointRoutes(app: App, service: Service): void {
     async (request, reply) => {
       const { as, plane } = request.query;
       const record = await findSweepOrRefuse(request, service, request.params.sweep);
-      refuseOtherPlane(record, plane);
+      const basis = atPlane(await reportBasisOf(service, record), record, plane);
+      const removed = lineToRemove(basis);
       const form = as ?? formOf(request.headers.accept);
       reply.header('vary', 'Accept');
-      const tag = derivedTag(['points', record.id, form]);
+      const tag = derivedTag(['points', record.id, form, JSON.stringify(removed)]);
       if (isNotModified(request, reply, tag)) return reply.code(304).send();
-      const text = textIn(form, record, await readSweepOf(service, record));
+      const measured = await readSweepOf(service, record);
+      const notes = [`Sweep ${record.id}`];
+      const text =
+        removed === null
+          ? textIn(form, notes, measured)
+          : textIn(form, [...notes, movedNote], movedTo(removed, measured));
       if (form !== 'json') {
         const name = downloadName(record, form === 'csv' ? 'csv' : 's1p');
         reply.header('content-disposition', `attachment; filename="${name}"`);
@@ -85,11 +94,20 @@ function formOf(accept: string | undefined): FormName {
   return formNames.find((name) => mediaTypes[name] === type) ?? 'json';
 }
 
-function textIn(form: FormName, { id }: SweepRecord, sweep: Sweep): string {
-  const note = `Sweep ${id}`;
+const movedNote =
+  'Moved to the feed point by calculation from the stated line: not a measurement. The summary at this plane tells how far it holds.';
+
+function movedTo(removed: FeedLine, measured: Sweep): Sweep {
+  const moved = toFeedPoint(measured, removed);
+  if (moved.ok) return moved.value;
+  const { code, detail } = moved.error;
+  throw new Problem('plane-unavailable', { detail, members: { code } });
+}
+
+function textIn(form: FormName, notes: readonly string[], sweep: Sweep): string {
   if (form === 'csv') return writeSweepCsv(sweep);
-  if (form === 'json') return writeSweepJson(sweep, { note });
-  const written = writeTouchstone(sweep, { comments: [note] });
+  if (form === 'json') return writeSweepJson(sweep, { note: notes.join('. ') });
+  const written = writeTouchstone(sweep, { comments: notes });
   if (!written.ok) throw new Problem('phase-unknown', { detail: written.error.detail });
   return written.value;
 }

@@ -3,26 +3,23 @@ import type { App } from '../http/app-type.ts';
 import { isNotModified } from '../http/conditional.ts';
 import { derivedTag } from '../http/etags.ts';
 import { Problem } from '../problems.ts';
-import {
-  type ReportBasis,
-  reportBasisOf,
-  summaryMark,
-  summaryText,
-  usableText,
-} from '../reports.ts';
+import { type ReportBasis, reportBasisOf, summaryMark, usableMark } from '../report-basis.ts';
+import { summaryText, usableText } from '../reports.ts';
 import type { Service } from '../service.ts';
 import type { SweepRecord } from '../store/port.ts';
+import { lineToRemove } from '../sweep-view.ts';
 import { readHeaders } from '../wire/common.ts';
 import { withEdits } from '../wire/editable.ts';
 import { answers, jsonAnswer, notModified } from '../wire/problem.ts';
 import { planeSchema, summarySchema } from '../wire/summary.ts';
 import { usableSchema } from '../wire/usable.ts';
+import { atPlane } from './asked-plane.ts';
 import { findProblems } from './editables.ts';
 import { planFaults } from './plan-reference.ts';
 import { findSweepOrRefuse, sweepParams } from './sweeps.ts';
 
 const tags = ['reports'];
-const planeQuery = planeSchema
+export const planeQuery = planeSchema
   .optional()
   .meta({ description: "The plane of the answer; default: the sweep's own." });
 const referenceQuery = z.coerce
@@ -31,15 +28,6 @@ const referenceQuery = z.coerce
   .max(10_000)
   .optional()
   .meta({ description: "What SWR refers to, in ohms; default: the antenna's reference." });
-
-/** Refuses a plane at which the sweep is not known. Throws `plane-unavailable`. */
-export function refuseOtherPlane(record: SweepRecord, plane: string | undefined): void {
-  if (plane === undefined || plane === record.facts.plane) return;
-  throw new Problem('plane-unavailable', {
-    detail: `The sweep was taken at the plane \`${record.facts.plane}\`; it cannot be given at \`${plane}\`.`,
-    errors: [{ detail: 'Not known at this plane.', parameter: 'plane' }],
-  });
-}
 
 /** Refuses another reference for a sweep that cannot be moved to it. Throws `phase-unknown`. */
 function refuseOtherReference({ measured }: SweepRecord, referenceOhm: number | undefined): void {
@@ -73,11 +61,9 @@ export function sweepReportRoutes(app: App, service: Service): void {
     async (request, reply) => {
       const { plane, reference_ohm } = request.query;
       const record = await findSweepOrRefuse(request, service, request.params.sweep);
-      refuseOtherPlane(record, plane);
       refuseOtherReference(record, reference_ohm);
-      const basis = withEdits(await reportBasisOf(service, record), {
-        referenceOhm: reference_ohm,
-      });
+      const own = await reportBasisOf(service, record);
+      const basis = atPlane(withEdits(own, { referenceOhm: reference_ohm }), record, plane);
       const tag = derivedTag([
         'summary',
         record.id,
@@ -127,8 +113,7 @@ export function sweepReportRoutes(app: App, service: Service): void {
     async (request, reply) => {
       const { plane, plan, licence, max_swr } = request.query;
       const record = await findSweepOrRefuse(request, service, request.params.sweep);
-      refuseOtherPlane(record, plane);
-      const own = await reportBasisOf(service, record);
+      const own = atPlane(await reportBasisOf(service, record), record, plane);
       // Another plan has classes of its own, so the antenna's class does not carry over to it.
       const basis = withEdits(own, {
         maxSwr: max_swr,
@@ -136,7 +121,9 @@ export function sweepReportRoutes(app: App, service: Service): void {
         licence: licence ?? (plan === undefined || plan === own.plan ? own.licence : null),
       });
       refuseUnknownPlan(basis);
-      const tag = derivedTag(['usable', record.id, JSON.stringify(basis)]);
+      const line = lineToRemove(basis) === null ? null : basis.line;
+      const mark = JSON.stringify({ ...usableMark(basis), line });
+      const tag = derivedTag(['usable', record.id, mark]);
       if (isNotModified(request, reply, tag)) return reply.code(304).send();
       return reply.type('application/json').send(await usableText(service, record, basis));
     },

@@ -8,7 +8,8 @@ import { derivedTag, noneMatchHits } from '../http/etags.ts';
 import { safeFileName } from '../http/file-names.ts';
 import { pageRequest, sendPage } from '../http/pages.ts';
 import { Problem } from '../problems.ts';
-import { reportBasisOf, summaryMark, summaryText } from '../reports.ts';
+import { reportBasisOf, summaryMark } from '../report-basis.ts';
+import { summaryText } from '../reports.ts';
 import type { Service } from '../service.ts';
 import type { SweepRecord } from '../store/port.ts';
 import {

@@ -7,8 +7,10 @@ import { refuseFuture } from '../http/measured-at.ts';
 import { readProblem } from '../http/read-problems.ts';
 import { bodyBytes, uploadedFile } from '../http/upload-body.ts';
 import { ingest } from '../ingest.ts';
+import { clubCablesOf } from '../lines/club-cables.ts';
 import { Problem } from '../problems.ts';
-import { reportBasisOf, summaryText } from '../reports.ts';
+import { reportBasisOf } from '../report-basis.ts';
+import { summaryText } from '../reports.ts';
 import type { Service } from '../service.ts';
 import type { AnalyzerRecord, AntennaRecord, SweepFacts, SweepRecord } from '../store/port.ts';
 import { idOrKeySchema } from '../wire/common.ts';
@@ -120,6 +122,7 @@ async function keepSweep(
     uploadedBy: memberId,
     antenna,
     analyzer,
+    ownCables: await clubCablesOf(service, clubId, antenna.facts.feedLine),
     facts,
     bytes,
     fileSha256,

@@ -42,6 +42,18 @@ export const inventedSchema = z
   .boolean()
   .meta({ description: 'True for records of the demo club: nothing of it was measured.' });
 
+export const cautionSchema = z
+  .object({ code: z.string(), detail: z.string() })
+  .meta({ id: 'Caution', description: 'What a person must know beside the numbers.' });
+
+export const assumptionSchema = z
+  .object({
+    code: z.string(),
+    detail: z.string(),
+    line: z.int().optional().meta({ description: 'Line of the file, from 1.' }),
+  })
+  .meta({ id: 'Assumption', description: 'A liberty that was taken in reading the file.' });
+
 const limitSchema = z.coerce
   .number()
   .int()

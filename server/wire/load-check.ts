@@ -1,8 +1,15 @@
 import { z } from 'zod';
 import type { LoadCheckRecord } from '../store/port.ts';
-import { frequencySchema, idSchema, inventedSchema, noteSchema, timeSchema } from './common.ts';
+import {
+  assumptionSchema,
+  frequencySchema,
+  idSchema,
+  inventedSchema,
+  noteSchema,
+  timeSchema,
+} from './common.ts';
 import { residualErrorsSchema } from './residual-errors.ts';
-import { assumptionSchema, phaseSchema } from './summary.ts';
+import { phaseSchema } from './summary.ts';
 import { fileSchema, fileToWire } from './sweep.ts';
 
 /** A load in a query: ohms, `open` or `short`. */

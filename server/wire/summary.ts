@@ -2,21 +2,10 @@ import { z } from 'zod';
 import type { StatedInstrumentError } from '../../core/analysis/instrument-error.ts';
 import type { Summary } from '../../core/analysis/summary.ts';
 import { toSnakeCase } from './case.ts';
-import { frequencySchema, idSchema } from './common.ts';
+import { assumptionSchema, cautionSchema, frequencySchema, idSchema } from './common.ts';
+import { lineSchema } from './line.ts';
 import { residualErrorsSchema } from './residual-errors.ts';
 import { rounded } from './rounding.ts';
-
-export const cautionSchema = z
-  .object({ code: z.string(), detail: z.string() })
-  .meta({ id: 'Caution', description: 'What a person must know beside the numbers.' });
-
-export const assumptionSchema = z
-  .object({
-    code: z.string(),
-    detail: z.string(),
-    line: z.int().optional().meta({ description: 'Line of the file, from 1.' }),
-  })
-  .meta({ id: 'Assumption', description: 'A liberty that was taken in reading the file.' });
 
 export const phaseSchema = z.enum(['signed', 'unsigned', 'none']).meta({
   description:
@@ -144,6 +133,9 @@ export const summarySchema = z
       .meta({ description: 'Why a field is null or empty.' }),
     assumptions: z.array(assumptionSchema),
     cautions: z.array(cautionSchema),
+    line: lineSchema.nullable().meta({
+      description: 'The feed line; null for a sweep that was taken at the feed point.',
+    }),
   })
   .meta({ id: 'Summary', description: 'Where an antenna resonates and where its SWR is lowest.' });
 
@@ -158,11 +150,13 @@ export function summaryToWire(
   { sweepId, antennaId }: SweepIdentity,
   summary: Summary,
   residualErrors: StatedInstrumentError | null,
+  line: z.output<typeof lineSchema> | null,
 ): z.output<typeof summarySchema> {
   return {
     sweep_id: sweepId,
     antenna_id: antennaId,
     ...rounded(toSnakeCase(summary)),
     residual_errors: toSnakeCase(residualErrors),
+    line,
   };
 }

@@ -1,7 +1,14 @@
 import { z } from 'zod';
 import type { SweepMeasured, SweepRecord } from '../store/port.ts';
-import { frequencySchema, idSchema, inventedSchema, noteSchema, timeSchema } from './common.ts';
-import { assumptionSchema, phaseSchema, planeSchema, summarySchema } from './summary.ts';
+import {
+  assumptionSchema,
+  frequencySchema,
+  idSchema,
+  inventedSchema,
+  noteSchema,
+  timeSchema,
+} from './common.ts';
+import { phaseSchema, planeSchema, summarySchema } from './summary.ts';
 
 /** The file of a measurement, as it was sent. */
 export const fileSchema = z.object({

@@ -4,11 +4,11 @@ import type { Plane } from '../../core/analysis/summary.ts';
 import { bandNames } from '../../core/bands/plan.ts';
 import type { UsableReport } from '../../core/bands/usable-report.ts';
 import { toSnakeCase } from './case.ts';
-import { frequencySchema, idSchema } from './common.ts';
+import { cautionSchema, frequencySchema, idSchema } from './common.ts';
 import { familySchema, statusSchema } from './plan.ts';
 import { residualErrorsSchema } from './residual-errors.ts';
 import { rounded } from './rounding.ts';
-import { cautionSchema, planeSchema, type SweepIdentity } from './summary.ts';
+import { planeSchema, type SweepIdentity } from './summary.ts';
 
 const rangeSchema = z.object({ low_hz: frequencySchema, high_hz: frequencySchema });
 

@@ -1,5 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { analyseOn, readSweepOf, reportBasisOf, summaryOf } from '../../server/reports.ts';
+import { reportBasisOf } from '../../server/report-basis.ts';
+import { assumptionsOf, readSweepOf, summaryOf } from '../../server/reports.ts';
+import { viewOf } from '../../server/sweep-view.ts';
 import { addAntenna, resonatorFile, upload } from '../support/club-records.ts';
 import { makeTestApp, type TestApp, testUrl } from '../support/test-app.ts';
 
@@ -48,9 +50,8 @@ describe('a summary', () => {
     if (record === null) throw new Error('The record is gone.');
     const sweep = await readSweepOf(club.service, record);
     const basis = await reportBasisOf(club.service, record);
-    const assumptions = JSON.parse(record.measured.assumptionsJson);
-    const analysis = analyseOn(basis, sweep);
-    const computed = JSON.stringify(summaryOf(record, analysis, assumptions, basis));
+    const view = viewOf(basis, sweep, assumptionsOf(record));
+    const computed = JSON.stringify(summaryOf(record, view, basis));
     expect(stored.body).toBe(computed);
   });
 

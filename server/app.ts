@@ -17,7 +17,9 @@ import { measureRequests } from './metrics.ts';
 import { collectRoutes } from './openapi/collect.ts';
 import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
+import { cableRoutes } from './routes/cables.ts';
 import { loadCheckRoutes, loadCheckUploadRoutes } from './routes/load-checks.ts';
+
 import { healthRoutes, metricsRoutes } from './routes/operations.ts';
 import { planRoutes } from './routes/plans.ts';
 import { problemPageRoutes } from './routes/problem-pages.ts';
@@ -80,6 +82,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     antennaRoutes(behindToken, service);
     analyzerRoutes(behindToken, service);
     loadCheckRoutes(behindToken, service);
+    cableRoutes(behindToken, service);
     sweepRoutes(behindToken, service);
     sweepPointRoutes(behindToken, service);
     sweepReportRoutes(behindToken, service);

@@ -165,6 +165,21 @@ export const problemKinds = {
     meaning: 'The value has the right form but contradicts itself or the calendar.',
     remedy: 'Correct the value named in `errors`.',
   },
+  'implausible-cable': {
+    status: 422,
+    title: 'No cable has these figures',
+    meaning:
+      'The impedance, the velocity factor or the losses are outside of what cables have, or the losses do not follow the law of cables. Nothing was kept.',
+    remedy:
+      'Check the units (hertz, dB per 100 m, ohms) and the place named in `errors`; `code` says which rule is broken.',
+  },
+  'line-check-impossible': {
+    status: 422,
+    title: 'The sweep cannot serve as a check of this line',
+    meaning:
+      'It is too narrow or too coarse for the length, has no phase or no even steps, or shows no end. Nothing was kept.',
+    remedy: '`detail` says what sweep would serve; `code` says which rule is broken.',
+  },
   'precondition-required': {
     status: 428,
     title: 'The edit must name the revision it is based on',

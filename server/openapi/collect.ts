@@ -25,6 +25,7 @@ export async function collectRoutes(app: App): Promise<void> {
         { name: 'analyzers', description: 'What it is measured with.' },
         { name: 'sweeps', description: 'Measurements: upload, record, file and points.' },
         { name: 'reports', description: 'What follows from a sweep.' },
+        { name: 'cables', description: 'Cables with their sources, and the club’s own.' },
         { name: 'plans', description: 'Band plans with their sources.' },
         { name: 'operations', description: 'Health, counters and the pages behind problems.' },
       ],

@@ -47,6 +47,24 @@ function calls(sweep: string): Readonly<Record<string, ExampleCall>> {
       headers: { 'content-type': 'application/octet-stream' },
     },
     listLoadChecks: { url: '/v1/analyzers/loan/load-checks' },
+    listCables: { url: '/v1/cables' },
+    addCable: {
+      method: 'POST',
+      url: '/v1/cables',
+      body: {
+        key: 'reel-75',
+        name: 'Reel of 75 ohm foam coax',
+        characteristic_ohm: 75,
+        velocity_factor: 0.82,
+        points: [
+          { frequency_hz: 5_000_000, loss_db_per_100_m: 1.9 },
+          { frequency_hz: 50_000_000, loss_db_per_100_m: 4.8 },
+          { frequency_hz: 200_000_000, loss_db_per_100_m: 9.7 },
+        ],
+        source: 'sheet that came with the reel',
+      },
+    },
+    getCable: { url: '/v1/cables/m17-74-rg213' },
     uploadSweep: {
       method: 'POST',
       url: '/v1/antennas/quarry-20m/sweeps?file_name=quarry.s1p&measured_at=2026-05-17T14:30:00Z',

@@ -26,7 +26,10 @@ export const problemSchema = z
     instance: z.string().meta({ description: '`urn:uuid:` and the id of the request.' }),
     errors: z.array(placeSchema).max(100).optional(),
     errors_truncated: z.literal(true).optional(),
-    code: z.string().optional().meta({ description: 'What the reader of the file found.' }),
+    code: z
+      .string()
+      .optional()
+      .meta({ description: 'What exactly was found: of the file, the cable, the line.' }),
     remedy: z.string().optional(),
     proposal: proposalSchema.optional(),
     existing: z

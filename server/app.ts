@@ -18,6 +18,7 @@ import { collectRoutes } from './openapi/collect.ts';
 import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
 import { cableRoutes } from './routes/cables.ts';
+import { lineCheckRoutes, lineCheckUploadRoutes } from './routes/line-checks.ts';
 import { loadCheckRoutes, loadCheckUploadRoutes } from './routes/load-checks.ts';
 
 import { healthRoutes, metricsRoutes } from './routes/operations.ts';
@@ -83,6 +84,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     analyzerRoutes(behindToken, service);
     loadCheckRoutes(behindToken, service);
     cableRoutes(behindToken, service);
+    lineCheckRoutes(behindToken, service);
     sweepRoutes(behindToken, service);
     sweepPointRoutes(behindToken, service);
     sweepReportRoutes(behindToken, service);
@@ -91,6 +93,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     await behindToken.register(async (scope: App) => {
       uploadRoutes(scope, service);
       loadCheckUploadRoutes(scope, service);
+      lineCheckUploadRoutes(scope, service);
     });
   });
   return app;

@@ -1,13 +1,17 @@
 import { readSweep } from '../core/formats/read-sweep.ts';
 import type { ReadError, ReadLimits, ReadSweep } from '../core/formats/read-types.ts';
+import type { LineCheckError } from '../core/line/check/grid.ts';
 import { fail, ok, type Result } from '../core/result.ts';
+import { checkForRecord, type LineToCheck } from './lines/line-check.ts';
 import { basisOf } from './report-basis.ts';
 import { summaryOf, usableOf } from './reports.ts';
 import type {
   AnalyzerRecord,
   AntennaRecord,
   CableRecord,
+  LineCheckFacts,
   LoadCheckFacts,
+  NewLineCheck,
   NewLoadCheck,
   NewSweep,
   StoredSummary,
@@ -17,6 +21,7 @@ import type {
 } from './store/port.ts';
 import { toStoredPoints } from './stored-points.ts';
 import { viewOf } from './sweep-view.ts';
+import { lineReportJson, traceJson } from './wire/line-check.ts';
 
 /** A file on its way in, and what was told about it. */
 export interface Incoming extends IncomingFile {
@@ -71,6 +76,32 @@ export function ingestLoadCheck(
     record: { id, clubId, receivedAt, uploadedBy, facts, measured },
     file: bytes,
     points: toStoredPoints(read.value.sweep),
+  });
+}
+
+/** Why a line check was not kept: its file, or what is in it. */
+export type LineCheckRefusal =
+  | { readonly unreadable: ReadError }
+  | { readonly impossible: LineCheckError };
+
+/** Reads a sweep into a line and checks the line, as both are stored. */
+export function ingestLineCheck(
+  incoming: IncomingFile,
+  line: LineToCheck,
+  facts: LineCheckFacts,
+): Result<NewLineCheck, LineCheckRefusal> {
+  const read = readIncoming(incoming);
+  if (!read.ok) return fail({ unreadable: read.error });
+  const checked = checkForRecord(read.value.sweep, line);
+  if (!checked.ok) return fail({ impossible: checked.error });
+  const { id, clubId, receivedAt, uploadedBy, bytes } = incoming;
+  const measured = measuredOf(incoming, read.value);
+  const { tested } = line;
+  const reportJson = lineReportJson(checked.value);
+  return ok({
+    record: { id, clubId, receivedAt, uploadedBy, tested, facts, measured, reportJson },
+    file: bytes,
+    traceJson: traceJson(checked.value.trace),
   });
 }
 

@@ -1,6 +1,7 @@
-import type { DemoClub, DemoUpload } from './demo/club.ts';
+import { findCable } from '../core/line/cables.ts';
+import type { DemoClub, DemoLineCheck, DemoUpload } from './demo/club.ts';
 import { sha256 } from './http/digests.ts';
-import { ingest } from './ingest.ts';
+import { ingest, ingestLineCheck } from './ingest.ts';
 import type { Service } from './service.ts';
 import type { Actor, AnalyzerRecord, AntennaRecord } from './store/port.ts';
 
@@ -26,6 +27,10 @@ export async function loadDemo(service: Service, actor: Actor, demo: DemoClub): 
     const antenna = found(antennas, upload.antennaKey);
     const analyzer = found(analyzers, upload.analyzerKey);
     await keepUpload(service, actor, upload, antenna, analyzer);
+  }
+  for (const check of demo.lineChecks) {
+    const antenna = found(antennas, check.antennaKey);
+    await keepLineCheck(service, actor, check, antenna, found(analyzers, check.analyzerKey));
   }
 }
 
@@ -64,6 +69,34 @@ async function keepUpload(
   });
   if (!made.ok) throw new Error(`The demo file ${fileName} cannot be read: ${made.error.detail}`);
   await service.store.addSweep(made.value);
+}
+
+async function keepLineCheck(
+  service: Service,
+  actor: Actor,
+  { tested, note, bytes, fileName, ...check }: DemoLineCheck,
+  antenna: AntennaRecord,
+  analyzer: AnalyzerRecord,
+): Promise<void> {
+  const measuredAt = new Date(check.measuredAt).toISOString();
+  const made = ingestLineCheck(
+    {
+      id: service.newId(),
+      clubId: actor.clubId,
+      receivedAt: actor.at,
+      uploadedBy: actor.memberId,
+      bytes,
+      fileSha256: sha256(bytes).toString('hex'),
+      fileName,
+      columns: null,
+      port: null,
+      limits: service.limits,
+    },
+    { tested, cable: findCable(tested.cable ?? ''), assumptions: [] },
+    { antennaId: antenna.id, analyzerId: analyzer.id, measuredAt, note, invented: true },
+  );
+  if (!made.ok) throw new Error(`The demo line check ${fileName} is refused.`);
+  await service.store.addLineCheck(made.value);
 }
 
 function found<Value>(map: ReadonlyMap<string, Value>, key: string): Value {

@@ -15,3 +15,14 @@ export const sampleFile = [
   '14.20 0.3450 0.0873',
   '',
 ].join('\n');
+
+/** A sweep into 12 m of line with its far end open, for the document: delay and loss alone. */
+export function sampleLineFile(): string {
+  const rows = Array.from({ length: 101 }, (_, i) => {
+    const hz = 1_000_000 + i * 1_000_000;
+    const size = 10 ** -(0.022 * Math.sqrt(hz / 1e6));
+    const angle = (-4 * Math.PI * hz * 12) / (0.66 * 299_792_458);
+    return `${hz} ${(size * Math.cos(angle)).toFixed(5)} ${(size * Math.sin(angle)).toFixed(5)}`;
+  });
+  return `! invented: 12 m of line, far end open\n# HZ S RI R 50\n${rows.join('\n')}\n`;
+}

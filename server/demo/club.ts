@@ -1,4 +1,4 @@
-import type { AnalyzerFacts, AntennaFacts, SiteFacts } from '../store/port.ts';
+import type { AnalyzerFacts, AntennaFacts, SiteFacts, TestedLine } from '../store/port.ts';
 
 /** The invented club: facts as the store keeps them, and sweeps as files that members would send. */
 export interface DemoClub {
@@ -10,6 +10,8 @@ export interface DemoClub {
   readonly analyzers: readonly DemoAnalyzer[];
   /** Ascending in time of measurement. */
   readonly uploads: readonly DemoUpload[];
+  /** Ascending in time of measurement. */
+  readonly lineChecks: readonly DemoLineCheck[];
 }
 
 export interface DemoSite {
@@ -43,4 +45,16 @@ export interface DemoUpload {
   readonly columns?: string;
   /** The port that the antenna is at, for two-port files. */
   readonly port?: 1 | 2;
+}
+
+/** One sweep into a feed line, and what is told of the line. */
+export interface DemoLineCheck {
+  readonly antennaKey: string;
+  readonly analyzerKey: string;
+  /** RFC 3339, UTC. */
+  readonly measuredAt: string;
+  readonly note: string;
+  readonly fileName: string;
+  readonly bytes: Uint8Array;
+  readonly tested: TestedLine;
 }

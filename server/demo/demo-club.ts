@@ -11,6 +11,7 @@ import { hilltopOcf } from './antennas/hilltop-ocf.ts';
 import { hilltopVertical } from './antennas/hilltop-vertical.ts';
 import type { DemoClub, DemoUpload } from './club.ts';
 import { instruments } from './instruments.ts';
+import { demoLineChecks } from './line-checks.ts';
 import { measure } from './measure.ts';
 import { demoSites } from './sites.ts';
 import type { Visit } from './visit.ts';
@@ -43,6 +44,7 @@ export function demoClub(): DemoClub {
     uploads: books
       .flatMap((book) => book.visits.map((visit, number) => uploadOf(book, visit, number)))
       .sort((a, b) => (a.measuredAt < b.measuredAt ? -1 : 1)),
+    lineChecks: demoLineChecks(),
   };
 }
 

@@ -26,6 +26,7 @@ export async function collectRoutes(app: App): Promise<void> {
         { name: 'sweeps', description: 'Measurements: upload, record, file and points.' },
         { name: 'reports', description: 'What follows from a sweep.' },
         { name: 'cables', description: 'Cables with their sources, and the club’s own.' },
+        { name: 'line checks', description: 'Sweeps into feed lines: length, loss and faults.' },
         { name: 'plans', description: 'Band plans with their sources.' },
         { name: 'operations', description: 'Health, counters and the pages behind problems.' },
       ],

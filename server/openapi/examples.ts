@@ -1,6 +1,6 @@
 import type { OpenAPIV3_1 } from 'openapi-types';
 import type { App } from '../http/app-type.ts';
-import { sampleFile } from '../sample-file.ts';
+import { sampleFile, sampleLineFile } from '../sample-file.ts';
 import { operationsOf } from './document.ts';
 
 /** A request whose real answer stands in the document as the example of its operation. */
@@ -11,8 +11,21 @@ interface ExampleCall {
   readonly headers?: Readonly<Record<string, string>>;
 }
 
-/** By operation, in the order in which they are made; `sweep` is a sweep of the demo club. */
-function calls(sweep: string): Readonly<Record<string, ExampleCall>> {
+/** Ids of records of the demo club that the examples are of. */
+interface ExampleRecords {
+  readonly sweep: string;
+  /** A sweep through a feed line. */
+  readonly throughLine: string;
+  /** A check of that feed line. */
+  readonly lineCheck: string;
+}
+
+/** By operation, in the order in which they are made. */
+function calls({
+  sweep,
+  throughLine,
+  lineCheck,
+}: ExampleRecords): Readonly<Record<string, ExampleCall>> {
   const edit = { method: 'PATCH', headers: { 'if-match': '*' } } as const;
   return {
     getLiveness: { url: '/livez' },
@@ -65,6 +78,14 @@ function calls(sweep: string): Readonly<Record<string, ExampleCall>> {
       },
     },
     getCable: { url: '/v1/cables/m17-74-rg213' },
+    listLineChecks: { url: '/v1/antennas/boathouse-2m/line-checks?limit=1' },
+    getLineCheck: { url: `/v1/antennas/boathouse-2m/line-checks/${lineCheck}` },
+    uploadLineCheck: {
+      method: 'POST',
+      url: '/v1/antennas/quarry-20m/line-checks?far_end=open&cable=m17-74-rg213&known_length_m=12&file_name=line.s1p',
+      body: sampleLineFile(),
+      headers: { 'content-type': 'application/octet-stream' },
+    },
     uploadSweep: {
       method: 'POST',
       url: '/v1/antennas/quarry-20m/sweeps?file_name=quarry.s1p&measured_at=2026-05-17T14:30:00Z',
@@ -73,7 +94,7 @@ function calls(sweep: string): Readonly<Record<string, ExampleCall>> {
     },
     listSweeps: { url: '/v1/antennas/hilltop-20m/sweeps?limit=2' },
     getSweep: { url: `/v1/sweeps/${sweep}` },
-    getSummary: { url: `/v1/sweeps/${sweep}/summary` },
+    getSummary: { url: `/v1/sweeps/${throughLine}/summary` },
     getUsable: { url: `/v1/sweeps/${sweep}/usable` },
     getSweepPoints: { url: `/v1/sweeps/${sweep}/points` },
     listPlans: { url: '/v1/plans' },
@@ -88,10 +109,10 @@ export async function addExamples(
   document: OpenAPIV3_1.Document,
   app: App,
   token: string,
-  sweep: string,
+  records: ExampleRecords,
 ): Promise<void> {
   const operations = operationsOf(document);
-  for (const [operationId, call] of Object.entries(calls(sweep))) {
+  for (const [operationId, call] of Object.entries(calls(records))) {
     const operation = operations.find((candidate) => candidate.operationId === operationId);
     if (operation === undefined) throw new Error(`There is no operation ${operationId}.`);
     await addExample(operation, app, token, call);

@@ -48,11 +48,15 @@ async function makeDocument(): Promise<string> {
   const first = await addFirstClub(service, randomBytes, demo);
   if (first === null) throw new Error('The new store has a club already.');
   await loadDemo(service, first.actor, demo);
-  const newest = await app.inject({
-    url: '/v1/antennas/hilltop-20m/sweeps?limit=1',
-    headers: { authorization: `Bearer ${first.token}` },
+  const newestOf = async (list: string) => {
+    const headers = { authorization: `Bearer ${first.token}` };
+    return (await app.inject({ url: `${list}?limit=1`, headers })).json().items[0].id;
+  };
+  await addExamples(document, app, first.token, {
+    sweep: await newestOf('/v1/antennas/hilltop-20m/sweeps'),
+    throughLine: await newestOf('/v1/antennas/boathouse-2m/sweeps'),
+    lineCheck: await newestOf('/v1/antennas/boathouse-2m/line-checks'),
   });
-  await addExamples(document, app, first.token, newest.json().items[0].id);
   await app.close();
   await service.store.close();
   rmSync(folder, { recursive: true });

@@ -16,6 +16,10 @@ export const planeSchema = z.enum(['measured', 'feed_point']).meta({
   description: 'Where the reflection holds: at the analyzer, or at the feed point of the antenna.',
 });
 
+export const absenceSchema = z
+  .object({ field: z.string(), code: z.string(), detail: z.string() })
+  .meta({ id: 'Absence', description: 'A field that is null or empty, and why.' });
+
 const halfWidth = z
   .number()
   .nullable()
@@ -128,9 +132,7 @@ export const summarySchema = z
       ),
       reflection_noise: z.number().nullable(),
     }),
-    absent: z
-      .array(z.object({ field: z.string(), code: z.string(), detail: z.string() }))
-      .meta({ description: 'Why a field is null or empty.' }),
+    absent: z.array(absenceSchema).meta({ description: 'Why a field is null or empty.' }),
     assumptions: z.array(assumptionSchema),
     cautions: z.array(cautionSchema),
     line: lineSchema.nullable().meta({

@@ -5,8 +5,8 @@ import { isUnderWay, lineReplaced } from '../stories.ts';
 import { dry, wet } from '../visit.ts';
 
 const groundPlane = { resistanceOhm: 33, resonanceHz: 145_300_000, q: 8 };
-const agedLine = genericLine('coax-50-pe-10mm', 22, 2.4);
-const newLine = genericLine('coax-50-foam-10mm', 22);
+export const agedLine = genericLine('coax-50-pe-10mm', 22, 2.4);
+export const newLine = genericLine('coax-50-foam-10mm', 22);
 
 /** A ground plane behind a line that had gone bad. */
 export const boathouse2m: AntennaBook = {

@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { findPlan } from '../../../core/bands/plans.ts';
 import { readSweep } from '../../../core/formats/read-sweep.ts';
 import { findCable } from '../../../core/line/cables.ts';
+import { checkLine } from '../../../core/line/check/check-line.ts';
 import { demoClub } from '../../../server/demo/demo-club.ts';
 import { demoStories } from '../../../server/demo/stories.ts';
 
@@ -58,6 +59,23 @@ describe('the demo club', () => {
       expect(keys(club.antennas)).toContain(antennaKey);
       expect(keys(club.analyzers)).toContain(analyzerKey);
     }
+  });
+
+  it('has a check of a line before and after it was replaced, which the sweeps went through', () => {
+    expect(club.lineChecks).toHaveLength(2);
+    const lengths = club.lineChecks.map(({ antennaKey, bytes, tested }) => {
+      expect(club.antennas.map(({ key }) => key)).toContain(antennaKey);
+      const read = readSweep(bytes);
+      if (!read.ok) throw new Error(read.error.detail);
+      const cable = findCable(tested.cable ?? '');
+      const checked = checkLine(read.value.sweep, { ...tested, cable });
+      if (!checked.ok) throw new Error(checked.error.detail);
+      return checked.value;
+    });
+    for (const { lengthM } of lengths) expect(lengthM).toBeCloseTo(22, 1);
+    // The aged line was made to lose 2.4 times what its kind does.
+    expect(lengths[0].loss?.ratio).toBeGreaterThan(2);
+    expect(lengths[1].loss?.ratio).toBeLessThan(1.1);
   });
 
   it('has keys of lower-case letters, digits and hyphens', () => {

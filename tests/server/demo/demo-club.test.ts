@@ -123,13 +123,13 @@ describe('the demo club', () => {
   it('holds nothing that looks like a call sign', () => {
     const looksLikeOne = /\b([A-Z]{1,2}|\d[A-Z]|[A-Z]\d)\d[A-Z]{1,4}\b/i;
     expect(looksLikeOne.test('AA0ZZZ')).toBe(true);
-    const records = JSON.stringify({ ...club, uploads: [] });
-    const told = club.uploads.flatMap(({ fileName, note, conditions }) => [
+    const records = JSON.stringify({ ...club, uploads: [], lineChecks: [] });
+    const told = [...club.uploads, ...club.lineChecks].flatMap(({ fileName, note }) => [
       fileName.replace(/\.\w+$/, ''),
       note,
-      conditions,
     ]);
-    for (const text of [records, JSON.stringify(demoStories), ...told]) {
+    const conditions = club.uploads.map((upload) => upload.conditions);
+    for (const text of [records, JSON.stringify(demoStories), ...told, ...conditions]) {
       expect(text.match(looksLikeOne)).toBeNull();
     }
   });

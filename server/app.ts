@@ -15,6 +15,7 @@ import { keepKnownMethods } from './known-methods.ts';
 import { logAnswers } from './log.ts';
 import { measureRequests } from './metrics.ts';
 import { collectRoutes } from './openapi/collect.ts';
+import { adviceRoutes } from './routes/advice.ts';
 import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
 import { cableRoutes } from './routes/cables.ts';
@@ -88,6 +89,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     sweepRoutes(behindToken, service);
     sweepPointRoutes(behindToken, service);
     sweepReportRoutes(behindToken, service);
+    adviceRoutes(behindToken, service);
     planRoutes(behindToken);
     // In a scope of their own, since they take any body.
     await behindToken.register(async (scope: App) => {

@@ -124,9 +124,14 @@ function armOf(armM: number, k: number, feedCurrentA: number, radiusM: number): 
   const largestA = feedCurrentA / Math.max(Math.abs(Math.sin(k * armM)), 0.1);
   const meanOhm = 60 * (Math.log((2 * armM) / radiusM) - 1);
   return {
-    currentA: (distanceM) => largestA * Math.abs(Math.sin(k * (armM - distanceM))),
-    voltageV: (distanceM) => meanOhm * largestA * Math.abs(Math.cos(k * (armM - distanceM))),
+    currentA: (distanceM) => largestA * share(Math.sin(k * (armM - distanceM))),
+    voltageV: (distanceM) => meanOhm * largestA * share(Math.cos(k * (armM - distanceM))),
   };
+}
+
+/** A node of the sinusoid is zero, not what the arithmetic leaves of it. */
+function share(value: number): number {
+  return Math.abs(value) < 1e-12 ? 0 : Math.abs(value);
 }
 
 /** Current is highest a quarter wave from the end (or at the feed), voltage at the end and a half wave from it. */

@@ -95,6 +95,7 @@ function calls({
     listSweeps: { url: '/v1/antennas/hilltop-20m/sweeps?limit=2' },
     getSweep: { url: `/v1/sweeps/${sweep}` },
     getSummary: { url: `/v1/sweeps/${throughLine}/summary` },
+    getAdvice: { url: `/v1/sweeps/${throughLine}/advice?power_w=50` },
     getUsable: { url: `/v1/sweeps/${sweep}/usable` },
     getSweepPoints: { url: `/v1/sweeps/${sweep}/points` },
     listPlans: { url: '/v1/plans' },

@@ -161,7 +161,7 @@ describe('a summary at the feed point', () => {
     [[{ ...section, cable: 'm17-28-rg58', length_m: 1500 }], 'line_loss_too_great'],
   ])('cannot be given with the line %j: %s', async (feedLine, code) => {
     await setFeedLine(feedLine);
-    for (const path of ['/summary', '/usable', '/points']) {
+    for (const path of ['/summary', '/usable', '/points', '/advice']) {
       const answer = await get(`${path}?plane=feed_point`);
       expect(answer.statusCode, path).toBe(409);
       expect(answer.json()).toMatchObject({ type: `${testUrl}/problems/plane-unavailable`, code });

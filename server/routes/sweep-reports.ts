@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import type { App } from '../http/app-type.ts';
-import { isNotModified } from '../http/conditional.ts';
 import { derivedTag } from '../http/etags.ts';
+import { KeptAnswers } from '../http/kept-answers.ts';
 import { Problem } from '../problems.ts';
 import { type ReportBasis, reportBasisOf, summaryMark, usableMark } from '../report-basis.ts';
 import { summaryText, usableText } from '../reports.ts';
@@ -41,6 +41,7 @@ function refuseOtherReference({ measured }: SweepRecord, referenceOhm: number | 
 
 /** What follows from a sweep: its summary and its usable-band report. */
 export function sweepReportRoutes(app: App, service: Service): void {
+  const kept = new KeptAnswers(service.store);
   app.get(
     '/v1/sweeps/:sweep/summary',
     {
@@ -58,21 +59,19 @@ export function sweepReportRoutes(app: App, service: Service): void {
         ]),
       },
     },
-    async (request, reply) => {
-      const { plane, reference_ohm } = request.query;
-      const record = await findSweepOrRefuse(request, service, request.params.sweep);
-      refuseOtherReference(record, reference_ohm);
-      const own = await reportBasisOf(service, record);
-      const basis = atPlane(withEdits(own, { referenceOhm: reference_ohm }), record, plane);
-      const tag = derivedTag([
-        'summary',
-        record.id,
-        basis.analysisVersion,
-        JSON.stringify(summaryMark(basis)),
-      ]);
-      if (isNotModified(request, reply, tag)) return reply.code(304).send();
-      return reply.type('application/json').send(await summaryText(service, record, basis));
-    },
+    (request, reply) =>
+      kept.send(request, reply, async () => {
+        const { plane, reference_ohm } = request.query;
+        const record = await findSweepOrRefuse(request, service, request.params.sweep);
+        refuseOtherReference(record, reference_ohm);
+        const own = await reportBasisOf(service, record);
+        const basis = atPlane(withEdits(own, { referenceOhm: reference_ohm }), record, plane);
+        const mark = JSON.stringify(summaryMark(basis));
+        return {
+          tag: derivedTag(['summary', record.id, basis.analysisVersion, mark]),
+          text: () => summaryText(service, record, basis),
+        };
+      }),
   );
 
   app.get(
@@ -110,23 +109,25 @@ export function sweepReportRoutes(app: App, service: Service): void {
         ]),
       },
     },
-    async (request, reply) => {
-      const { plane, plan, licence, max_swr } = request.query;
-      const record = await findSweepOrRefuse(request, service, request.params.sweep);
-      const own = atPlane(await reportBasisOf(service, record), record, plane);
-      // Another plan has classes of its own, so the antenna's class does not carry over to it.
-      const basis = withEdits(own, {
-        maxSwr: max_swr,
-        plan,
-        licence: licence ?? (plan === undefined || plan === own.plan ? own.licence : null),
-      });
-      refuseUnknownPlan(basis);
-      const line = lineToRemove(basis) === null ? null : basis.line;
-      const mark = JSON.stringify({ ...usableMark(basis), line });
-      const tag = derivedTag(['usable', record.id, mark]);
-      if (isNotModified(request, reply, tag)) return reply.code(304).send();
-      return reply.type('application/json').send(await usableText(service, record, basis));
-    },
+    (request, reply) =>
+      kept.send(request, reply, async () => {
+        const { plane, plan, licence, max_swr } = request.query;
+        const record = await findSweepOrRefuse(request, service, request.params.sweep);
+        const own = atPlane(await reportBasisOf(service, record), record, plane);
+        // Another plan has classes of its own, so the antenna's class does not carry over to it.
+        const basis = withEdits(own, {
+          maxSwr: max_swr,
+          plan,
+          licence: licence ?? (plan === undefined || plan === own.plan ? own.licence : null),
+        });
+        refuseUnknownPlan(basis);
+        const line = lineToRemove(basis) === null ? null : basis.line;
+        const mark = JSON.stringify({ ...usableMark(basis), line });
+        return {
+          tag: derivedTag(['usable', record.id, mark]),
+          text: () => usableText(service, record, basis),
+        };
+      }),
   );
 }
 

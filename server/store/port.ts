@@ -382,6 +382,11 @@ export interface Store {
   /** Makes a verified copy of everything in a new file; never half of one. */
   backup(path: string): Promise<void>;
 
+  /**
+   * A number that is another one after anything was written, by whomever: what was read is still so
+   * while it stays. Cheap; an engine that cannot tell gives another number each time.
+   */
+  version(): number;
   /** Resolves if reader and writer both answer. */
   ready(): Promise<void>;
   /** Waits for accepted writes, then closes. */

@@ -148,6 +148,11 @@ export class Reader {
     return this.prepared.summary.get(clubId, sweepId, analysisVersion) ?? null;
   }
 
+  /** Of the file as this connection sees it: another number after each commit of the writer. */
+  version(): number {
+    return this.prepared.version.get() ?? 0;
+  }
+
   close(): void {
     this.connection.close();
   }
@@ -158,6 +163,7 @@ type ClubRow = Omit<ClubRecord, 'invented'> & { readonly invented: number };
 function prepareAll(connection: Connection) {
   const prepare = <Row>(sql: string) => connection.prepare<unknown[], Row>(sql);
   return {
+    version: connection.prepare<[], number>('PRAGMA data_version').pluck(),
     clubs: prepare<ClubRow>(
       'SELECT id, key, name, invented, created_at AS createdAt FROM club ORDER BY key',
     ),

@@ -262,6 +262,10 @@ export class SqliteStore implements Store {
     }
   }
 
+  version(): number {
+    return this.read((reader) => reader.version());
+  }
+
   async ready(): Promise<void> {
     this.read((reader) => reader.clubs());
     await this.writer.run('takeLock');

@@ -55,6 +55,18 @@ export function describeStore(name: string, open: () => Promise<OpenedStore>): v
       expect(await store.findToken(new Uint8Array(32).fill(3))).toBeNull();
     });
 
+    it('has another version after each write, and the same one while nothing is written', async () => {
+      const before = store.version();
+      await store.listClubs();
+      expect(store.version()).toBe(before);
+      await store.addEditable('sites', actorOf(club), {
+        id: idOf(1),
+        key: 'field',
+        facts: siteFacts,
+      });
+      expect(store.version()).not.toBe(before);
+    });
+
     it('lists its clubs', async () => {
       expect((await store.listClubs()).map(({ key }) => key)).toEqual(['ours', 'theirs']);
     });

@@ -113,6 +113,24 @@ export {
   sweepReturnLossDb,
 } from './network/return-loss.ts';
 export { magnitudeOfSwr, sweepSwr, swrOf } from './network/swr.ts';
+export {
+  type Conditions,
+  type Ground,
+  grounds,
+  type Weather,
+  weathers,
+} from './record/conditions.ts';
+export { bandToFile, type FilingBand } from './record/filing.ts';
+export {
+  type BandMeasures,
+  type HistoryRow,
+  type MeasuredAnswers,
+  type MeasuredMinimum,
+  type MeasuredResonance,
+  type MeasuredSpan,
+  measuresOf,
+  type SweepMeasures,
+} from './record/measures.ts';
 export { fail, ok, type Result } from './result.ts';
 export {
   type ComplexSweep,

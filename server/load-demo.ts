@@ -1,7 +1,7 @@
 import { findCable } from '../core/line/cables.ts';
 import type { DemoClub, DemoLineCheck, DemoUpload } from './demo/club.ts';
 import { sha256 } from './http/digests.ts';
-import { ingest, ingestLineCheck } from './ingest.ts';
+import { ingestLineCheck } from './ingest.ts';
 import type { Service } from './service.ts';
 import type { Actor, AnalyzerRecord, AntennaRecord } from './store/port.ts';
 
@@ -43,7 +43,7 @@ async function keepUpload(
 ): Promise<void> {
   const { conditions, note, plane, bytes, fileName } = upload;
   const measuredAt = new Date(upload.measuredAt).toISOString();
-  const made = ingest({
+  const made = await service.ingest({
     id: service.newId(),
     clubId: actor.clubId,
     receivedAt: actor.at,

@@ -11,6 +11,7 @@ import { demoClub } from './demo/demo-club.ts';
 import { addFirstClub } from './first-run.ts';
 import type { App } from './http/app-type.ts';
 import { makeIdSource } from './ids.ts';
+import { IngestPool } from './ingest-pool.ts';
 import { loadDemo } from './load-demo.ts';
 import { makeLog } from './log.ts';
 import { projectRoot } from './project-files.ts';
@@ -22,18 +23,19 @@ import { firstSteps } from './welcome.ts';
 async function main(): Promise<void> {
   const config = readConfig(process.env);
   const log = makeLog(config.logLevel);
-  const opened = await openService(config);
+  const pool = new IngestPool();
+  const opened = await openService(config, pool);
   const backups = backupsOf(opened, log, config);
   const service = backups === null ? opened : { ...opened, lastBackupAt: backups.lastGoodAt };
   const app = await buildApp({ service, log, document: readDocument() });
-  closeOnSignal(app, service, config, backups);
+  closeOnSignal(app, service, config, backups, pool);
   await firstRun(service, config);
   await app.listen({ host: config.host, port: config.port });
   say(`Sweep Ledger listens on ${listeningUrl(app, config)} (documentation: /docs).\n`);
   await backups?.makeIfDue();
 }
 
-async function openService(config: Config): Promise<Service> {
+async function openService(config: Config, { ingest }: IngestPool): Promise<Service> {
   mkdirSync(config.dataDir, { recursive: true, mode: 0o700 });
   return {
     store: await openSqliteStore({
@@ -43,6 +45,7 @@ async function openService(config: Config): Promise<Service> {
     now: Date.now,
     newId: makeIdSource(Date.now, randomBytes),
     publicUrl: config.publicUrl,
+    ingest,
     limits: { ...defaultReadLimits, maxBytes: config.maxUploadBytes, maxPoints: config.maxPoints },
   };
 }
@@ -90,6 +93,7 @@ function closeOnSignal(
   service: Service,
   config: Config,
   backups: BackupSchedule | null,
+  pool: IngestPool,
 ): void {
   let closing = false;
   const close = async (signal: NodeJS.Signals) => {
@@ -103,6 +107,7 @@ function closeOnSignal(
     );
     await app.close();
     clearTimeout(deadline);
+    await pool.close();
     await service.store.close();
     app.log.info('closed');
   };

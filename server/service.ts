@@ -1,5 +1,6 @@
 import type { ReadLimits } from '../core/formats/read-types.ts';
 import type { Clock } from './ids.ts';
+import type { Ingest } from './ingest-pool.ts';
 import type { Store } from './store/port.ts';
 
 /** What the routes are given to work with: storage, time and ids, and the settings they need. */
@@ -10,6 +11,8 @@ export interface Service {
   /** Without a slash at its end. */
   readonly publicUrl: string;
   readonly limits: ReadLimits;
+  /** Reads and analyses a file on its way in. */
+  readonly ingest: Ingest;
   /** When the newest good backup was begun, ms since 1970; null if there is none or none are made. */
   readonly lastBackupAt?: () => number | null;
 }

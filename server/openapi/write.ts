@@ -7,6 +7,7 @@ import { demoClub } from '../demo/demo-club.ts';
 import { seededStream } from '../demo/random.ts';
 import { addFirstClub } from '../first-run.ts';
 import { makeIdSource } from '../ids.ts';
+import { ingest } from '../ingest.ts';
 import { loadDemo } from '../load-demo.ts';
 import { makeLog } from '../log.ts';
 import { projectRoot } from '../project-files.ts';
@@ -39,6 +40,7 @@ async function makeDocument(): Promise<string> {
     now,
     newId: makeIdSource(now, randomBytes),
     publicUrl: 'http://127.0.0.1:8080',
+    ingest: async (incoming) => ingest(incoming),
     limits: defaultReadLimits,
   };
   const app = await buildApp({ service, log: makeLog('silent'), document: null });

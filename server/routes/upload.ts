@@ -6,7 +6,6 @@ import { checkContentDigest, digestField, sha256 } from '../http/digests.ts';
 import { refuseFuture } from '../http/measured-at.ts';
 import { readProblem } from '../http/read-problems.ts';
 import { bodyBytes, uploadedFile } from '../http/upload-body.ts';
-import { ingest } from '../ingest.ts';
 import { clubCablesOf } from '../lines/club-cables.ts';
 import { Problem } from '../problems.ts';
 import { reportBasisOf } from '../report-basis.ts';
@@ -115,7 +114,7 @@ async function keepSweep(
   const known = await service.store.findSweepByFile(clubId, fileSha256);
   if (known !== null) return sendKnown(reply, service, antenna, known);
 
-  const made = ingest({
+  const made = await service.ingest({
     id: service.newId(),
     clubId,
     receivedAt: at,

@@ -9,6 +9,7 @@ import { buildApp } from '../../server/app.ts';
 import { addFirstClub } from '../../server/first-run.ts';
 import type { App } from '../../server/http/app-type.ts';
 import { makeIdSource } from '../../server/ids.ts';
+import { ingest } from '../../server/ingest.ts';
 import { makeLog } from '../../server/log.ts';
 import type { Service } from '../../server/service.ts';
 import type { Actor, Store } from '../../server/store/port.ts';
@@ -49,6 +50,7 @@ export async function makeTestApp(options: TestAppOptions = {}): Promise<TestApp
     now,
     newId: makeIdSource(now, randomBytes),
     publicUrl: testUrl,
+    ingest: async (incoming) => ingest(incoming),
     limits: { ...defaultReadLimits, ...options.limits },
   };
   const log = options.logTo === undefined ? makeLog('silent') : makeLog('trace', options.logTo);

@@ -6,7 +6,8 @@ import {
   type ZodTypeProvider,
 } from 'fastify-type-provider-zod';
 import type { OpenAPIV3_1 } from 'openapi-types';
-import { requireToken } from './auth/bearer.ts';
+import { guardRoutes } from './auth/bearer.ts';
+import { requireRouteRights } from './auth/route-rights.ts';
 import { closeSoon } from './closing.ts';
 import { serveDocs } from './docs.ts';
 import { answerErrorsAsProblems, refuseSocket, sendError } from './errors.ts';
@@ -60,11 +61,11 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
 
   app.setValidatorCompiler(validatorCompiler);
   app.setSerializerCompiler(serializerCompiler);
-  app.decorateRequest('actor', null);
   app.addHook('onRequest', async (request, reply) => {
     reply.header('x-request-id', request.id);
   });
   takeJsonOnly(app);
+  requireRouteRights(app);
   keepKnownMethods(app);
   logAnswers(app);
   const metricsText = measureRequests(app, service.lastBackupAt);
@@ -72,13 +73,13 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
   // After the hooks above, so that a refusal is logged, counted and has its headers too.
   answerErrorsAsProblems(app, publicUrl);
   closeSoon(app);
+  guardRoutes(app, service);
   if (document === null) await collectRoutes(app);
   else await serveDocs(app, document);
 
   healthRoutes(app, service);
   problemPageRoutes(app);
   await app.register(async (behindToken: App) => {
-    requireToken(behindToken, service);
     metricsRoutes(behindToken, metricsText);
     siteRoutes(behindToken, service);
     antennaRoutes(behindToken, service);

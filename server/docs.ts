@@ -33,7 +33,10 @@ export async function serveDocs(app: App, document: OpenAPIV3_1.Document): Promi
     },
   });
   const text = JSON.stringify(document);
-  app.get('/openapi.json', { schema: { hide: true } }, async (_request, reply) =>
-    reply.header('cache-control', 'no-cache').type('application/json').send(text),
+  app.get(
+    '/openapi.json',
+    { config: { right: 'public' }, schema: { hide: true } },
+    async (_request, reply) =>
+      reply.header('cache-control', 'no-cache').type('application/json').send(text),
   );
 }

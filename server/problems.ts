@@ -54,6 +54,13 @@ export const problemKinds = {
     meaning: 'The request has no bearer token, or one that is not known here.',
     remedy: 'Send `Authorization: Bearer <token>` with a token of the club.',
   },
+  'insufficient-right': {
+    status: 403,
+    title: 'The token may not do this',
+    meaning:
+      'The token is valid, but its role or its scopes do not have the right that this needs.',
+    remedy: 'Use a token with the right that `detail` names, or ask a steward of the club.',
+  },
   'not-found': {
     status: 404,
     title: 'There is no such thing here',

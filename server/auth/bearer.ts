@@ -1,42 +1,53 @@
 import type { FastifyInstance, FastifyRequest } from 'fastify';
 import { Problem } from '../problems.ts';
+import { type Right, type Role, rightsOf } from '../rights.ts';
 import { type Service, timestamp } from '../service.ts';
 import type { Actor } from '../store/port.ts';
 import { isWellFormedToken, secretSha256 } from './token.ts';
 
-/** Who is asking, as the token tells. Roles will stand here once there are members. */
+/** Who is asking and what for, as the token tells. */
 export interface Principal {
   readonly clubId: string;
   readonly memberId: string;
+  readonly tokenId: string;
+  readonly role: Role;
+  /** Those of the role, or fewer if the token is narrower. */
+  readonly rights: ReadonlySet<Right>;
 }
 
 declare module 'fastify' {
   interface FastifyRequest {
-    /** Set on every route behind `requireToken`, null elsewhere. */
+    /** Set on every route that needs a right, null on public ones. */
     actor: Principal | null;
   }
 }
 
-/** Lets no request of this instance pass without a valid bearer token (RFC 6750). */
-export function requireToken(app: FastifyInstance, service: Service): void {
+/** Lets no request pass without the right that its route declares (RFC 6750). */
+export function guardRoutes(app: FastifyInstance, service: Service): void {
+  app.decorateRequest('actor', null);
   app.addHook('onRequest', async (request) => {
-    request.actor = await authenticate(request, service);
+    if (carriesTokenInUrl(request.url)) throw new Problem('token-in-url');
+    const { right = 'public' } = request.routeOptions.config;
+    if (right === 'public') return;
+    const principal = await authenticate(request, service);
+    request.actor = principal;
+    if (!principal.rights.has(right)) throw lacking(right);
   });
 }
 
-/** The principal of a request behind `requireToken`. */
+/** The principal of a request whose route needs a right. */
 export function principalOf(request: FastifyRequest): Principal {
-  if (request.actor === null) throw new Error(`${request.routeOptions.url} stands outside auth`);
+  if (request.actor === null) throw new Error(`${request.routeOptions.url} is public`);
   return request.actor;
 }
 
 /** The principal with the present time, as the store wants to know it. */
 export function actorOf(request: FastifyRequest, service: Service): Actor {
-  return { ...principalOf(request), at: timestamp(service.now) };
+  const { clubId, memberId } = principalOf(request);
+  return { clubId, memberId, at: timestamp(service.now) };
 }
 
 async function authenticate(request: FastifyRequest, service: Service): Promise<Principal> {
-  if (carriesTokenInUrl(request.url)) throw new Problem('token-in-url');
   const header = request.headers.authorization;
   if (header === undefined) throw unauthenticated('The request has no bearer token.');
   const match = /^Bearer +([^\s]+) *$/i.exec(header);
@@ -47,15 +58,26 @@ async function authenticate(request: FastifyRequest, service: Service): Promise<
   const known = isWellFormedToken(token)
     ? await service.store.findToken(secretSha256(token))
     : null;
-  // One answer for malformed, unknown and revoked: it tells a guesser nothing.
-  if (known === null) throw unauthenticated('The token is not valid here.', 'invalid_token');
-  return { clubId: known.clubId, memberId: known.memberId };
+  // One answer for malformed, unknown, revoked and expired: it tells a guesser nothing.
+  if (known === null || (known.expiresAt !== null && known.expiresAt <= timestamp(service.now))) {
+    throw unauthenticated('The token is not valid here.', 'invalid_token');
+  }
+  const { id, clubId, memberId, role, scopes } = known;
+  return { clubId, memberId, tokenId: id, role, rights: rightsOf(role, scopes) };
 }
 
 const tokenInUrl = /[?&](access_token=|[^=&]*=sl_[0-9A-Za-z]{36}(&|$))/;
 
 function carriesTokenInUrl(url: string): boolean {
   return tokenInUrl.test(url);
+}
+
+function lacking(right: Right): Problem {
+  const challenge = `Bearer realm="sweep-ledger", error="insufficient_scope", scope="${right}"`;
+  return new Problem('insufficient-right', {
+    detail: `This needs the right \`${right}\`, which the token does not have.`,
+    headers: { 'www-authenticate': challenge },
+  });
 }
 
 function unauthenticated(detail: string, error?: 'invalid_token'): Problem {

@@ -1,6 +1,7 @@
 import fastifySwagger from '@fastify/swagger';
 import { jsonSchemaTransform, jsonSchemaTransformObject } from 'fastify-type-provider-zod';
 import type { App } from '../http/app-type.ts';
+import type { RouteRight } from '../rights.ts';
 
 const description = `A radio club's record of its antenna tests.
 
@@ -35,13 +36,25 @@ export async function collectRoutes(app: App): Promise<void> {
           bearerAuth: {
             type: 'http',
             scheme: 'bearer',
-            description: 'A token of the club, as the first start prints it.',
+            description:
+              'A token of a member. Each operation names the right that it needs: `read`, `measure`, `keep` or `administer`.',
           },
         },
       },
       security: [{ bearerAuth: [] }],
     },
-    transform: jsonSchemaTransform,
+    transform: (route) => {
+      const made = jsonSchemaTransform(route);
+      return {
+        ...made,
+        schema: { ...made.schema, security: securityOf(route.route.config?.right) },
+      };
+    },
     transformObject: jsonSchemaTransformObject,
   });
+}
+
+/** The right that a route declares, as the document tells it: in the place of an OAuth scope. */
+function securityOf(right: RouteRight = 'public') {
+  return right === 'public' ? [] : [{ bearerAuth: [right] }];
 }

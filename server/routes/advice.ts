@@ -89,6 +89,7 @@ export function adviceRoutes(app: App, service: Service): void {
   app.get(
     '/v1/sweeps/:sweep/advice',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getAdvice',
         tags: ['reports'],

@@ -71,6 +71,7 @@ export function analyzerRoutes(app: App, service: Service): void {
   app.get(
     '/v1/analyzers',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'listAnalyzers',
         tags,
@@ -93,6 +94,7 @@ export function analyzerRoutes(app: App, service: Service): void {
   app.post(
     '/v1/analyzers',
     {
+      config: { right: 'measure' },
       schema: {
         operationId: 'addAnalyzer',
         tags,
@@ -115,6 +117,7 @@ export function analyzerRoutes(app: App, service: Service): void {
   app.get(
     '/v1/analyzers/:analyzer',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getAnalyzer',
         tags,
@@ -137,6 +140,7 @@ export function analyzerRoutes(app: App, service: Service): void {
   app.patch(
     '/v1/analyzers/:analyzer',
     {
+      config: { right: 'measure' },
       schema: {
         operationId: 'editAnalyzer',
         tags,

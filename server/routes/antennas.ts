@@ -131,6 +131,7 @@ export function antennaRoutes(app: App, service: Service): void {
   app.get(
     '/v1/antennas',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'listAntennas',
         tags,
@@ -162,6 +163,7 @@ export function antennaRoutes(app: App, service: Service): void {
   app.post(
     '/v1/antennas',
     {
+      config: { right: 'keep' },
       schema: {
         operationId: 'addAntenna',
         tags,
@@ -186,6 +188,7 @@ export function antennaRoutes(app: App, service: Service): void {
   app.get(
     '/v1/antennas/:antenna',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getAntenna',
         tags,
@@ -208,6 +211,7 @@ export function antennaRoutes(app: App, service: Service): void {
   app.patch(
     '/v1/antennas/:antenna',
     {
+      config: { right: 'keep' },
       schema: {
         operationId: 'editAntenna',
         tags,

@@ -35,6 +35,7 @@ export function cableRoutes(app: App, service: Service): void {
   app.get(
     '/v1/cables',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'listCables',
         tags,
@@ -54,6 +55,7 @@ export function cableRoutes(app: App, service: Service): void {
   app.get(
     '/v1/cables/:cable',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getCable',
         tags,
@@ -76,6 +78,7 @@ export function cableRoutes(app: App, service: Service): void {
   app.post(
     '/v1/cables',
     {
+      config: { right: 'keep' },
       schema: {
         operationId: 'addCable',
         tags,

@@ -45,6 +45,7 @@ export function lineCheckRoutes(app: App, service: Service): void {
   app.get(
     '/v1/antennas/:antenna/line-checks',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'listLineChecks',
         tags,
@@ -71,6 +72,7 @@ export function lineCheckRoutes(app: App, service: Service): void {
   app.get(
     '/v1/antennas/:antenna/line-checks/:check',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getLineCheck',
         tags,
@@ -100,6 +102,7 @@ export function lineCheckUploadRoutes(app: App, service: Service): void {
   app.post(
     '/v1/antennas/:antenna/line-checks',
     {
+      config: { right: 'measure' },
       bodyLimit: service.limits.maxBytes,
       schema: {
         operationId: 'uploadLineCheck',

@@ -37,6 +37,7 @@ export function loadCheckRoutes(app: App, service: Service): void {
   app.get(
     '/v1/analyzers/:analyzer/load-checks',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'listLoadChecks',
         tags,
@@ -65,6 +66,7 @@ export function loadCheckUploadRoutes(app: App, service: Service): void {
   app.post(
     '/v1/analyzers/:analyzer/load-checks',
     {
+      config: { right: 'measure' },
       bodyLimit: service.limits.maxBytes,
       schema: {
         operationId: 'uploadLoadCheck',

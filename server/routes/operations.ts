@@ -14,10 +14,10 @@ export function healthRoutes(app: App, service: Service): void {
   app.get(
     '/livez',
     {
+      config: { right: 'public' },
       schema: {
         operationId: 'getLiveness',
         tags,
-        security: [],
         summary: 'Whether the process lives; the storage is not asked',
         querystring: noQuery,
         response: answers({ 200: jsonAnswer('It lives.', okSchema) }, [
@@ -33,10 +33,10 @@ export function healthRoutes(app: App, service: Service): void {
   app.get(
     '/readyz',
     {
+      config: { right: 'public' },
       schema: {
         operationId: 'getReadiness',
         tags,
-        security: [],
         summary: 'Whether reader and writer of the storage answer',
         querystring: noQuery,
         response: answers({ 200: jsonAnswer('They do.', okSchema) }, [
@@ -77,6 +77,7 @@ export function metricsRoutes(app: App, metricsText: () => string): void {
   app.get(
     '/metrics',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getMetrics',
         tags,
@@ -89,7 +90,14 @@ export function metricsRoutes(app: App, metricsText: () => string): void {
               content: { 'text/plain': { schema: z.string() } },
             },
           },
-          ['invalid-request', 'malformed-request', 'token-in-url', 'unauthenticated', 'internal'],
+          [
+            'invalid-request',
+            'malformed-request',
+            'token-in-url',
+            'unauthenticated',
+            'insufficient-right',
+            'internal',
+          ],
         ),
       },
     },

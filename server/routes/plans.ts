@@ -16,6 +16,7 @@ export function planRoutes(app: App): void {
   app.get(
     '/v1/plans',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'listPlans',
         tags: ['plans'],

@@ -14,10 +14,10 @@ export function problemPageRoutes(app: App): void {
   app.get(
     '/problems',
     {
+      config: { right: 'public' },
       schema: {
         operationId: 'listProblemPages',
         tags: ['operations'],
-        security: [],
         summary: 'Every kind of problem',
         response: answers({ 200: html('A page.') }, ['malformed-request', 'internal']),
       },
@@ -28,10 +28,10 @@ export function problemPageRoutes(app: App): void {
   app.get(
     '/problems/:slug',
     {
+      config: { right: 'public' },
       schema: {
         operationId: 'getProblemPage',
         tags: ['operations'],
-        security: [],
         summary: 'What a kind of problem means and what to do',
         params: z.strictObject({ slug: z.string().max(40) }),
         response: answers({ 200: html('A page.') }, [

@@ -77,6 +77,7 @@ export function siteRoutes(app: App, service: Service): void {
   app.get(
     '/v1/sites',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'listSites',
         tags,
@@ -99,6 +100,7 @@ export function siteRoutes(app: App, service: Service): void {
   app.post(
     '/v1/sites',
     {
+      config: { right: 'keep' },
       schema: {
         operationId: 'addSite',
         tags,
@@ -118,6 +120,7 @@ export function siteRoutes(app: App, service: Service): void {
   app.get(
     '/v1/sites/:site',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getSite',
         tags,
@@ -140,6 +143,7 @@ export function siteRoutes(app: App, service: Service): void {
   app.patch(
     '/v1/sites/:site',
     {
+      config: { right: 'keep' },
       schema: {
         operationId: 'editSite',
         tags,

@@ -39,6 +39,7 @@ export function sweepPointRoutes(app: App, service: Service): void {
   app.get(
     '/v1/sweeps/:sweep/points',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getSweepPoints',
         tags: ['sweeps'],

@@ -45,6 +45,7 @@ export function sweepReportRoutes(app: App, service: Service): void {
   app.get(
     '/v1/sweeps/:sweep/summary',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getSummary',
         tags,
@@ -77,6 +78,7 @@ export function sweepReportRoutes(app: App, service: Service): void {
   app.get(
     '/v1/sweeps/:sweep/usable',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getUsable',
         tags,

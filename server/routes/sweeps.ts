@@ -51,6 +51,7 @@ export function sweepRoutes(app: App, service: Service): void {
   app.get(
     '/v1/antennas/:antenna/sweeps',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'listSweeps',
         tags,
@@ -74,6 +75,7 @@ export function sweepRoutes(app: App, service: Service): void {
   app.get(
     '/v1/sweeps/:sweep',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getSweep',
         tags,
@@ -105,6 +107,7 @@ export function sweepRoutes(app: App, service: Service): void {
   app.get(
     '/v1/sweeps/:sweep/file',
     {
+      config: { right: 'read' },
       schema: {
         operationId: 'getSweepFile',
         tags,

@@ -38,6 +38,7 @@ export function uploadRoutes(app: App, service: Service): void {
   app.post(
     '/v1/antennas/:antenna/sweeps',
     {
+      config: { right: 'measure' },
       bodyLimit: service.limits.maxBytes,
       schema: {
         operationId: 'uploadSweep',

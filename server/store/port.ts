@@ -10,6 +10,7 @@ import type { AttenuationPoint } from '../../core/line/attenuation.ts';
 import type { FarEnd } from '../../core/line/check/checked-line.ts';
 import type { WindowId } from '../../core/line/check/windows.ts';
 import type { FeedLineSection } from '../../core/line/feed-line.ts';
+import type { KnownToken } from './people.ts';
 
 /** Where and by whom a change was made: written with it. */
 export interface Actor {
@@ -296,14 +297,14 @@ export interface TokenRecord {
 }
 
 export interface Store {
-  /** Adds the club with its first token, in one act. */
+  /** Adds the club with its first member, a steward, and that member's token, in one act. */
   addClub(
     club: ClubRecord,
     token: TokenRecord & { readonly secretSha256: Uint8Array },
   ): Promise<void>;
   listClubs(): Promise<readonly ClubRecord[]>;
-  /** The live token whose secret has this SHA-256, if there is one. */
-  findToken(secretSha256: Uint8Array): Promise<TokenRecord | null>;
+  /** The token whose secret has this SHA-256, if it is not revoked and its member is active. */
+  findToken(secretSha256: Uint8Array): Promise<KnownToken | null>;
 
   /** Adds a site, antenna or analyzer at revision 1. Throws `conflict` on a key in use. */
   addEditable<K extends EditableKind>(

@@ -55,6 +55,7 @@ export const commonProblems: readonly ProblemSlug[] = [
   'malformed-request',
   'token-in-url',
   'unauthenticated',
+  'insufficient-right',
   'uri-too-long',
   'headers-too-large',
   'internal',

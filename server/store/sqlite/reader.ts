@@ -1,6 +1,7 @@
-import type { ClubRecord, EditableKind, PageRequest, TokenRecord } from '../port.ts';
+import type { ClubRecord, EditableKind, PageRequest } from '../port.ts';
 import type { Codec } from './compression.ts';
 import type { Connection } from './connection.ts';
+import { type KnownTokenRow, knownToken } from './people-rows.ts';
 import {
   type CableRow,
   cableColumns,
@@ -64,7 +65,7 @@ export class Reader {
     return this.prepared.clubs.all().map((row) => ({ ...row, invented: row.invented === 1 }));
   }
 
-  token(secretSha256: Uint8Array): TokenRecord | null {
+  token(secretSha256: Uint8Array): KnownTokenRow | null {
     return this.prepared.token.get(secretSha256) ?? null;
   }
 
@@ -167,10 +168,7 @@ function prepareAll(connection: Connection) {
     clubs: prepare<ClubRow>(
       'SELECT id, key, name, invented, created_at AS createdAt FROM club ORDER BY key',
     ),
-    token: prepare<TokenRecord>(
-      `SELECT id, club_id AS clubId, member_id AS memberId, label, created_at AS createdAt
-       FROM token WHERE secret_sha256 = ?`,
-    ),
+    token: prepare<KnownTokenRow>(knownToken),
     resourceById: prepare<ResourceRow>(
       `SELECT ${resourceColumns} FROM resource WHERE club_id = ? AND kind = ? AND id = ?`,
     ),

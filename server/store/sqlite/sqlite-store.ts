@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto';
+import type { KnownToken } from '../people.ts';
 import {
   type Actor,
   type AddLineCheckOutcome,
@@ -28,6 +29,7 @@ import { pack, packText, unpack, unpackText } from './compression.ts';
 import { copyInThread } from './copy-in-thread.ts';
 import { refuseBelowReserve } from './disk-reserve.ts';
 import { storeErrorOf } from './errors.ts';
+import { toKnownToken } from './people-rows.ts';
 import { packPoints, unpackPoints } from './points-codec.ts';
 import type { Reader } from './reader.ts';
 import {
@@ -67,8 +69,9 @@ export class SqliteStore implements Store {
     return this.read((reader) => reader.clubs());
   }
 
-  async findToken(secretSha256: Uint8Array): Promise<TokenRecord | null> {
-    return this.read((reader) => reader.token(secretSha256));
+  async findToken(secretSha256: Uint8Array): Promise<KnownToken | null> {
+    const row = this.read((reader) => reader.token(secretSha256));
+    return row === null ? null : toKnownToken(row);
   }
 
   async addEditable<K extends EditableKind>(

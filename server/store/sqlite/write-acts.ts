@@ -93,7 +93,11 @@ export interface WriteActs {
 /** Prepares the acts on the writer's connection. */
 export function writeActs(connection: Connection): WriteActs {
   const insertClub = connection.prepare(
-    'INSERT INTO club (id, key, name, invented, created_at) VALUES (?, ?, ?, ?, ?)',
+    'INSERT INTO club (id, key, name, invented, created_at, updated_at) VALUES (?, ?, ?, ?, ?, ?)',
+  );
+  const insertFirstMember = connection.prepare(
+    `INSERT INTO member (club_id, id, revision, role, active, pseudonym, shown_as, created_at, updated_at)
+     VALUES (@clubId, @memberId, 1, 'steward', 1, 'Member 1', 'pseudonym', @createdAt, @createdAt)`,
   );
   const insertToken = connection.prepare(
     'INSERT INTO token (id, club_id, member_id, label, secret_sha256, created_at) VALUES (?, ?, ?, ?, ?, ?)',
@@ -164,7 +168,8 @@ export function writeActs(connection: Connection): WriteActs {
   return {
     addClub(club, token, secretSha256) {
       const { id, key, name, invented, createdAt } = club;
-      insertClub.run(id, key, name, invented ? 1 : 0, createdAt);
+      insertClub.run(id, key, name, invented ? 1 : 0, createdAt, createdAt);
+      insertFirstMember.run({ clubId: id, memberId: token.memberId, createdAt });
       insertToken.run(token.id, id, token.memberId, token.label, secretSha256, token.createdAt);
       insertEvent.run(id, 'club_added', id, createdAt, token.memberId);
       return null;

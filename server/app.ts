@@ -20,9 +20,10 @@ import { adviceRoutes } from './routes/advice.ts';
 import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
 import { cableRoutes } from './routes/cables.ts';
+import { clubRoutes } from './routes/club.ts';
 import { lineCheckRoutes, lineCheckUploadRoutes } from './routes/line-checks.ts';
 import { loadCheckRoutes, loadCheckUploadRoutes } from './routes/load-checks.ts';
-
+import { memberRoutes } from './routes/members.ts';
 import { healthRoutes, metricsRoutes } from './routes/operations.ts';
 import { planRoutes } from './routes/plans.ts';
 import { problemPageRoutes } from './routes/problem-pages.ts';
@@ -30,6 +31,7 @@ import { siteRoutes } from './routes/sites.ts';
 import { sweepPointRoutes } from './routes/sweep-points.ts';
 import { sweepReportRoutes } from './routes/sweep-reports.ts';
 import { sweepRoutes } from './routes/sweeps.ts';
+import { tokenRoutes } from './routes/tokens.ts';
 import { uploadRoutes } from './routes/upload.ts';
 import type { Service } from './service.ts';
 
@@ -81,6 +83,9 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
   problemPageRoutes(app);
   await app.register(async (behindToken: App) => {
     metricsRoutes(behindToken, metricsText);
+    clubRoutes(behindToken, service);
+    memberRoutes(behindToken, service);
+    tokenRoutes(behindToken, service);
     siteRoutes(behindToken, service);
     antennaRoutes(behindToken, service);
     analyzerRoutes(behindToken, service);

@@ -91,6 +91,18 @@ export const problemKinds = {
     meaning: 'Another record of the club and of this kind has the key.',
     remedy: 'Choose another key, or edit the record that has it.',
   },
+  'last-steward': {
+    status: 409,
+    title: 'The club needs a steward',
+    meaning: 'This is the one member left who can administer people and the club.',
+    remedy: 'Make another member a steward first.',
+  },
+  'member-erased': {
+    status: 409,
+    title: 'The member has been erased',
+    meaning: 'Nothing is left to change: an erased member is an id and a pseudonym for good.',
+    remedy: 'Add a new member if the person comes back.',
+  },
   'file-of-other-antenna': {
     status: 409,
     title: 'These bytes are the record of another antenna',

@@ -10,6 +10,8 @@ export interface Principal {
   readonly clubId: string;
   readonly memberId: string;
   readonly tokenId: string;
+  /** Null: the token does not expire. */
+  readonly tokenExpiresAt: string | null;
   readonly role: Role;
   /** Those of the role, or fewer if the token is narrower. */
   readonly rights: ReadonlySet<Right>;
@@ -62,8 +64,9 @@ async function authenticate(request: FastifyRequest, service: Service): Promise<
   if (known === null || (known.expiresAt !== null && known.expiresAt <= timestamp(service.now))) {
     throw unauthenticated('The token is not valid here.', 'invalid_token');
   }
-  const { id, clubId, memberId, role, scopes } = known;
-  return { clubId, memberId, tokenId: id, role, rights: rightsOf(role, scopes) };
+  const { id, clubId, memberId, role, scopes, expiresAt } = known;
+  const allowed = rightsOf(role, scopes);
+  return { clubId, memberId, tokenId: id, tokenExpiresAt: expiresAt, role, rights: allowed };
 }
 
 const tokenInUrl = /[?&](access_token=|[^=&]*=sl_[0-9A-Za-z]{36}(&|$))/;
@@ -72,7 +75,8 @@ function carriesTokenInUrl(url: string): boolean {
   return tokenInUrl.test(url);
 }
 
-function lacking(right: Right): Problem {
+/** The problem of a valid token without the right. */
+export function lacking(right: Right): Problem {
   const challenge = `Bearer realm="sweep-ledger", error="insufficient_scope", scope="${right}"`;
   return new Problem('insufficient-right', {
     detail: `This needs the right \`${right}\`, which the token does not have.`,

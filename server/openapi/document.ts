@@ -17,7 +17,7 @@ export function documentOf(app: App): OpenAPIV3_1.Document {
 /** Every operation of a document. */
 export function operationsOf(document: OpenAPIV3_1.Document): Operation[] {
   return Object.values(document.paths ?? {}).flatMap((item) =>
-    [item?.get, item?.post, item?.patch].flatMap((operation) => operation ?? []),
+    [item?.get, item?.post, item?.patch, item?.delete].flatMap((operation) => operation ?? []),
   );
 }
 

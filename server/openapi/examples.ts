@@ -30,6 +30,15 @@ function calls({
   return {
     getLiveness: { url: '/livez' },
     getReadiness: { url: '/readyz' },
+    getClub: { url: '/v1/club' },
+    editClub: { ...edit, url: '/v1/club', body: { public_dashboard: true } },
+    addMember: {
+      method: 'POST',
+      url: '/v1/members',
+      body: { role: 'measurer', person: { name: 'Invented Member' } },
+    },
+    listMembers: { url: '/v1/members' },
+    listTokens: { url: '/v1/tokens' },
     listSites: { url: '/v1/sites' },
     getSite: { url: '/v1/sites/hilltop' },
     addSite: { method: 'POST', url: '/v1/sites', body: { key: 'quarry', name: 'Quarry' } },

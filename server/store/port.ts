@@ -10,7 +10,7 @@ import type { AttenuationPoint } from '../../core/line/attenuation.ts';
 import type { FarEnd } from '../../core/line/check/checked-line.ts';
 import type { WindowId } from '../../core/line/check/windows.ts';
 import type { FeedLineSection } from '../../core/line/feed-line.ts';
-import type { KnownToken } from './people.ts';
+import type { KnownToken, PeopleStore } from './people.ts';
 
 /** Where and by whom a change was made: written with it. */
 export interface Actor {
@@ -297,6 +297,9 @@ export interface TokenRecord {
 }
 
 export interface Store {
+  /** Members, their tokens, and the club itself. */
+  readonly people: PeopleStore;
+
   /** Adds the club with its first member, a steward, and that member's token, in one act. */
   addClub(
     club: ClubRecord,

@@ -36,6 +36,8 @@ export function openWriter(path: string): Connection {
     expectPragma(connection, 'journal_size_limit', walLimitBytes);
     // Without it, REPLACE removes kept rows past the triggers that refuse it.
     expectPragma(connection, 'recursive_triggers', 1);
+    // What is erased is overwritten, not only unlinked.
+    expectPragma(connection, 'secure_delete', 1);
     setCommon(connection);
   });
 }

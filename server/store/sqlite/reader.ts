@@ -1,7 +1,7 @@
 import type { ClubRecord, EditableKind, PageRequest } from '../port.ts';
 import type { Codec } from './compression.ts';
 import type { Connection } from './connection.ts';
-import { type KnownTokenRow, knownToken } from './people-rows.ts';
+import { PeopleReader } from './people-reader.ts';
 import {
   type CableRow,
   cableColumns,
@@ -53,20 +53,18 @@ const afterAllTimes = '~';
 
 /** Every question that is asked of the file, prepared once on a connection that only reads. */
 export class Reader {
+  readonly people: PeopleReader;
   private readonly connection: Connection;
   private readonly prepared;
 
   constructor(connection: Connection) {
     this.connection = connection;
+    this.people = new PeopleReader(connection);
     this.prepared = prepareAll(connection);
   }
 
   clubs(): ClubRecord[] {
     return this.prepared.clubs.all().map((row) => ({ ...row, invented: row.invented === 1 }));
-  }
-
-  token(secretSha256: Uint8Array): KnownTokenRow | null {
-    return this.prepared.token.get(secretSha256) ?? null;
   }
 
   resource(kind: EditableKind, clubId: string, idOrKey: string): ResourceRow | null {
@@ -168,7 +166,6 @@ function prepareAll(connection: Connection) {
     clubs: prepare<ClubRow>(
       'SELECT id, key, name, invented, created_at AS createdAt FROM club ORDER BY key',
     ),
-    token: prepare<KnownTokenRow>(knownToken),
     resourceById: prepare<ResourceRow>(
       `SELECT ${resourceColumns} FROM resource WHERE club_id = ? AND kind = ? AND id = ?`,
     ),

@@ -29,6 +29,7 @@ import { pack, packText, unpack, unpackText } from './compression.ts';
 import { copyInThread } from './copy-in-thread.ts';
 import { refuseBelowReserve } from './disk-reserve.ts';
 import { storeErrorOf } from './errors.ts';
+import { pageOf } from './page-of.ts';
 import { toKnownToken } from './people-rows.ts';
 import { packPoints, unpackPoints } from './points-codec.ts';
 import type { Reader } from './reader.ts';
@@ -39,10 +40,12 @@ import {
   toLoadCheckRecord,
   toSweepRecord,
 } from './rows.ts';
+import { SqlitePeople } from './sqlite-people.ts';
 import type { Writer } from './writer.ts';
 
 /** The Store port over one SQLite file: one writer in its thread, one reader here. */
 export class SqliteStore implements Store {
+  readonly people: SqlitePeople;
   private readonly path: string;
   private readonly reader: Reader;
   private readonly writer: Writer;
@@ -55,6 +58,7 @@ export class SqliteStore implements Store {
     this.reader = reader;
     this.writer = writer;
     this.reserveBytes = reserveBytes;
+    this.people = new SqlitePeople((ask) => this.read((all) => ask(all.people)), writer);
   }
 
   async addClub(
@@ -70,7 +74,7 @@ export class SqliteStore implements Store {
   }
 
   async findToken(secretSha256: Uint8Array): Promise<KnownToken | null> {
-    const row = this.read((reader) => reader.token(secretSha256));
+    const row = this.read((reader) => reader.people.knownToken(secretSha256));
     return row === null ? null : toKnownToken(row);
   }
 
@@ -291,16 +295,4 @@ export class SqliteStore implements Store {
 
 function siteOf(facts: EditableKinds[EditableKind]): string | null {
   return 'siteId' in facts ? facts.siteId : null;
-}
-
-function pageOf<Row, Item>(
-  rows: readonly Row[],
-  { limit }: PageRequest,
-  toItem: (row: Row) => Item,
-  keyOf: (row: Row) => readonly [string, string],
-): Page<Item> {
-  const shown = rows.slice(0, limit);
-  const last = shown.at(-1);
-  const hasMore = rows.length > limit && last !== undefined;
-  return { items: shown.map(toItem), next: hasMore ? keyOf(last) : null };
 }

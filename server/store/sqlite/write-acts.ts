@@ -11,6 +11,7 @@ import {
 } from '../port.ts';
 import type { Packed } from './compression.ts';
 import type { Connection } from './connection.ts';
+import { type PeopleActs, peopleActs } from './people-acts.ts';
 import {
   type CableRow,
   cableColumns,
@@ -72,7 +73,7 @@ export interface EditedResource extends FreshResource {
 }
 
 /** What the writer does, each whole or not at all. Arguments and results pass between threads. */
-export interface WriteActs {
+export interface WriteActs extends PeopleActs {
   addClub(club: ClubRecord, token: TokenRecord, secretSha256: Uint8Array): null;
   addResource(fresh: FreshResource): ResourceRow;
   editResource(edited: EditedResource): ResourceRow;
@@ -166,6 +167,9 @@ export function writeActs(connection: Connection): WriteActs {
   };
 
   return {
+    ...peopleActs(connection, ({ clubId, at, memberId }, kind, id) =>
+      insertEvent.run(clubId, kind, id, at, memberId),
+    ),
     addClub(club, token, secretSha256) {
       const { id, key, name, invented, createdAt } = club;
       insertClub.run(id, key, name, invented ? 1 : 0, createdAt, createdAt);

@@ -24,4 +24,4 @@ VOLUME /data
 EXPOSE 8080
 HEALTHCHECK --interval=30s --timeout=3s --start-period=20s \
   CMD ["node", "-e", "fetch(`http://127.0.0.1:${process.env.PORT}/readyz`).then((r) => process.exit(r.ok ? 0 : 1), () => process.exit(1))"]
-CMD ["node", "dist/server/main.js"]
+CMD ["node", "--max-semi-space-size=4", "dist/server/main.js"]

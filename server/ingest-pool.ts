@@ -12,6 +12,9 @@ import type { NewSweep } from './store/port.ts';
 /** Reads and analyses a file on its way in. */
 export type Ingest = (incoming: Incoming) => Promise<Result<NewSweep, ReadError>>;
 
+/** Short-lived values of one file: with V8's own choice a thread at rest holds some 50 MB more. */
+const resourceLimits = { maxYoungGenerationSizeMb: 8 };
+
 interface Waiting {
   readonly incoming: Incoming;
   readonly resolve: (made: Result<NewSweep, ReadError>) => void;
@@ -60,7 +63,7 @@ export class IngestPool {
 
   private start(): Thread {
     const entry = pathToFileURL(join(projectRoot(), 'dist/server/ingest-thread.js'));
-    const thread: Thread = { worker: new Worker(entry), waiting: new Map() };
+    const thread: Thread = { worker: new Worker(entry, { resourceLimits }), waiting: new Map() };
     thread.worker.on('message', (answer: IngestAnswer) => settle(thread, answer));
     thread.worker.on('error', (error) => this.remove(thread, error));
     thread.worker.once('exit', () => this.remove(thread, new Error('A reading thread has ended.')));

@@ -1,3 +1,5 @@
+import { writeFileSync } from 'node:fs';
+
 /** One line of the benchmark's table: a figure, what it should be, and how it came about. */
 export interface Figure {
   readonly key: string;
@@ -68,9 +70,28 @@ export function median(values: readonly number[]): number {
 }
 
 /** Whether a figure meets its aim; null where it has none. */
-export function meetsAim({ value, aim }: Figure): boolean | null {
+function meetsAim({ value, aim }: Figure): boolean | null {
   const match = /^(>=|<=) ([\d.]+)$/.exec(aim);
   if (match === null) return null;
   const bound = Number(match[2]);
   return match[1] === '>=' ? value >= bound : value <= bound;
+}
+
+/** The figures as a table for people and, where a file is named, as JSON by key. */
+export function printFigures(figures: readonly Figure[], file: string | undefined): void {
+  console.table(
+    figures.map((figure) => ({
+      key: figure.key,
+      value: Number(figure.value.toPrecision(4)),
+      unit: figure.unit,
+      aim: figure.aim,
+      met: { true: 'yes', false: 'no', null: '' }[String(meetsAim(figure))],
+      detail: figure.detail,
+    })),
+  );
+  if (file === undefined) return;
+  const byKey = Object.fromEntries(
+    figures.map(({ key, value, aim, unit, detail }) => [key, { value, aim, unit, detail }]),
+  );
+  writeFileSync(file, `${JSON.stringify(byKey, null, 2)}\n`);
 }

@@ -1,7 +1,6 @@
-import { writeFileSync } from 'node:fs';
 import { parseArgs } from 'node:util';
 import { analysisFigures } from './analysis.ts';
-import { type Figure, meetsAim } from './measure.ts';
+import { type Figure, printFigures } from './measure.ts';
 import { readingFigures } from './reading.ts';
 import { serviceFigures } from './service.ts';
 
@@ -24,20 +23,4 @@ for (const [name, measure] of Object.entries(groups)) {
   figures.push(...(await measure()));
 }
 
-console.table(
-  figures.map((figure) => ({
-    key: figure.key,
-    value: Number(figure.value.toPrecision(4)),
-    unit: figure.unit,
-    aim: figure.aim,
-    met: { true: 'yes', false: 'no', null: '' }[String(meetsAim(figure))],
-    detail: figure.detail,
-  })),
-);
-
-if (values.json !== undefined) {
-  const byKey = Object.fromEntries(
-    figures.map(({ key, value, aim, unit, detail }) => [key, { value, aim, unit, detail }]),
-  );
-  writeFileSync(values.json, `${JSON.stringify(byKey, null, 2)}\n`);
-}
+printFigures(figures, values.json);

@@ -4,35 +4,57 @@ import { createServer } from 'node:net';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
+/** Those of `npm start`. */
+const nodeOptions = ['--max-semi-space-size=4'];
+
 /** A server in a process of its own. */
 export interface ServerProcess {
   readonly url: string;
   readonly headers: Readonly<Record<string, string>>;
+  readonly pid: number;
   stop(): Promise<void>;
 }
 
 /** Our service, built, on an empty store in a folder, with one antenna `bench`. */
 export async function startService(folder: string): Promise<ServerProcess> {
+  const { service, output } = await run(join(folder, 'service'));
+  const headers = { authorization: `Bearer ${/sl_[0-9A-Za-z]+/.exec(output)?.[0] ?? ''}` };
+  await post(service.url, headers, '/v1/sites', { key: 'bench', name: 'Bench' });
+  const facts = { name: 'Bench', kind: 'dipole', design_bands: ['20m'], plan: 'iaru-r1' };
+  await post(service.url, headers, '/v1/antennas', { key: 'bench', site: 'bench', ...facts });
+  return { ...service, headers };
+}
+
+/** Our service, built, on a store that is there; ready to answer when this resolves. */
+export async function serviceOn(folder: string, token: string): Promise<ServerProcess> {
+  const { service } = await run(folder);
+  return { ...service, headers: { authorization: `Bearer ${token}` } };
+}
+
+async function run(dataDir: string): Promise<{ service: ServerProcess; output: string }> {
   const port = await freePort();
-  const url = `http://127.0.0.1:${port}`;
   const program = fileURLToPath(new URL('../../dist/server/main.js', import.meta.url));
-  const child = spawn(process.execPath, [program], {
+  const child = spawn(process.execPath, [...nodeOptions, program], {
     env: {
       ...process.env,
       PORT: String(port),
-      DATA_DIR: join(folder, 'service'),
+      DATA_DIR: dataDir,
       DEMO: 'off',
+      BACKUP_EVERY_HOURS: '0',
       LOG_LEVEL: 'silent',
     },
     stdio: ['ignore', 'pipe', 'inherit'],
   });
   const output = await firstOutput(child, /listens on/);
-  const token = /sl_[0-9A-Za-z]+/.exec(output)?.[0] ?? '';
-  const headers = { authorization: `Bearer ${token}` };
-  await post(url, headers, '/v1/sites', { key: 'bench', name: 'Bench' });
-  const facts = { name: 'Bench', kind: 'dipole', design_bands: ['20m'], plan: 'iaru-r1' };
-  await post(url, headers, '/v1/antennas', { key: 'bench', site: 'bench', ...facts });
-  return { url, headers, stop: () => stop(child) };
+  return {
+    service: {
+      url: `http://127.0.0.1:${port}`,
+      headers: {},
+      pid: child.pid ?? 0,
+      stop: () => stop(child),
+    },
+    output,
+  };
 }
 
 /** The floor: keeps bytes, sends `constant`. */
@@ -43,7 +65,7 @@ export async function startFloor(folder: string, constant: string): Promise<Serv
     stdio: ['ignore', 'pipe', 'inherit'],
   });
   const url = (await firstOutput(child, /http:\S+/)).trim();
-  return { url, headers: {}, stop: () => stop(child) };
+  return { url, headers: {}, pid: child.pid ?? 0, stop: () => stop(child) };
 }
 
 async function post(url: string, headers: object, path: string, body: object): Promise<void> {

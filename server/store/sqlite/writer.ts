@@ -6,6 +6,9 @@ import { threadEntry } from './thread-entry.ts';
 import type { WriteActs } from './write-acts.ts';
 import type { WriterOptions } from './writer-thread.ts';
 
+/** What it holds is passed on at once: V8's own choice would only keep memory. */
+const resourceLimits = { maxYoungGenerationSizeMb: 8 };
+
 interface Waiting {
   readonly resolve: (value: never) => void;
   readonly reject: (error: StoreError) => void;
@@ -33,7 +36,9 @@ export class Writer {
 
   /** Starts the thread; resolves once the file is open and its schema up to date. */
   static async start(options: WriterOptions): Promise<Writer> {
-    const writer = new Writer(new Worker(threadEntry('writer-thread'), { workerData: options }));
+    const writer = new Writer(
+      new Worker(threadEntry('writer-thread'), { workerData: options, resourceLimits }),
+    );
     await new Promise<never>((resolve, reject) => writer.waiting.set(0, { resolve, reject }));
     return writer;
   }

@@ -21,6 +21,7 @@ import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
 import { cableRoutes } from './routes/cables.ts';
 import { clubRoutes } from './routes/club.ts';
+import { historyRoutes } from './routes/history.ts';
 import { lineCheckRoutes, lineCheckUploadRoutes } from './routes/line-checks.ts';
 import { loadCheckRoutes, loadCheckUploadRoutes } from './routes/load-checks.ts';
 import { memberRoutes } from './routes/members.ts';
@@ -33,6 +34,7 @@ import { sweepReportRoutes } from './routes/sweep-reports.ts';
 import { sweepRoutes } from './routes/sweeps.ts';
 import { tokenRoutes } from './routes/tokens.ts';
 import { uploadRoutes } from './routes/upload.ts';
+import { workRoutes } from './routes/work.ts';
 import type { Service } from './service.ts';
 
 export interface AppParts {
@@ -96,6 +98,8 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     sweepPointRoutes(behindToken, service);
     sweepReportRoutes(behindToken, service);
     adviceRoutes(behindToken, service);
+    workRoutes(behindToken, service);
+    historyRoutes(behindToken, service);
     planRoutes(behindToken);
     // In a scope of their own, since they take any body.
     await behindToken.register(async (scope: App) => {

@@ -2,6 +2,7 @@ import { readSweep } from '../core/formats/read-sweep.ts';
 import type { ReadError, ReadLimits, ReadSweep } from '../core/formats/read-types.ts';
 import type { LineCheckError } from '../core/line/check/grid.ts';
 import { fail, ok, type Result } from '../core/result.ts';
+import { storedMeasures } from './history/measures.ts';
 import { checkForRecord, type LineToCheck } from './lines/line-check.ts';
 import { basisOf } from './report-basis.ts';
 import { summaryOf, usableOf } from './reports.ts';
@@ -14,7 +15,6 @@ import type {
   NewLineCheck,
   NewLoadCheck,
   NewSweep,
-  StoredSummary,
   SweepFacts,
   SweepMeasured,
   SweepRecord,
@@ -59,7 +59,7 @@ export function ingest(incoming: Incoming): Result<NewSweep, ReadError> {
     record,
     file: incoming.bytes,
     points: toStoredPoints(read.value.sweep),
-    summary: derivedFrom(incoming, record, read.value),
+    ...derivedFrom(incoming, record, read.value),
   });
 }
 
@@ -119,14 +119,17 @@ function derivedFrom(
   { antenna, analyzer, ownCables }: Incoming,
   record: SweepRecord,
   { sweep, assumptions }: ReadSweep,
-): StoredSummary {
+): Pick<NewSweep, 'summary' | 'measures'> {
   const residualErrors = analyzer?.facts.residualErrors ?? null;
   const basis = basisOf(antenna.facts, residualErrors, ownCables, record);
   const view = viewOf(basis, sweep, assumptions);
   return {
-    analysisVersion: basis.analysisVersion,
-    summaryJson: JSON.stringify(summaryOf(record, view, basis)),
-    usableJson: JSON.stringify(usableOf(record, view, basis)),
+    summary: {
+      analysisVersion: basis.analysisVersion,
+      summaryJson: JSON.stringify(summaryOf(record, view, basis)),
+      usableJson: JSON.stringify(usableOf(record, view, basis)),
+    },
+    measures: storedMeasures(view, basis),
   };
 }
 

@@ -28,6 +28,11 @@ export async function loadDemo(service: Service, actor: Actor, demo: DemoClub): 
     const analyzer = found(analyzers, upload.analyzerKey);
     await keepUpload(service, actor, upload, antenna, analyzer);
   }
+  for (const { antennaKey, doneAt, facts } of demo.work) {
+    const antennaId = found(antennas, antennaKey).id;
+    const at = new Date(doneAt).toISOString();
+    await store.addWork(actor, { id: newId(), antennaId, doneAt: at, facts });
+  }
   for (const check of demo.lineChecks) {
     const antenna = found(antennas, check.antennaKey);
     await keepLineCheck(service, actor, check, antenna, found(analyzers, check.analyzerKey));
@@ -41,7 +46,7 @@ async function keepUpload(
   antenna: AntennaRecord,
   analyzer: AnalyzerRecord,
 ): Promise<void> {
-  const { conditions, note, plane, bytes, fileName } = upload;
+  const { conditions, told, note, plane, bytes, fileName } = upload;
   const measuredAt = new Date(upload.measuredAt).toISOString();
   const made = await service.ingest({
     id: service.newId(),
@@ -56,6 +61,7 @@ async function keepUpload(
       analyzerId: analyzer.id,
       measuredAt,
       conditions,
+      ...told,
       note,
       plane,
       invented: true,

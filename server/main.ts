@@ -9,6 +9,7 @@ import { type BackupSchedule, scheduleBackups } from './backup-schedule.ts';
 import { type Config, ConfigError, httpUrl, readConfig } from './config.ts';
 import { demoClub } from './demo/demo-club.ts';
 import { addFirstClub } from './first-run.ts';
+import { fillHistory } from './history/measured-rows.ts';
 import type { App } from './http/app-type.ts';
 import { makeIdSource } from './ids.ts';
 import { IngestPool } from './ingest-pool.ts';
@@ -32,6 +33,9 @@ async function main(): Promise<void> {
   await firstRun(service, config);
   await app.listen({ host: config.host, port: config.port });
   say(`Sweep Ledger listens on ${listeningUrl(app, config)} (documentation: /docs).\n`);
+  fillHistory(service, () => !app.server.listening).catch((error: unknown) => {
+    log.warn({ err: error }, 'measures of older sweeps are still to be made');
+  });
   await backups?.makeIfDue();
 }
 

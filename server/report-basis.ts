@@ -98,6 +98,11 @@ export function summaryMark({ plane, referenceOhm, residualErrors, line, maxSwr 
   });
 }
 
+/** What the measures of a sweep follow from beside the sweep itself, as a text to compare. */
+export function measuresBasis({ line: _, ...basis }: ReportBasis): string {
+  return JSON.stringify(basis);
+}
+
 /** The same of a usable-band report; only at the feed point does it follow from the line. */
 export function usableMark({ line, ...basis }: ReportBasis) {
   return toSnakeCase(basis);

@@ -71,8 +71,11 @@ export async function usableText(
 }
 
 /** The points of a record as a sweep. */
-export async function readSweepOf(service: Service, record: SweepRecord): Promise<Sweep> {
-  const points = await service.store.readSweepPoints(record.clubId, record.id);
+export async function readSweepOf(
+  { store }: Pick<Service, 'store'>,
+  record: SweepRecord,
+): Promise<Sweep> {
+  const points = await store.readSweepPoints(record.clubId, record.id);
   if (points === null) throw new Problem('record-corrupt');
   return toSweep(record.measured, points);
 }

@@ -1,5 +1,6 @@
+import type { WorkKind } from '../../core/record/work.ts';
 import type { AntennaFacts } from '../store/port.ts';
-import type { DemoAntenna } from './club.ts';
+import type { DemoAntenna, DemoWork } from './club.ts';
 import type { AntennaModel, SweepRange, Visit } from './visit.ts';
 
 /** One invented antenna: what the record says, what physics says, and when it was measured. */
@@ -8,6 +9,21 @@ export interface AntennaBook {
   readonly model: AntennaModel;
   readonly range: SweepRange;
   readonly visits: readonly Visit[];
+  readonly work?: readonly BookedWork[];
+}
+
+/** Work as it stands in an antenna's book. */
+export type BookedWork = Omit<DemoWork, 'antennaKey'>;
+
+/** Work of the invented club; nobody is named. */
+export function worked(
+  kind: WorkKind,
+  doneAt: string,
+  note: string,
+  lengthChangeM: number | null = null,
+): BookedWork {
+  const invented = `Invented for the demo. ${note}`;
+  return { doneAt, facts: { kind, lengthChangeM, doneBy: null, note: invented, invented: true } };
 }
 
 /** What each antenna states of its own; the rest is alike for the whole club. */

@@ -1,3 +1,5 @@
+import type { Conditions } from '../../core/record/conditions.ts';
+import type { WorkFacts } from '../store/history-store.ts';
 import type { AnalyzerFacts, AntennaFacts, SiteFacts, TestedLine } from '../store/port.ts';
 
 /** The invented club: facts as the store keeps them, and sweeps as files that members would send. */
@@ -10,6 +12,7 @@ export interface DemoClub {
   readonly analyzers: readonly DemoAnalyzer[];
   /** Ascending in time of measurement. */
   readonly uploads: readonly DemoUpload[];
+  readonly work: readonly DemoWork[];
   /** Ascending in time of measurement. */
   readonly lineChecks: readonly DemoLineCheck[];
 }
@@ -37,6 +40,7 @@ export interface DemoUpload {
   /** RFC 3339, UTC. */
   readonly measuredAt: string;
   readonly conditions: string;
+  readonly told: Conditions;
   readonly note: string;
   readonly plane: 'measured';
   readonly fileName: string;
@@ -45,6 +49,14 @@ export interface DemoUpload {
   readonly columns?: string;
   /** The port that the antenna is at, for two-port files. */
   readonly port?: 1 | 2;
+}
+
+/** Work on an antenna. */
+export interface DemoWork {
+  readonly antennaKey: string;
+  /** RFC 3339, UTC. */
+  readonly doneAt: string;
+  readonly facts: WorkFacts;
 }
 
 /** One sweep into a feed line, and what is told of the line. */

@@ -44,12 +44,15 @@ export function demoClub(): DemoClub {
     uploads: books
       .flatMap((book) => book.visits.map((visit, number) => uploadOf(book, visit, number)))
       .sort((a, b) => (a.measuredAt < b.measuredAt ? -1 : 1)),
+    work: books.flatMap(({ antenna, work = [] }) =>
+      work.map((one) => ({ antennaKey: antenna.key, ...one })),
+    ),
     lineChecks: demoLineChecks(),
   };
 }
 
 function uploadOf(book: AntennaBook, visit: Visit, number: number): DemoUpload {
-  const { measuredAt, by, conditions } = visit;
+  const { measuredAt, by, conditions, told } = visit;
   const antennaKey = book.antenna.key;
   const instrument = instruments[by];
   const writeFile = instrument.fileOf(number, measuredAt);
@@ -61,6 +64,7 @@ function uploadOf(book: AntennaBook, visit: Visit, number: number): DemoUpload {
     analyzerKey: by,
     measuredAt,
     conditions,
+    told,
     note: `Invented for the demo. ${visit.note}`.trim(),
     plane: 'measured',
     fileName: `${antennaKey}-${stamp}-${by}${extension}`,

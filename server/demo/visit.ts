@@ -1,3 +1,4 @@
+import type { Conditions, Weather } from '../../core/record/conditions.ts';
 import type { Impedance } from './models/lumped.ts';
 
 /** The club's analyzers by key. */
@@ -19,7 +20,9 @@ export type AntennaModel = (frequencyHz: number, occasion: Occasion) => Impedanc
 export interface Visit {
   readonly measuredAt: string;
   readonly by: DemoAnalyzerKey;
+  /** In the members' own words. */
   readonly conditions: string;
+  readonly told: Conditions;
   readonly wet: boolean;
   readonly note: string;
 }
@@ -35,12 +38,25 @@ const yearMs = 365.25 * 24 * 3600 * 1000;
 
 /** A visit in dry conditions. */
 export function dry(measuredAt: string, by: DemoAnalyzerKey, weather: string, note = ''): Visit {
-  return { measuredAt, by, conditions: `dry, ${weather}`, wet: false, note };
+  const told = toldOf('dry', weather);
+  return { measuredAt, by, conditions: `dry, ${weather}`, told, wet: false, note };
 }
 
 /** A visit during or just after rain. */
 export function wet(measuredAt: string, by: DemoAnalyzerKey, weather: string, note = ''): Visit {
-  return { measuredAt, by, conditions: `wet, ${weather}`, wet: true, note };
+  const told = toldOf(/rain|drizzle/.test(weather) ? 'rain' : 'wet_after_rain', weather);
+  return { measuredAt, by, conditions: `wet, ${weather}`, told, wet: true, note };
+}
+
+/** The words as the members would have ticked them: `7 °C, rain`. */
+function toldOf(weather: Weather, words: string): Conditions {
+  const degrees = /-?\d+(?= °C)/.exec(words)?.[0];
+  return {
+    weather,
+    windMS: null,
+    temperatureC: degrees === undefined ? null : Number(degrees),
+    ground: null,
+  };
 }
 
 export function occasionOf({ measuredAt, wet: isWet }: Visit): Occasion {

@@ -4,9 +4,15 @@ import { Problem } from '../problems.ts';
 const clockToleranceMs = 24 * 3600 * 1000;
 
 /** Refuses a time of measurement that lies in the future. Throws `implausible-fact`. */
-export function refuseFuture(measuredAt: string | null, nowMs: number): void {
+export function refuseFuture(
+  measuredAt: string | null,
+  nowMs: number,
+  place: { readonly parameter: string } | { readonly pointer: string } = {
+    parameter: 'measured_at',
+  },
+): void {
   if (measuredAt === null || Date.parse(measuredAt) <= nowMs + clockToleranceMs) return;
   throw new Problem('implausible-fact', {
-    errors: [{ detail: `${measuredAt} has not been yet.`, parameter: 'measured_at' }],
+    errors: [{ detail: `${measuredAt} has not been yet.`, ...place }],
   });
 }

@@ -29,7 +29,7 @@ export function cableOfRecord({ key, facts }: CableRecord): Cable {
 
 /** The club's own cables among those that a feed line names; a club has none twice. */
 export async function clubCablesOf(
-  service: Service,
+  service: Pick<Service, 'store'>,
   clubId: string,
   feedLine: readonly FeedLineSection[] | null,
 ): Promise<readonly CableRecord[]> {

@@ -26,6 +26,8 @@ export async function collectRoutes(app: App): Promise<void> {
         { name: 'analyzers', description: 'What it is measured with.' },
         { name: 'sweeps', description: 'Measurements: upload, record, file and points.' },
         { name: 'reports', description: 'What follows from a sweep.' },
+        { name: 'history', description: 'Antennas over time.' },
+        { name: 'work', description: 'What was done to antennas.' },
         { name: 'cables', description: 'Cables with their sources, and the club’s own.' },
         { name: 'line checks', description: 'Sweeps into feed lines: length, loss and faults.' },
         { name: 'plans', description: 'Band plans with their sources.' },

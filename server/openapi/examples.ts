@@ -104,6 +104,13 @@ function calls({
     listSweeps: { url: '/v1/antennas/hilltop-20m/sweeps?limit=2' },
     getSweep: { url: `/v1/sweeps/${sweep}` },
     getSummary: { url: `/v1/sweeps/${throughLine}/summary` },
+    addWork: {
+      method: 'POST',
+      url: '/v1/antennas/quarry-20m/work',
+      body: { kind: 'trimmed', done_at: '2026-05-17T13:00:00Z', length_mm: 120, note: 'both ends' },
+    },
+    listWork: { url: '/v1/antennas/quarry-20m/work' },
+    getHistory: { url: '/v1/antennas/hilltop-40m/history?limit=1' },
     getAdvice: { url: `/v1/sweeps/${throughLine}/advice?power_w=50` },
     getUsable: { url: `/v1/sweeps/${sweep}/usable` },
     getSweepPoints: { url: `/v1/sweeps/${sweep}/points` },

@@ -13,6 +13,7 @@ import { summaryText } from '../reports.ts';
 import type { Service } from '../service.ts';
 import type { AnalyzerRecord, AntennaRecord, SweepFacts, SweepRecord } from '../store/port.ts';
 import { idOrKeySchema } from '../wire/common.ts';
+import { conditionsOf, conditionsQuery } from '../wire/conditions.ts';
 import { answers, jsonAnswer } from '../wire/problem.ts';
 import { planeSchema } from '../wire/summary.ts';
 import { sweepWithSummaryJson, sweepWithSummarySchema } from '../wire/sweep.ts';
@@ -26,7 +27,8 @@ const querystring = z.strictObject({
     .string()
     .max(500)
     .optional()
-    .meta({ examples: ['wet ground, 4 degrees'] }),
+    .meta({ description: 'In your own words.', examples: ['gusts from the west'] }),
+  ...conditionsQuery,
   plane: planeSchema.default('measured'),
 });
 type UploadQuery = z.output<typeof querystring>;
@@ -88,6 +90,7 @@ async function toldOf(
     analyzerId: known?.id ?? null,
     measuredAt,
     conditions: query.conditions ?? null,
+    ...conditionsOf(query),
     note: query.note,
     plane: query.plane,
     invented: false,

@@ -10,6 +10,8 @@ import type { AttenuationPoint } from '../../core/line/attenuation.ts';
 import type { FarEnd } from '../../core/line/check/checked-line.ts';
 import type { WindowId } from '../../core/line/check/windows.ts';
 import type { FeedLineSection } from '../../core/line/feed-line.ts';
+import type { Conditions } from '../../core/record/conditions.ts';
+import type { HistoryStore, StoredMeasures } from './history-store.ts';
 import type { KnownToken, PeopleStore } from './people.ts';
 
 /** Where and by whom a change was made: written with it. */
@@ -103,12 +105,16 @@ export interface EditableKinds {
 }
 export type EditableKind = keyof EditableKinds;
 
-/** What is told about a sweep beside its file; none of it is measured. */
-export interface SweepFacts {
+/**
+ * What is told about a sweep beside its file; none of it is measured. What nobody said of weather,
+ * wind, temperature and ground is null or left out.
+ */
+export interface SweepFacts extends Partial<Conditions> {
   readonly antennaId: string;
   readonly analyzerId: string | null;
   /** When it was measured; null if nobody said. */
   readonly measuredAt: string | null;
+  /** In the member's own words. */
   readonly conditions: string | null;
   readonly note: string;
   readonly plane: 'measured' | 'feed_point';
@@ -164,6 +170,7 @@ export interface NewSweep {
   readonly file: Uint8Array;
   readonly points: StoredPoints;
   readonly summary: StoredSummary;
+  readonly measures: StoredMeasures;
 }
 
 /** What is told about a sweep of a known load. */
@@ -296,7 +303,7 @@ export interface TokenRecord {
   readonly createdAt: string;
 }
 
-export interface Store {
+export interface Store extends HistoryStore {
   /** Members, their tokens, and the club itself. */
   readonly people: PeopleStore;
 

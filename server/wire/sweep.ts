@@ -8,6 +8,7 @@ import {
   noteSchema,
   timeSchema,
 } from './common.ts';
+import { conditionsFields, conditionsToWire } from './conditions.ts';
 import { phaseSchema, planeSchema, summarySchema } from './summary.ts';
 
 /** The file of a measurement, as it was sent. */
@@ -36,7 +37,8 @@ export const sweepSchema = z
     measured_at: timeSchema.nullable().meta({ description: 'Null if nobody said.' }),
     received_at: timeSchema,
     uploaded_by: idSchema,
-    conditions: z.string().nullable(),
+    ...conditionsFields,
+    conditions: z.string().nullable().meta({ description: 'In the member’s own words.' }),
     note: noteSchema,
     plane: planeSchema,
     invented: inventedSchema,
@@ -77,6 +79,7 @@ export function sweepToWire(record: SweepRecord): z.output<typeof sweepSchema> {
     measured_at: facts.measuredAt,
     received_at: record.receivedAt,
     uploaded_by: record.uploadedBy,
+    ...conditionsToWire(facts),
     conditions: facts.conditions,
     note: facts.note,
     plane: facts.plane,

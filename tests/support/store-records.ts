@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto';
+import type { SweepMeasures } from '../../core/record/measures.ts';
 import type {
   Actor,
   AnalyzerFacts,
@@ -102,6 +103,26 @@ export function newLineCheck(
   };
 }
 
+/** What a sweep of the 20 m band measured. */
+const measures: SweepMeasures = {
+  analysisVersion: '1',
+  plane: 'measured',
+  phase: 'signed',
+  referenceOhm: 50,
+  maxSwr: 2,
+  bands: [
+    {
+      band: '20m',
+      sweptFraction: 0.5,
+      usableFraction: 0.25,
+      resonances: [],
+      minimum: null,
+      span: null,
+      flags: [],
+    },
+  ],
+};
+
 /** A sweep of three points whose file holds the text. */
 export function newSweep(clubId: string, id: string, antennaId: string, text: string): NewSweep {
   const file = new TextEncoder().encode(text);
@@ -143,5 +164,6 @@ export function newSweep(clubId: string, id: string, antennaId: string, text: st
       reflectionMagnitude: null,
     },
     summary: { analysisVersion: '1', summaryJson: '{"a":1}', usableJson: '{"b":2}' },
+    measures: { basis: 'made for tests', measures },
   };
 }

@@ -1,4 +1,4 @@
-import { type AntennaBook, inventedAntenna } from '../antenna-book.ts';
+import { type AntennaBook, inventedAntenna, worked } from '../antenna-book.ts';
 import { dipoleImpedance } from '../models/induced-emf.ts';
 import { isUnderWay, trimmed } from '../stories.ts';
 import { dry, wet } from '../visit.ts';
@@ -32,4 +32,5 @@ export const boathouse10m: AntennaBook = {
     dry('2026-05-16T15:40:00Z', 'logger', '18 °C', 'Comparison day, second reading.'),
     dry('2026-10-31T10:30:00Z', 'bench', '10 °C'),
   ],
+  work: [worked('trimmed', '2025-05-03T13:00:00Z', '5 cm off each end.', -0.1)],
 };

@@ -1,4 +1,4 @@
-import { type AntennaBook, inventedAntenna } from '../antenna-book.ts';
+import { type AntennaBook, inventedAntenna, worked } from '../antenna-book.ts';
 import { genericLine, statedLine } from '../models/generic-cables.ts';
 import { seriesResonator, throughLine } from '../models/lumped.ts';
 import { isUnderWay, lineReplaced } from '../stories.ts';
@@ -30,4 +30,5 @@ export const boathouse2m: AntennaBook = {
     dry('2026-04-18T11:40:00Z', 'logger', '13 °C'),
     wet('2026-11-07T12:10:00Z', 'logger', '7 °C, fog'),
   ],
+  work: [worked('line_replaced', '2025-10-04T15:30:00Z', 'The old line had aged.')],
 };

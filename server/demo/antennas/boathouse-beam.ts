@@ -1,4 +1,4 @@
-import { type AntennaBook, inventedAntenna } from '../antenna-book.ts';
+import { type AntennaBook, inventedAntenna, worked } from '../antenna-book.ts';
 import { genericLine, statedLine } from '../models/generic-cables.ts';
 import { inParallel, seriesResonator, throughLine } from '../models/lumped.ts';
 import { isUnderWay, suddenFault } from '../stories.ts';
@@ -35,5 +35,9 @@ export const boathouseBeam: AntennaBook = {
     dry('2026-04-11T15:50:00Z', 'bench', '12 °C', 'After straightening and a new joint.'),
     dry('2026-07-18T10:30:00Z', 'logger', '23 °C'),
     dry('2026-11-07T11:00:00Z', 'bench', '7 °C'),
+  ],
+  work: [
+    worked('inspected', '2026-01-24T12:00:00Z', 'Bent driven element seen from below.'),
+    worked('repaired', '2026-04-11T14:00:00Z', 'Driven element straightened, joint made anew.'),
   ],
 };

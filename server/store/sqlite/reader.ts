@@ -1,6 +1,7 @@
 import type { ClubRecord, EditableKind, PageRequest } from '../port.ts';
 import type { Codec } from './compression.ts';
 import type { Connection } from './connection.ts';
+import { HistoryQueries, historyListQueries } from './history-queries.ts';
 import { PeopleReader } from './people-reader.ts';
 import {
   type CableRow,
@@ -46,6 +47,7 @@ export const listQueries = {
   lineChecks: `SELECT ${lineCheckColumns}
     WHERE club_id = @clubId AND antenna_id = @antennaId AND (sort_at, id) < (@sortAt, @id)
     ORDER BY sort_at DESC, id DESC LIMIT @limit`,
+  ...historyListQueries,
 } as const;
 
 /** Later than any time, so that a first page begins at the newest. */
@@ -54,6 +56,7 @@ const afterAllTimes = '~';
 /** Every question that is asked of the file, prepared once on a connection that only reads. */
 export class Reader {
   readonly people: PeopleReader;
+  readonly history: HistoryQueries;
   private readonly connection: Connection;
   private readonly prepared;
 
@@ -61,6 +64,7 @@ export class Reader {
     this.connection = connection;
     this.people = new PeopleReader(connection);
     this.prepared = prepareAll(connection);
+    this.history = new HistoryQueries(connection);
   }
 
   clubs(): ClubRecord[] {

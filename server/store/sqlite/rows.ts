@@ -1,3 +1,4 @@
+import type { HistoryEntry, WorkRecord } from '../history-store.ts';
 import {
   type CableRecord,
   type Editable,
@@ -33,13 +34,47 @@ export interface SweepRow {
   readonly sortAt: string;
 }
 
-/** Columns and tables of a `SweepRow` with the facts that hold, for SELECT. */
-export const sweepColumns = `sweep.club_id AS clubId, sweep.id AS id, received_at AS receivedAt,
-  uploaded_by AS uploadedBy, measured, sweep_facts.facts AS facts, sort_at AS sortAt
-  FROM sweep_current
-  JOIN sweep ON sweep.club_id = sweep_current.club_id AND sweep.id = sweep_current.sweep_id
+/** Columns of a `SweepRow` with the facts that hold. */
+export const sweepFields = `sweep.club_id AS clubId, sweep.id AS id, received_at AS receivedAt,
+  uploaded_by AS uploadedBy, measured, sweep_facts.facts AS facts, sweep_current.sort_at AS sortAt`;
+
+/** The tables of these columns beside `sweep_current`. */
+export const sweepTables = `JOIN sweep ON sweep.club_id = sweep_current.club_id AND sweep.id = sweep_current.sweep_id
   JOIN sweep_facts ON sweep_facts.club_id = sweep_current.club_id
     AND sweep_facts.sweep_id = sweep_current.sweep_id AND sweep_facts.revision = sweep_current.revision`;
+
+/** Columns and tables of a `SweepRow`, for SELECT. */
+export const sweepColumns = `${sweepFields} FROM sweep_current ${sweepTables}`;
+
+export interface WorkRow {
+  readonly clubId: string;
+  readonly id: string;
+  readonly antennaId: string;
+  readonly doneAt: string;
+  readonly addedAt: string;
+  readonly addedBy: string;
+  readonly facts: string;
+}
+
+/** Columns and table of a `WorkRow`, for SELECT. */
+export const workColumns = `club_id AS clubId, id, antenna_id AS antennaId, done_at AS doneAt,
+  added_at AS addedAt, added_by AS addedBy, facts FROM work_entry`;
+
+/** A row as the record that callers know. */
+export function toWorkRecord(row: WorkRow): WorkRecord {
+  return { ...row, facts: parsed(row.facts) };
+}
+
+/** A row with what it has of measures. */
+export function toHistoryEntry({
+  basis,
+  measures,
+  ...row
+}: SweepRow & { readonly basis: string | null; readonly measures: string | null }): HistoryEntry {
+  const record = toSweepRecord(row);
+  if (basis === null || measures === null) return { record, stored: null };
+  return { record, stored: { basis, measures: parsed(measures) } };
+}
 
 /** A row as the record that callers know. */
 export function toEditable<K extends EditableKind>(row: ResourceRow): Editable<EditableKinds[K]> {

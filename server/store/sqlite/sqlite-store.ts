@@ -1,4 +1,12 @@
 import { createHash } from 'node:crypto';
+import type {
+  FreshWork,
+  HistoryEntry,
+  HistoryFilter,
+  HistoryOrder,
+  StoredMeasures,
+  WorkRecord,
+} from '../history-store.ts';
 import type { KnownToken } from '../people.ts';
 import {
   type Actor,
@@ -36,9 +44,11 @@ import type { Reader } from './reader.ts';
 import {
   toCableRecord,
   toEditable,
+  toHistoryEntry,
   toLineCheckRecord,
   toLoadCheckRecord,
   toSweepRecord,
+  toWorkRecord,
 } from './rows.ts';
 import { SqlitePeople } from './sqlite-people.ts';
 import type { Writer } from './writer.ts';
@@ -121,7 +131,7 @@ export class SqliteStore implements Store {
     return toEditable<K>(await this.writer.run('editResource', packed));
   }
 
-  async addSweep({ record, file, points, summary }: NewSweep): Promise<AddSweepOutcome> {
+  async addSweep({ record, file, points, summary, measures }: NewSweep): Promise<AddSweepOutcome> {
     await refuseBelowReserve(this.path, this.reserveBytes);
     const [packedFile, packedSummary, packedUsable] = await Promise.all([
       pack(file),
@@ -135,6 +145,7 @@ export class SqliteStore implements Store {
       analysisVersion: summary.analysisVersion,
       summary: packedSummary,
       usable: packedUsable,
+      measures,
     });
     const kept = toSweepRecord(row);
     if (outcome === 'added') return { outcome, record: kept };
@@ -187,6 +198,45 @@ export class SqliteStore implements Store {
       unpackText(row.usable),
     ]);
     return { analysisVersion, summaryJson, usableJson };
+  }
+
+  async listHistory(
+    clubId: string,
+    antennaId: string,
+    filter: HistoryFilter,
+    page: PageRequest,
+    order: HistoryOrder = 'newest_first',
+  ): Promise<Page<HistoryEntry>> {
+    const rows = this.read(({ history }) =>
+      history.entries(clubId, antennaId, filter, page, order),
+    );
+    return pageOf(rows, page, toHistoryEntry, ({ sortAt, id }) => [sortAt, id]);
+  }
+
+  async keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): Promise<void> {
+    await this.writer.run('keepMeasures', clubId, sweepId, stored);
+  }
+
+  async listUnmeasured(limit: number): Promise<readonly SweepRecord[]> {
+    return this.read(({ history }) => history.unmeasured(limit)).map(toSweepRecord);
+  }
+
+  async addWork(actor: Actor, fresh: FreshWork): Promise<WorkRecord> {
+    return toWorkRecord(await this.writer.run('addWork', actor, fresh));
+  }
+
+  async findWork(clubId: string, id: string): Promise<WorkRecord | null> {
+    const row = this.read(({ history }) => history.workById(clubId, id));
+    return row === null ? null : toWorkRecord(row);
+  }
+
+  async listWork(clubId: string, antennaId: string, page: PageRequest): Promise<Page<WorkRecord>> {
+    const rows = this.read(({ history }) => history.work(clubId, antennaId, page));
+    return pageOf(rows, page, toWorkRecord, ({ doneAt, id }) => [doneAt, id]);
+  }
+
+  async allWork(clubId: string, antennaId: string): Promise<readonly WorkRecord[]> {
+    return this.read(({ history }) => history.allWork(clubId, antennaId)).map(toWorkRecord);
   }
 
   async addLoadCheck({ record, file, points }: NewLoadCheck): Promise<AddLoadCheckOutcome> {

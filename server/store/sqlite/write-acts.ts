@@ -1,3 +1,4 @@
+import type { FreshWork, StoredMeasures } from '../history-store.ts';
 import {
   type Actor,
   type CableFacts,
@@ -11,6 +12,7 @@ import {
 } from '../port.ts';
 import type { Packed } from './compression.ts';
 import type { Connection } from './connection.ts';
+import { historyActs } from './history-acts.ts';
 import { type PeopleActs, peopleActs } from './people-acts.ts';
 import {
   type CableRow,
@@ -23,6 +25,7 @@ import {
   resourceColumns,
   type SweepRow,
   sweepColumns,
+  type WorkRow,
 } from './rows.ts';
 
 /** A sweep packed for the writer. */
@@ -34,6 +37,7 @@ export interface PackedSweep {
   /** Deflated texts. */
   readonly summary: Uint8Array;
   readonly usable: Uint8Array;
+  readonly measures: StoredMeasures;
 }
 
 /** A sweep of a known load packed for the writer. */
@@ -87,6 +91,8 @@ export interface WriteActs extends PeopleActs {
     readonly outcome: 'added' | 'known';
     readonly row: LineCheckRow;
   };
+  keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): null;
+  addWork(actor: Actor, fresh: FreshWork): WorkRow;
   /** Takes the lock that every write needs and gives it back: tells whether a write could begin. */
   takeLock(): null;
 }
@@ -160,6 +166,7 @@ export function writeActs(connection: Connection): WriteActs {
      WHERE club_id = ? AND antenna_id = ? AND file_sha256 = ? AND tested = ?`,
   );
 
+  const history = historyActs(connection);
   const keepRevision = (kind: EditableKind, actor: Actor, row: ResourceRow) => {
     const { at, memberId } = actor;
     const { clubId, id, revision, key, facts } = row;
@@ -196,7 +203,7 @@ export function writeActs(connection: Connection): WriteActs {
       insertEvent.run(clubId, `${kind}_edited`, id, at, memberId);
       return row;
     },
-    addSweep({ record, file, points, analysisVersion, summary, usable }) {
+    addSweep({ record, file, points, analysisVersion, summary, usable, measures }) {
       const { id, clubId, receivedAt, uploadedBy, facts, measured } = record;
       const sha256 = Buffer.from(measured.fileSha256, 'hex');
       const known = selectByFile.get(clubId, sha256);
@@ -206,6 +213,7 @@ export function writeActs(connection: Connection): WriteActs {
       insertFacts.run(clubId, id, JSON.stringify(facts), receivedAt, uploadedBy);
       insertCurrent.run(clubId, id, facts.antennaId, facts.measuredAt ?? receivedAt);
       insertSummary.run(clubId, id, analysisVersion, summary, usable);
+      history.enter(record, measures);
       insertEvent.run(clubId, 'sweep_added', id, receivedAt, uploadedBy);
       const row = selectByFile.get(clubId, sha256);
       if (row === undefined) throw new StoreError('unavailable', 'The sweep was not kept.');
@@ -268,6 +276,8 @@ export function writeActs(connection: Connection): WriteActs {
       if (row === undefined) throw new StoreError('unavailable', 'The check was not kept.');
       return { outcome: 'added', row };
     },
+    keepMeasures: history.keepMeasures,
+    addWork: history.addWork,
     takeLock() {
       connection.exec('BEGIN IMMEDIATE; ROLLBACK');
       return null;

@@ -1,0 +1,104 @@
+import type { FreshWork, StoredMeasures } from '../history-store.ts';
+import { type Actor, StoreError, type SweepRecord } from '../port.ts';
+import type { Connection } from './connection.ts';
+import { type WorkRow, workColumns } from './rows.ts';
+
+/** What the writer does for histories, each within the act that calls it. */
+export interface HistoryActs {
+  /** Takes a new sweep into its antenna's history. */
+  enter(record: SweepRecord, stored: StoredMeasures): void;
+  /** Moves a sweep to where its facts, as they are now, put it. */
+  move(record: SweepRecord): void;
+  keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): null;
+  addWork(actor: Actor, fresh: FreshWork): WorkRow;
+}
+
+interface Place {
+  readonly antennaId: string;
+  readonly sortAt: string;
+  readonly analyzerId: string;
+  readonly weather: string;
+}
+
+/** Prepares the acts on the writer's connection. */
+export function historyActs(connection: Connection): HistoryActs {
+  const insertMeasures = connection.prepare(
+    `INSERT INTO sweep_measures (club_id, sweep_id, basis, measures) VALUES (?, ?, ?, ?)
+     ON CONFLICT DO UPDATE SET basis = excluded.basis, measures = excluded.measures`,
+  );
+  const insertRow = connection.prepare(
+    `INSERT INTO history (club_id, sweep_id, band, antenna_id, sort_at, analyzer_id, weather)
+     VALUES (@clubId, @sweepId, @band, @antennaId, @sortAt, @analyzerId, @weather)`,
+  );
+  const updateRows = connection.prepare(
+    `UPDATE history SET antenna_id = @antennaId, sort_at = @sortAt, analyzer_id = @analyzerId, weather = @weather
+     WHERE club_id = @clubId AND sweep_id = @sweepId`,
+  );
+  const selectPlace = connection.prepare<unknown[], Place>(
+    `SELECT antenna_id AS antennaId, sort_at AS sortAt, analyzer_id AS analyzerId, weather
+     FROM history WHERE club_id = ? AND sweep_id = ? AND band = ''`,
+  );
+  const deleteBands = connection.prepare(
+    `DELETE FROM history WHERE club_id = ? AND sweep_id = ? AND band <> ''`,
+  );
+  const deleteUnmeasured = connection.prepare(
+    'DELETE FROM unmeasured WHERE club_id = ? AND sweep_id = ?',
+  );
+  const insertWork = connection.prepare<unknown[], WorkRow>(
+    'INSERT INTO work_entry (club_id, id, antenna_id, done_at, added_at, added_by, facts) VALUES (?, ?, ?, ?, ?, ?, ?)',
+  );
+  const selectWork = connection.prepare<unknown[], WorkRow>(
+    `SELECT ${workColumns} WHERE club_id = ? AND id = ?`,
+  );
+  const insertEvent = connection.prepare(
+    'INSERT INTO event (club_id, kind, subject_id, at, member_id) VALUES (?, ?, ?, ?, ?)',
+  );
+
+  const insertRows = (
+    clubId: string,
+    sweepId: string,
+    place: Place,
+    bands: readonly string[],
+  ): void => {
+    for (const band of bands) insertRow.run({ clubId, sweepId, band, ...place });
+  };
+
+  return {
+    enter(record, { basis, measures }) {
+      const { clubId, id } = record;
+      const bands = measures.bands.map(({ band }) => band);
+      insertMeasures.run(clubId, id, basis, JSON.stringify(measures));
+      insertRows(clubId, id, placeOf(record), ['', ...bands]);
+    },
+    move(record) {
+      const { clubId, id } = record;
+      updateRows.run({ clubId, sweepId: id, ...placeOf(record) });
+    },
+    keepMeasures(clubId, sweepId, { basis, measures }) {
+      const place = selectPlace.get(clubId, sweepId);
+      if (place === undefined) throw new StoreError('unavailable', `There is no sweep ${sweepId}.`);
+      const bands = measures.bands.map(({ band }) => band);
+      insertMeasures.run(clubId, sweepId, basis, JSON.stringify(measures));
+      deleteBands.run(clubId, sweepId);
+      insertRows(clubId, sweepId, place, bands);
+      deleteUnmeasured.run(clubId, sweepId);
+      return null;
+    },
+    addWork({ clubId, memberId, at }, { id, antennaId, doneAt, facts }) {
+      insertWork.run(clubId, id, antennaId, doneAt, at, memberId, JSON.stringify(facts));
+      insertEvent.run(clubId, 'work_added', id, at, memberId);
+      const row = selectWork.get(clubId, id);
+      if (row === undefined) throw new StoreError('unavailable', 'The work was not kept.');
+      return row;
+    },
+  };
+}
+
+function placeOf({ facts, receivedAt }: SweepRecord): Place {
+  return {
+    antennaId: facts.antennaId,
+    sortAt: facts.measuredAt ?? receivedAt,
+    analyzerId: facts.analyzerId ?? '',
+    weather: facts.weather ?? '',
+  };
+}

@@ -1,0 +1,72 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { addAntenna } from '../support/club-records.ts';
+import { makeTestApp, type TestApp } from '../support/test-app.ts';
+
+const url = '/v1/antennas/field-20m/work';
+let club: TestApp;
+beforeAll(async () => {
+  club = await makeTestApp();
+  await addAntenna(club);
+  await addAntenna(club, { key: 'other' });
+});
+afterAll(() => club.close());
+
+const tell = (payload: Readonly<Record<string, unknown>>, at = url) =>
+  club.call({ method: 'POST', url: at, payload });
+
+describe('work on an antenna', () => {
+  it('is told with what was done, when, by how much and by whom', async () => {
+    const told = {
+      kind: 'trimmed',
+      done_at: '2026-05-03T14:00:00+02:00',
+      length_mm: 100,
+      done_by: 'the Saturday crew',
+      note: '5 cm off each end',
+    };
+    const answer = await tell(told);
+    expect(answer.statusCode).toBe(201);
+    const work = answer.json();
+    expect(work).toMatchObject({ ...told, done_at: '2026-05-03T12:00:00.000Z', invented: false });
+    const read = await club.call({ url: new URL(String(answer.headers.location)).pathname });
+    expect(read.json()).toEqual(work);
+  });
+
+  it('needs no more than kind and time', async () => {
+    const { length_mm, done_by, note } = (
+      await tell({ kind: 'line_replaced', done_at: '2026-05-20T10:00:00Z' })
+    ).json();
+    expect([length_mm, done_by, note]).toEqual([null, null, '']);
+  });
+
+  it('is listed newest first', async () => {
+    const { items } = (await club.call({ url })).json();
+    expect(items.map(({ kind }: { kind: string }) => kind)).toEqual(['line_replaced', 'trimmed']);
+  });
+
+  it('has a length only where the length was worked on', async () => {
+    const answer = await tell({
+      kind: 'moved',
+      done_at: '2026-05-20T10:00:00Z',
+      length_mm: 100,
+    });
+    expect(answer.statusCode).toBe(400);
+    expect(answer.json().errors[0].pointer).toBe('#/length_mm');
+  });
+
+  it('is of a closed list of kinds', async () => {
+    const answer = await tell({ kind: 'painted', done_at: '2026-05-20T10:00:00Z' });
+    expect(answer.statusCode).toBe(400);
+  });
+
+  it('has been done already', async () => {
+    const answer = await tell({ kind: 'moved', done_at: '2027-05-20T10:00:00Z' });
+    expect(answer.statusCode).toBe(422);
+    expect(answer.json().errors[0].pointer).toBe('#/done_at');
+  });
+
+  it('is not found under another antenna', async () => {
+    const { items } = (await club.call({ url })).json();
+    const answer = await club.call({ url: `/v1/antennas/other/work/${items[0].id}` });
+    expect(answer.statusCode).toBe(404);
+  });
+});

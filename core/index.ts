@@ -131,6 +131,21 @@ export {
   measuresOf,
   type SweepMeasures,
 } from './record/measures.ts';
+export { type TrackModel, usualTrackModel } from './record/track-filter.ts';
+export {
+  followResonances,
+  type ResonanceTrack,
+  type TrackPoint,
+  type TrackStanding,
+} from './record/tracks.ts';
+export {
+  eraIndexAt,
+  eraStartsMs,
+  startsEra,
+  type Work,
+  type WorkKind,
+  workKinds,
+} from './record/work.ts';
 export { fail, ok, type Result } from './result.ts';
 export {
   type ComplexSweep,

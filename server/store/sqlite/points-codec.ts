@@ -1,4 +1,4 @@
-import { crc32 } from 'node:zlib';
+import { crc32, deflateRawSync, inflateRawSync } from 'node:zlib';
 import { type StoredPoints, StoreError } from '../port.ts';
 
 /**
@@ -8,11 +8,15 @@ import { type StoredPoints, StoreError } from '../port.ts';
  *
  * Layout: a byte of the columns present (bit 0 real and imaginary part, bit 1 magnitude), the count
  * of points, the columns, each with a byte of its places (255: eight bytes a value), and the CRC-32
- * of all that, without which a flipped bit would be one more measured value.
+ * of all that, without which a flipped bit would be one more measured value. Where that makes it
+ * smaller, all of it stands deflated (RFC 1951) behind a byte that no such layout begins with.
  */
 const checksumBytes = 4;
 const asDoubles = 255;
 const mostPlaces = 15;
+const deflatedMark = 128;
+/** Far more than the points of the longest sweep take. */
+const mostBytes = 64 * 1024 * 1024;
 /** Twice the difference of two whole numbers below this is exact. */
 const largestWhole = 2 ** 50;
 
@@ -25,12 +29,15 @@ export function packPoints(points: StoredPoints): Uint8Array {
   writer.byte((reflectionRe === null ? 0 : 1) | (reflectionMagnitude === null ? 0 : 2));
   writer.whole(frequencyHz.length);
   for (const column of present) packColumn(writer, column);
-  return writer.sealed();
+  const plain = writer.sealed();
+  const deflated = deflateRawSync(plain);
+  if (deflated.length + 1 >= plain.length) return plain;
+  return Buffer.concat([Buffer.of(deflatedMark), deflated]);
 }
 
 /** Unpacks what `packPoints` made. Throws `corrupt`. */
 export function unpackPoints(bytes: Uint8Array): StoredPoints {
-  const reader = new ByteReader(checked(bytes));
+  const reader = new ByteReader(checked(plainOf(bytes)));
   const present = reader.byte();
   const count = reader.whole();
   const frequencyHz = unpackColumn(reader, count);
@@ -41,12 +48,25 @@ export function unpackPoints(bytes: Uint8Array): StoredPoints {
   return { frequencyHz, reflectionRe, reflectionIm, reflectionMagnitude };
 }
 
+function plainOf(bytes: Uint8Array): Uint8Array {
+  if (bytes[0] !== deflatedMark) return bytes;
+  try {
+    return inflateRawSync(bytes.subarray(1), { maxOutputLength: mostBytes });
+  } catch (error) {
+    throw notWhatWasKept(error);
+  }
+}
+
 function checked(bytes: Uint8Array): Uint8Array {
   const end = bytes.length - checksumBytes;
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
   const body = bytes.subarray(0, Math.max(0, end));
   if (end >= 0 && view.getUint32(end, true) === crc32(body)) return body;
-  throw new StoreError('corrupt', 'The stored points are not what was kept.');
+  throw notWhatWasKept();
+}
+
+function notWhatWasKept(cause?: unknown): StoreError {
+  return new StoreError('corrupt', 'The stored points are not what was kept.', undefined, cause);
 }
 
 function packColumn(writer: ByteWriter, column: Float64Array): void {

@@ -1,10 +1,9 @@
 import { createHash } from 'node:crypto';
 import { closeSync, fsyncSync, openSync, renameSync, rmSync } from 'node:fs';
 import { dirname } from 'node:path';
-import { inflateRawSync } from 'node:zlib';
 import Database from 'better-sqlite3';
 import { StoreError } from '../port.ts';
-import type { Codec } from './compression.ts';
+import { type Codec, unpackHere } from './compression.ts';
 import type { Connection } from './connection.ts';
 
 interface FileRow {
@@ -65,8 +64,7 @@ export function verifyCopy(path: string): void {
 
 function isWhole({ sha256, bytes, codec, body }: FileRow): boolean {
   try {
-    const file =
-      codec === 'none' ? body : inflateRawSync(body, { maxOutputLength: Math.max(1, bytes) });
+    const file = unpackHere({ codec, body }, bytes);
     return createHash('sha256').update(file).digest().equals(sha256);
   } catch {
     return false;

@@ -60,6 +60,28 @@ describe('packed points', () => {
     }
   });
 
+  it('are told as corrupt also where they stand deflated', () => {
+    const frequencyHz = Float64Array.from({ length: 101 }, (_, i) => 14_000_000 + 2500 * i);
+    const reflectionMagnitude = frequencyHz.map((_, i) => (i % 10) / 100);
+    const points = { frequencyHz, reflectionRe: null, reflectionIm: null, reflectionMagnitude };
+    const packed = packPoints(points);
+    expect(packed.length).toBeLessThan(101);
+    expect(unpackPoints(packed)).toEqual(points);
+    let told = 0;
+    for (let bit = 0; bit < 8 * packed.length; bit++) {
+      const damaged = Uint8Array.from(packed);
+      damaged[bit >> 3] ^= 1 << (bit & 7);
+      try {
+        // The padding of the last block may differ and the points be whole.
+        expect(unpackPoints(damaged), `bit ${bit}`).toEqual(points);
+      } catch (error) {
+        expect(error, `bit ${bit}`).toMatchObject({ kind: 'corrupt' });
+        told += 1;
+      }
+    }
+    expect(told).toBeGreaterThan(8 * (packed.length - 2));
+  });
+
   it('that were cut off are told as corrupt', () => {
     const points = {
       frequencyHz: Float64Array.of(1, 2.5, 1e300),

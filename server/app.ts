@@ -21,6 +21,7 @@ import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
 import { cableRoutes } from './routes/cables.ts';
 import { clubRoutes } from './routes/club.ts';
+import { eventRoutes } from './routes/events.ts';
 import { historyRoutes } from './routes/history.ts';
 import { lineCheckRoutes, lineCheckUploadRoutes } from './routes/line-checks.ts';
 import { loadCheckRoutes, loadCheckUploadRoutes } from './routes/load-checks.ts';
@@ -100,6 +101,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     adviceRoutes(behindToken, service);
     workRoutes(behindToken, service);
     historyRoutes(behindToken, service);
+    eventRoutes(behindToken, service);
     planRoutes(behindToken);
     // In a scope of their own, since they take any body.
     await behindToken.register(async (scope: App) => {

@@ -49,6 +49,18 @@ export function actorOf(request: FastifyRequest, service: Service): Actor {
   return { clubId, memberId, at: timestamp(service.now) };
 }
 
+/** Whether the token that a request came with is still valid and has the right of its route. */
+export async function isStillAllowed(request: FastifyRequest, service: Service): Promise<boolean> {
+  const { right = 'public' } = request.routeOptions.config;
+  if (right === 'public') return true;
+  try {
+    return (await authenticate(request, service)).rights.has(right);
+  } catch (error) {
+    if (error instanceof Problem) return false;
+    throw error;
+  }
+}
+
 async function authenticate(request: FastifyRequest, service: Service): Promise<Principal> {
   const header = request.headers.authorization;
   if (header === undefined) throw unauthenticated('The request has no bearer token.');

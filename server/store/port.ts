@@ -11,6 +11,7 @@ import type { FarEnd } from '../../core/line/check/checked-line.ts';
 import type { WindowId } from '../../core/line/check/windows.ts';
 import type { FeedLineSection } from '../../core/line/feed-line.ts';
 import type { Conditions } from '../../core/record/conditions.ts';
+import type { EventStore } from './events.ts';
 import type { HistoryStore, StoredMeasures } from './history-store.ts';
 import type { KnownToken, PeopleStore } from './people.ts';
 
@@ -303,7 +304,7 @@ export interface TokenRecord {
   readonly createdAt: string;
 }
 
-export interface Store extends HistoryStore {
+export interface Store extends HistoryStore, EventStore {
   /** Members, their tokens, and the club itself. */
   readonly people: PeopleStore;
 

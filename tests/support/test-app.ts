@@ -35,6 +35,7 @@ interface TestAppOptions {
   readonly limits?: Partial<ReadLimits>;
   /** Puts something between the routes and the store, to make it fail. */
   readonly around?: (store: Store) => Store;
+  readonly heartbeatMs?: number;
   readonly logTo?: DestinationStream;
 }
 
@@ -52,6 +53,7 @@ export async function makeTestApp(options: TestAppOptions = {}): Promise<TestApp
     publicUrl: testUrl,
     ingest: async (incoming) => ingest(incoming),
     limits: { ...defaultReadLimits, ...options.limits },
+    ...(options.heartbeatMs === undefined ? {} : { heartbeatMs: options.heartbeatMs }),
   };
   const log = options.logTo === undefined ? makeLog('silent') : makeLog('trace', options.logTo);
   const app = await buildApp({ service, log, document: emptyDocument });

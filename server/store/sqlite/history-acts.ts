@@ -1,6 +1,7 @@
 import type { FreshWork, StoredMeasures } from '../history-store.ts';
 import { type Actor, StoreError, type SweepRecord } from '../port.ts';
 import type { Connection } from './connection.ts';
+import { eventLog } from './event-log.ts';
 import { type WorkRow, workColumns } from './rows.ts';
 
 /** What the writer does for histories, each within the act that calls it. */
@@ -50,9 +51,7 @@ export function historyActs(connection: Connection): HistoryActs {
   const selectWork = connection.prepare<unknown[], WorkRow>(
     `SELECT ${workColumns} WHERE club_id = ? AND id = ?`,
   );
-  const insertEvent = connection.prepare(
-    'INSERT INTO event (club_id, kind, subject_id, at, member_id) VALUES (?, ?, ?, ?, ?)',
-  );
+  const insertEvent = eventLog(connection);
 
   const insertRows = (
     clubId: string,
@@ -86,7 +85,7 @@ export function historyActs(connection: Connection): HistoryActs {
     },
     addWork({ clubId, memberId, at }, { id, antennaId, doneAt, facts }) {
       insertWork.run(clubId, id, antennaId, doneAt, at, memberId, JSON.stringify(facts));
-      insertEvent.run(clubId, 'work_added', id, at, memberId);
+      insertEvent.run(clubId, 'work_added', id, at, memberId, { antennaId });
       const row = selectWork.get(clubId, id);
       if (row === undefined) throw new StoreError('unavailable', 'The work was not kept.');
       return row;

@@ -1,3 +1,4 @@
+import type { EventKind } from '../events.ts';
 import type { ClubFacts, MemberFacts, MemberToken, Person } from '../people.ts';
 import { type Actor, StoreError } from '../port.ts';
 import type { Connection } from './connection.ts';
@@ -28,7 +29,7 @@ export interface PeopleActs {
 }
 
 /** Writes that something happened to a subject. */
-export type WriteEvent = (actor: Actor, kind: string, subjectId: string) => void;
+export type WriteEvent = (actor: Actor, kind: EventKind, subjectId: string) => void;
 
 /** Prepares the acts on the writer's connection. */
 export function peopleActs(connection: Connection, writeEvent: WriteEvent): PeopleActs {

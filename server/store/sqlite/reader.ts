@@ -1,6 +1,7 @@
 import type { ClubRecord, EditableKind, PageRequest } from '../port.ts';
 import type { Codec } from './compression.ts';
 import type { Connection } from './connection.ts';
+import { EventQueries, eventListQueries } from './event-log.ts';
 import { HistoryQueries, historyListQueries } from './history-queries.ts';
 import { PeopleReader } from './people-reader.ts';
 import {
@@ -48,6 +49,7 @@ export const listQueries = {
     WHERE club_id = @clubId AND antenna_id = @antennaId AND (sort_at, id) < (@sortAt, @id)
     ORDER BY sort_at DESC, id DESC LIMIT @limit`,
   ...historyListQueries,
+  ...eventListQueries,
 } as const;
 
 /** Later than any time, so that a first page begins at the newest. */
@@ -57,6 +59,7 @@ const afterAllTimes = '~';
 export class Reader {
   readonly people: PeopleReader;
   readonly history: HistoryQueries;
+  readonly events: EventQueries;
   private readonly connection: Connection;
   private readonly prepared;
 
@@ -65,6 +68,7 @@ export class Reader {
     this.people = new PeopleReader(connection);
     this.prepared = prepareAll(connection);
     this.history = new HistoryQueries(connection);
+    this.events = new EventQueries(connection);
   }
 
   clubs(): ClubRecord[] {

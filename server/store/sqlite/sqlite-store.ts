@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto';
+import type { LedgerEvent } from '../events.ts';
 import type {
   FreshWork,
   HistoryEntry,
@@ -237,6 +238,18 @@ export class SqliteStore implements Store {
 
   async allWork(clubId: string, antennaId: string): Promise<readonly WorkRecord[]> {
     return this.read(({ history }) => history.allWork(clubId, antennaId)).map(toWorkRecord);
+  }
+
+  async newestSeq(): Promise<number> {
+    return this.read(({ events }) => events.newestSeq());
+  }
+
+  async listEvents(clubId: string, afterSeq: number, limit: number): Promise<LedgerEvent[]> {
+    return this.read(({ events }) => events.list(clubId, afterSeq, limit));
+  }
+
+  onWrite(listener: () => void): () => void {
+    return this.writer.onWrite(listener);
   }
 
   async addLoadCheck({ record, file, points }: NewLoadCheck): Promise<AddLoadCheckOutcome> {

@@ -1,3 +1,4 @@
+import { editableEvent } from '../events.ts';
 import type { FreshWork, StoredMeasures } from '../history-store.ts';
 import {
   type Actor,
@@ -12,6 +13,7 @@ import {
 } from '../port.ts';
 import type { Packed } from './compression.ts';
 import type { Connection } from './connection.ts';
+import { eventLog } from './event-log.ts';
 import { historyActs } from './history-acts.ts';
 import { type PeopleActs, peopleActs } from './people-acts.ts';
 import {
@@ -136,9 +138,7 @@ export function writeActs(connection: Connection): WriteActs {
   const insertSummary = connection.prepare(
     'INSERT INTO summary (club_id, sweep_id, analysis_version, summary, usable) VALUES (?, ?, ?, ?, ?)',
   );
-  const insertEvent = connection.prepare(
-    'INSERT INTO event (club_id, kind, subject_id, at, member_id) VALUES (?, ?, ?, ?, ?)',
-  );
+  const insertEvent = eventLog(connection);
   const selectByFile = connection.prepare<unknown[], SweepRow>(
     `SELECT ${sweepColumns} WHERE sweep.club_id = ? AND sweep.file_sha256 = ?`,
   );
@@ -190,7 +190,7 @@ export function writeActs(connection: Connection): WriteActs {
       const row = insertResource.get({ clubId, kind, id, key, siteId, at, facts });
       if (row === undefined) throw new StoreError('unavailable', 'The insert gave no row.');
       keepRevision(kind, actor, row);
-      insertEvent.run(clubId, `${kind}_added`, id, at, memberId);
+      insertEvent.run(clubId, editableEvent(kind, 'added'), id, at, memberId);
       return row;
     },
     editResource({ kind, actor, id, key, siteId, facts, revision }) {
@@ -200,7 +200,7 @@ export function writeActs(connection: Connection): WriteActs {
         throw new StoreError('stale', `Revision ${revision} of ${id} is not the present one.`);
       }
       keepRevision(kind, actor, row);
-      insertEvent.run(clubId, `${kind}_edited`, id, at, memberId);
+      insertEvent.run(clubId, editableEvent(kind, 'edited'), id, at, memberId);
       return row;
     },
     addSweep({ record, file, points, analysisVersion, summary, usable, measures }) {
@@ -214,7 +214,8 @@ export function writeActs(connection: Connection): WriteActs {
       insertCurrent.run(clubId, id, facts.antennaId, facts.measuredAt ?? receivedAt);
       insertSummary.run(clubId, id, analysisVersion, summary, usable);
       history.enter(record, measures);
-      insertEvent.run(clubId, 'sweep_added', id, receivedAt, uploadedBy);
+      const { antennaId } = facts;
+      insertEvent.run(clubId, 'sweep_added', id, receivedAt, uploadedBy, { antennaId });
       const row = selectByFile.get(clubId, sha256);
       if (row === undefined) throw new StoreError('unavailable', 'The sweep was not kept.');
       return { outcome: 'added', row };
@@ -237,7 +238,8 @@ export function writeActs(connection: Connection): WriteActs {
         JSON.stringify(measured),
         points,
       );
-      insertEvent.run(clubId, 'load_check_added', id, receivedAt, uploadedBy);
+      const { analyzerId } = facts;
+      insertEvent.run(clubId, 'load_check_added', id, receivedAt, uploadedBy, { analyzerId });
       const row = selectLoadCheckByFile.get(clubId, sha256);
       if (row === undefined) throw new StoreError('unavailable', 'The check was not kept.');
       return { outcome: 'added', row };
@@ -271,7 +273,8 @@ export function writeActs(connection: Connection): WriteActs {
         reportJson,
         trace,
       );
-      insertEvent.run(clubId, 'line_check_added', id, receivedAt, uploadedBy);
+      const { antennaId } = facts;
+      insertEvent.run(clubId, 'line_check_added', id, receivedAt, uploadedBy, { antennaId });
       const row = selectLineCheckByFile.get(clubId, facts.antennaId, sha256, line);
       if (row === undefined) throw new StoreError('unavailable', 'The check was not kept.');
       return { outcome: 'added', row };

@@ -18,6 +18,7 @@ interface Waiting {
 export class Writer {
   private readonly worker: Worker;
   private readonly waiting = new Map<number, Waiting>();
+  private readonly listeners = new Set<() => void>();
   private readonly exited: Promise<void>;
   private nextId = 1;
   private isClosed = false;
@@ -61,6 +62,12 @@ export class Writer {
     });
   }
 
+  /** Calls back after each act that is on disk; returns what ends that. */
+  onWrite(listener: () => void): () => void {
+    this.listeners.add(listener);
+    return () => this.listeners.delete(listener);
+  }
+
   /** Lets the acts handed over finish, then ends the thread. */
   async close(): Promise<void> {
     if (!this.isClosed) {
@@ -73,8 +80,12 @@ export class Writer {
   private settle(result: JobResult): void {
     const waiting = this.waiting.get(result.id);
     this.waiting.delete(result.id);
-    if ('failure' in result) waiting?.reject(toStoreError(result.failure));
-    else waiting?.resolve(result.value as never);
+    if ('failure' in result) {
+      waiting?.reject(toStoreError(result.failure));
+      return;
+    }
+    waiting?.resolve(result.value as never);
+    for (const listener of this.listeners) listener();
   }
 
   private failAll(message: string): void {

@@ -1,0 +1,72 @@
+import type { EditableKind } from './port.ts';
+
+/** What happens to people and their tokens is written down, but told to no listener. */
+type InnerEventKind =
+  | 'member_added'
+  | 'member_edited'
+  | 'member_erased'
+  | 'token_added'
+  | 'token_revoked';
+
+/** What listeners are told of. A new kind is a new line here and one in `eventPaths`. */
+export const toldEventKinds = [
+  'club_added',
+  'club_edited',
+  'sites_added',
+  'sites_edited',
+  'antennas_added',
+  'antennas_edited',
+  'analyzers_added',
+  'analyzers_edited',
+  'cable_added',
+  'load_check_added',
+  'line_check_added',
+  'sweep_added',
+  'work_added',
+] as const;
+export type ToldEventKind = (typeof toldEventKinds)[number];
+export type EventKind = ToldEventKind | InnerEventKind;
+
+/** What an event concerns beside its subject. */
+export interface EventDetails {
+  readonly antennaId?: string;
+  readonly analyzerId?: string;
+}
+
+/** Something that happened, written in the same act as the change itself. */
+export interface LedgerEvent {
+  /** Ascending in the order of the writes, over all clubs. */
+  readonly seq: number;
+  readonly clubId: string;
+  readonly kind: EventKind;
+  readonly subjectId: string;
+  readonly at: string;
+  readonly memberId: string;
+  readonly details: EventDetails;
+}
+
+const told: ReadonlySet<string> = new Set(toldEventKinds);
+
+/** Whether listeners are told of the event. */
+export function isTold(event: LedgerEvent): event is ToldEvent {
+  return told.has(event.kind);
+}
+
+export interface ToldEvent extends LedgerEvent {
+  readonly kind: ToldEventKind;
+}
+
+/** The kind of event that adding or editing a resource is. */
+export function editableEvent(kind: EditableKind, act: 'added' | 'edited'): EventKind {
+  return `${kind}_${act}`;
+}
+
+/** The part of the store that tells what happened, in order. */
+export interface EventStore {
+  /** The number of the newest event; 0 if there is none. */
+  newestSeq(): Promise<number>;
+  /** Events after that number, of one club or (null) of all, oldest first. */
+  listEvents(clubId: string | null, afterSeq: number, limit: number): Promise<LedgerEvent[]>;
+  /** Calls back after each write of this process; returns what ends that. */
+  onWrite(listener: () => void): () => void;
+}

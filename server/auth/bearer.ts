@@ -3,7 +3,7 @@ import { Problem } from '../problems.ts';
 import { type Right, type Role, rightsOf } from '../rights.ts';
 import { type Service, timestamp } from '../service.ts';
 import type { Actor } from '../store/port.ts';
-import { isWellFormedToken, secretSha256 } from './token.ts';
+import { KnownTokens } from './known-tokens.ts';
 
 /** Who is asking and what for, as the token tells. */
 export interface Principal {
@@ -26,12 +26,13 @@ declare module 'fastify' {
 
 /** Lets no request pass without the right that its route declares (RFC 6750). */
 export function guardRoutes(app: FastifyInstance, service: Service): void {
+  const tokens = new KnownTokens(service.store);
   app.decorateRequest('actor', null);
   app.addHook('onRequest', async (request) => {
     if (carriesTokenInUrl(request.url)) throw new Problem('token-in-url');
     const { right = 'public' } = request.routeOptions.config;
     if (right === 'public') return;
-    const principal = await authenticate(request, service);
+    const principal = await authenticate(request, service, tokens);
     request.actor = principal;
     if (!principal.rights.has(right)) throw lacking(right);
   });
@@ -54,24 +55,26 @@ export async function isStillAllowed(request: FastifyRequest, service: Service):
   const { right = 'public' } = request.routeOptions.config;
   if (right === 'public') return true;
   try {
-    return (await authenticate(request, service)).rights.has(right);
+    const tokens = new KnownTokens(service.store);
+    return (await authenticate(request, service, tokens)).rights.has(right);
   } catch (error) {
     if (error instanceof Problem) return false;
     throw error;
   }
 }
 
-async function authenticate(request: FastifyRequest, service: Service): Promise<Principal> {
+async function authenticate(
+  request: FastifyRequest,
+  service: Service,
+  tokens: KnownTokens,
+): Promise<Principal> {
   const header = request.headers.authorization;
   if (header === undefined) throw unauthenticated('The request has no bearer token.');
   const match = /^Bearer +([^\s]+) *$/i.exec(header);
   if (match === null) {
     throw unauthenticated('The Authorization header is not of the form `Bearer <token>`.');
   }
-  const token = match[1];
-  const known = isWellFormedToken(token)
-    ? await service.store.findToken(secretSha256(token))
-    : null;
+  const known = await tokens.find(match[1]);
   // One answer for malformed, unknown, revoked and expired: it tells a guesser nothing.
   if (known === null || (known.expiresAt !== null && known.expiresAt <= timestamp(service.now))) {
     throw unauthenticated('The token is not valid here.', 'invalid_token');

@@ -30,6 +30,7 @@ import { healthRoutes, metricsRoutes } from './routes/operations.ts';
 import { planRoutes } from './routes/plans.ts';
 import { problemPageRoutes } from './routes/problem-pages.ts';
 import { siteRoutes } from './routes/sites.ts';
+import { sweepChartRoutes } from './routes/sweep-charts.ts';
 import { sweepPointRoutes } from './routes/sweep-points.ts';
 import { sweepReportRoutes } from './routes/sweep-reports.ts';
 import { sweepRoutes } from './routes/sweeps.ts';
@@ -98,6 +99,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     sweepRoutes(behindToken, service);
     sweepPointRoutes(behindToken, service);
     sweepReportRoutes(behindToken, service);
+    sweepChartRoutes(behindToken, service);
     adviceRoutes(behindToken, service);
     workRoutes(behindToken, service);
     historyRoutes(behindToken, service);

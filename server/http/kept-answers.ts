@@ -6,12 +6,12 @@ import { isNotModified } from './conditional.ts';
 /** An answer that follows from records alone: its tag is known before its text is made. */
 export interface TaggedAnswer {
   readonly tag: string;
-  /** JSON. */
-  readonly text: () => Promise<string>;
+  readonly text: () => Promise<string | Uint8Array>;
 }
 
 const mostBytes = 16 * 1024 * 1024;
 const mostUrls = 10_000;
+const jsonType = 'application/json; charset=utf-8';
 
 /**
  * Answers that were sent lately, so that a dashboard that asks again costs no more than sending
@@ -29,18 +29,19 @@ export class KeptAnswers {
     this.store = store;
   }
 
-  /** Sends what this URL stands for at present, or 304 where the client has it. */
+  /** Sends what this URL stands for as this media type at present, or 304 where the client has it. */
   async send(
     request: FastifyRequest,
     reply: FastifyReply,
     find: () => Promise<TaggedAnswer>,
+    type = jsonType,
   ): Promise<FastifyReply> {
     // A principal sees no more of the club than another who may ask for the same URL.
-    const url = `${principalOf(request).clubId} ${request.url}`;
+    const url = `${principalOf(request).clubId} ${type} ${request.url}`;
     const known = this.knownTag(url);
     const text = known === undefined ? undefined : this.textOfTag.get(known);
     if (known !== undefined && isNotModified(request, reply, known)) return reply.code(304).send();
-    if (text !== undefined) return sendJson(reply, text);
+    if (text !== undefined) return reply.type(type).send(text);
 
     // What is written from here on may or may not be in the answer: it is not kept for that URL.
     const { version } = this;
@@ -49,7 +50,7 @@ export class KeptAnswers {
     if (isNotModified(request, reply, tag)) return reply.code(304).send();
     const kept = this.textOfTag.get(tag) ?? Buffer.from(await make());
     this.keepText(tag, kept);
-    return sendJson(reply, kept);
+    return reply.type(type).send(kept);
   }
 
   private knownTag(url: string): string | undefined {
@@ -78,8 +79,4 @@ export class KeptAnswers {
       this.bytes -= length;
     }
   }
-}
-
-function sendJson(reply: FastifyReply, text: Buffer): FastifyReply {
-  return reply.type('application/json; charset=utf-8').send(text);
 }

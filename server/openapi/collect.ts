@@ -26,6 +26,7 @@ export async function collectRoutes(app: App): Promise<void> {
         { name: 'analyzers', description: 'What it is measured with.' },
         { name: 'sweeps', description: 'Measurements: upload, record, file and points.' },
         { name: 'reports', description: 'What follows from a sweep.' },
+        { name: 'charts', description: 'Sweeps and what follows from them, drawn.' },
         { name: 'history', description: 'Antennas over time.' },
         { name: 'work', description: 'What was done to antennas.' },
         { name: 'cables', description: 'Cables with their sources, and the club’s own.' },

@@ -114,12 +114,24 @@ export {
 } from './network/return-loss.ts';
 export { magnitudeOfSwr, sweepSwr, swrOf } from './network/swr.ts';
 export {
+  type BandChange,
+  type ChangeVerdict,
+  type ComparedAntenna,
+  type ComparedSweep,
+  type Comparison,
+  compareSweeps,
+  type ExplainingLength,
+  type MeasureChange,
+  type ResonanceChange,
+} from './record/compare.ts';
+export {
   type Conditions,
   type Ground,
   grounds,
   type Weather,
   weathers,
 } from './record/conditions.ts';
+export { type CurveDifference, curveDifference } from './record/curve-difference.ts';
 export { bandToFile, type FilingBand } from './record/filing.ts';
 export {
   type BandMeasures,
@@ -138,6 +150,7 @@ export {
   type TrackPoint,
   type TrackStanding,
 } from './record/tracks.ts';
+export { type TrimOccasion, trimPairsOf } from './record/trim-pairs.ts';
 export {
   eraIndexAt,
   eraStartsMs,

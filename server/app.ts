@@ -21,6 +21,7 @@ import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
 import { cableRoutes } from './routes/cables.ts';
 import { clubRoutes } from './routes/club.ts';
+import { compareRoutes } from './routes/compare.ts';
 import { eventRoutes } from './routes/events.ts';
 import { historyRoutes } from './routes/history.ts';
 import { lineCheckRoutes, lineCheckUploadRoutes } from './routes/line-checks.ts';
@@ -104,6 +105,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     workRoutes(behindToken, service);
     historyRoutes(behindToken, service);
     eventRoutes(behindToken, service);
+    compareRoutes(behindToken, service);
     planRoutes(behindToken);
     // In a scope of their own, since they take any body.
     await behindToken.register(async (scope: App) => {

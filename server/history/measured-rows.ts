@@ -63,6 +63,30 @@ export async function measuredPage(
   return { items, next: entries.next };
 }
 
+/** The first `most` sweeps of a history in the given order, with their measures. */
+export async function measuredRows(
+  service: Service,
+  antenna: AntennaRecord,
+  filter: HistoryFilter,
+  most: number,
+  order: HistoryOrder = 'newest_first',
+): Promise<readonly MeasuredRow[]> {
+  const page = { limit: most, after: null };
+  return (await measuredPage(service, antenna, filter, page, order)).items;
+}
+
+/** One sweep with its measures on the present basis. */
+export async function measuredRow(
+  service: Service,
+  antenna: AntennaRecord,
+  record: SweepRecord,
+): Promise<HistoryRow> {
+  const { store } = service;
+  const judging = await judgingOf(service, antenna);
+  const made = await madeMeasures(service, judging, record);
+  return rowOf(record, eraStarts(await store.allWork(antenna.clubId, antenna.id)), made.measures);
+}
+
 /** Makes the measures that a migration left to be made; ends when all are, or when told to stop. */
 export async function fillHistory(service: Kept, isStopping: () => boolean): Promise<void> {
   const { store } = service;

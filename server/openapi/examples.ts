@@ -111,6 +111,7 @@ function calls({
     },
     listWork: { url: '/v1/antennas/quarry-20m/work' },
     getHistory: { url: '/v1/antennas/hilltop-40m/history?limit=1' },
+    compareSweeps: { url: `/v1/sweeps/${sweep}/compare/${sweep}` },
     getAdvice: { url: `/v1/sweeps/${throughLine}/advice?power_w=50` },
     getUsable: { url: `/v1/sweeps/${sweep}/usable` },
     getSweepPoints: { url: `/v1/sweeps/${sweep}/points` },

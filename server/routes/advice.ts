@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import type { AdviceRequest, AdvisedAntenna } from '../advice/advice-request.ts';
 import { advise } from '../advice/advise.ts';
+import { trimPairs } from '../history/trims.ts';
 import type { App } from '../http/app-type.ts';
 import { isNotModified } from '../http/conditional.ts';
 import { derivedTag } from '../http/etags.ts';
@@ -108,7 +109,10 @@ export function adviceRoutes(app: App, service: Service): void {
       const judged = await judgedBy(service, record);
       const { plane, max_swr } = request.query;
       const basis = withEdits(atPlane(judged.basis, record, plane), { maxSwr: max_swr });
-      const antenna: AdvisedAntenna = { kind: judged.antenna.facts.kind, workPairs: [] };
+      const antenna: AdvisedAntenna = {
+        kind: judged.antenna.facts.kind,
+        workPairs: await trimPairs(service, judged.antenna),
+      };
       const asked = requestOf(request.query);
       const tag = derivedTag([
         'advice',

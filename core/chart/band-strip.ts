@@ -54,10 +54,14 @@ export function outsideBandsSvg(
 /** Names of bands and segments above the plot, each over its own width. */
 export function bandStripSvg(bands: readonly BandUse[], axis: FrequencyAxis, frame: Frame): string {
   const bandTop = frame.plot.top - stripRows * stripRowPx - 3;
-  const body = bands.flatMap((band) => {
+  const swept = bands.flatMap((band) => {
     const cut = cutToAxis(band, axis);
-    if (cut === null) return [];
-    const top = { ...cut, top: bandTop };
+    return cut === null ? [] : [{ band, cut }];
+  });
+  const body = swept.flatMap(({ band, cut }, i) => {
+    // The name of a narrow band stands beside it, if the next one leaves it room.
+    const until = swept[i + 1]?.cut.left ?? frame.style.widthPx;
+    const top = { ...cut, until, top: bandTop };
     const segments =
       cut.right - cut.left < leastBandPx
         ? []
@@ -72,6 +76,8 @@ export function bandStripSvg(bands: readonly BandUse[], axis: FrequencyAxis, fra
 interface Cell {
   readonly left: number;
   readonly right: number;
+  /** How far a text may stand beside it. */
+  readonly until: number;
   /** From the longest on, the first that fits is written. */
   readonly texts: readonly string[];
   readonly isBand: boolean;
@@ -85,23 +91,33 @@ function segmentCells(segments: readonly SegmentUse[], axis: FrequencyAxis): rea
     const cut = cutToAxis(segment, axis);
     if (cut === null || segment.lowHz < from || familyNames[segment.family].length === 0) continue;
     from = segment.highHz;
-    cells.push({ ...cut, texts: familyNames[segment.family], isBand: false });
+    cells.push({ ...cut, until: cut.right, texts: familyNames[segment.family], isBand: false });
   }
   return cells;
 }
 
 function cellSvg(
-  { left, right, top, texts, isBand }: Cell & { readonly top: number },
+  { left, right, until, top, texts, isBand }: Cell & { readonly top: number },
   frame: Frame,
-) {
+): string {
   const { palette, sizePx } = frame;
   const size = isBand ? sizePx : sizePx - 1;
-  const text = texts.find((candidate) => textWidth(candidate, size) + 4 <= right - left);
-  const middle = { x: (left + right) / 2, y: top + stripRowPx - 4 };
+  const fits = (width: number) => (text: string) => textWidth(text, size) + 4 <= width;
+  const inside = texts.find(fits(right - left));
+  const text = inside ?? texts.find(fits(until - right - 2));
+  const baseline = top + stripRowPx - 4;
   const fill = isBand ? palette.text : palette.quietText;
   return (
     `<path d="M${px(left)} ${px(top + stripRowPx)}V${px(top + 2)}H${px(right)}V${px(top + stripRowPx)}" fill="none" stroke="${palette.frame}"/>` +
-    (text === undefined ? '' : svgText(text, middle, { sizePx: size, fill, anchor: 'middle' }))
+    (text === undefined
+      ? ''
+      : inside === undefined
+        ? svgText(text, { x: right + 3, y: baseline }, { sizePx: size, fill })
+        : svgText(
+            text,
+            { x: (left + right) / 2, y: baseline },
+            { sizePx: size, fill, anchor: 'middle' },
+          ))
   );
 }
 

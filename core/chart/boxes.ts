@@ -31,3 +31,22 @@ export function holds(outer: Box, inner: Box): boolean {
 export function around({ x, y }: Point, halfPx: number): Box {
   return { left: x - halfPx, top: y - halfPx, right: x + halfPx, bottom: y + halfPx };
 }
+
+/** Whether a straight line runs through a rectangle (Liang, Barsky, ACM Trans. Graph. 3(1), 1984). */
+export function runsThrough(from: Point, to: Point, box: Box): boolean {
+  let entry = 0;
+  let exit = 1;
+  const clip = (step: number, room: number) => {
+    if (step === 0) return room > 0;
+    const at = room / step;
+    if (step < 0) entry = Math.max(entry, at);
+    else exit = Math.min(exit, at);
+    return entry < exit;
+  };
+  return (
+    clip(from.x - to.x, from.x - box.left) &&
+    clip(to.x - from.x, box.right - from.x) &&
+    clip(from.y - to.y, from.y - box.top) &&
+    clip(to.y - from.y, box.bottom - from.y)
+  );
+}

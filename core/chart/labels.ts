@@ -1,4 +1,4 @@
-import { type Box, holds, overlap, type Point } from './boxes.ts';
+import { type Box, holds, overlap, type Point, runsThrough } from './boxes.ts';
 import { textWidth } from './text-width.ts';
 
 /** A text that belongs to a place. */
@@ -46,33 +46,52 @@ const directions: readonly (readonly [number, number])[] = [
 
 /**
  * Places labels one after another, each at the nearest free place around its mark; null where there
- * is no room. Labels never overlap each other, a blocked box or the bounds.
+ * is no room. Labels never overlap each other, a blocked box, a leader or the bounds.
  */
 export function placeLabels(
   labels: readonly Label[],
   room: LabelRoom,
 ): readonly (PlacedLabel | null)[] {
   const taken = [...room.blocked];
+  const leaders: (readonly [Point, Point])[] = [];
   return labels.map((label) => {
-    const placed = placeLabel(label, taken, room);
+    const placed = placeLabel(label, { taken, leaders }, room);
     if (placed !== null) taken.push(placed.box);
+    if (placed?.leader) leaders.push(placed.leader);
     return placed;
   });
 }
 
-function placeLabel(label: Label, taken: readonly Box[], room: LabelRoom): PlacedLabel | null {
+interface Taken {
+  readonly taken: readonly Box[];
+  readonly leaders: readonly (readonly [Point, Point])[];
+}
+
+function placeLabel(label: Label, { taken, leaders }: Taken, room: LabelRoom): PlacedLabel | null {
   const width = textWidth(label.text, room.sizePx);
   let lastResort: PlacedLabel | null = null;
   for (const gap of label.isMinor === true ? gapsPx.slice(0, 1) : gapsPx) {
     for (const direction of directions) {
       const placed = candidate(label, direction, gap, width, room.sizePx);
       if (!holds(room.bounds, placed.box)) continue;
-      if (taken.some((box) => overlap(box, placed.box))) continue;
+      if (taken.some((box) => isInTheWay(box, placed))) continue;
+      if (leaders.some(([from, to]) => runsThrough(from, to, placed.box))) continue;
       if (!room.isCrossed(placed.box)) return placed;
       lastResort ??= placed;
     }
   }
   return lastResort;
+}
+
+/** Whether a box lies under the text or, unless it is that of the mark itself, under the leader. */
+function isInTheWay(box: Box, { box: own, leader }: PlacedLabel): boolean {
+  if (overlap(box, own)) return true;
+  if (leader === null) return false;
+  const [from, to] = leader;
+  return (
+    !holds(box, { left: from.x, right: from.x, top: from.y, bottom: from.y }) &&
+    runsThrough(from, to, box)
+  );
 }
 
 function candidate(

@@ -16,6 +16,8 @@ export interface OhmOrdinate {
 const linearUpTo = 6;
 /** Nothing beyond this many times the reference is told apart. */
 const drawnUpTo = 200;
+/** Share of the upper half that the lower has at least, for what is written about zero. */
+const roomBelowZero = 0.25;
 const decades = [1, 10, 100, 1000, 10_000, 100_000];
 const roundOhms = decades.flatMap((decade) => [decade, 2 * decade, 5 * decade]);
 
@@ -32,8 +34,8 @@ export function ohmOrdinate(
   numbers: NumberText,
 ): OhmOrdinate {
   const end = drawnUpTo * referenceOhm;
-  const low = Math.max(-end, Math.min(0, least));
-  const high = Math.min(end, Math.max(0, most, low + referenceOhm / 5));
+  const high = Math.min(end, Math.max(referenceOhm / 5, most));
+  const low = Math.max(-end, Math.min(-roomBelowZero * high, least));
   if (Math.max(-low, high) <= linearUpTo * referenceOhm) {
     const scale = scaleLinear([low, high], [0, 1]).clamp(true).nice(8);
     const [from, to] = scale.domain();

@@ -24,6 +24,8 @@ type SwrAxis = (swr: number) => number;
 /** Fewer points than this are shown as dots: there the line between them is the chart's own. */
 const fewPoints = 60;
 const usableBarPx = 5;
+/** Where along its line the limit may be named, the best first. */
+const nameShares = [1, 0, 0.75, 0.25, 0.5];
 
 /**
  * SWR against frequency: the plan's bands and segments, the limit, where SWR is within it, the parts
@@ -129,19 +131,18 @@ function limitSvg(
   );
 }
 
-/** The limit's name at an end of its line, where no curve runs through it. */
+/** The limit's name beside its line, where no curve runs through it. */
 function limitName(maxSwr: number, y: SwrAxis, envelope: Envelope, frame: Frame) {
   const { plot, numbers, sizePx } = frame;
   const text = `limit ${numbers.significant(maxSwr, 3)}`;
   const width = textWidth(text, sizePx) + 4;
   const height = 1.3 * sizePx;
-  const boxes = [plot.right - width - 2, plot.left + 2].flatMap((left) =>
-    [y(maxSwr) - height - 1, y(maxSwr) + 2].map((top) => ({
-      left,
-      right: left + width,
-      top,
-      bottom: top + height,
-    })),
+  const room = plot.right - plot.left - width - 4;
+  const boxes = nameShares.flatMap((share) =>
+    [y(maxSwr) - height - 1, y(maxSwr) + 2].map((top) => {
+      const left = plot.left + 2 + share * room;
+      return { left, right: left + width, top, bottom: top + height };
+    }),
   );
   const box = boxes.find((candidate) => !envelope.crosses(candidate)) ?? boxes[0];
   return { text, box };

@@ -57,14 +57,12 @@ export async function sweepChartSvg(service: Service, asked: AskedSweepChart): P
 
 /** When it was measured, and where what is drawn holds. */
 function subtitleOf({ facts, receivedAt }: SweepRecord, { plane }: ReportBasis): string {
-  const time = facts.measuredAt ?? receivedAt;
-  const taken = facts.measuredAt === null ? 'received' : 'measured';
-  const where =
-    plane === facts.plane
-      ? plane === 'feed_point'
-        ? 'at the feed point'
-        : "at the analyzer's end of the line"
-      : 'calculated for the feed point';
-  const invented = facts.invented ? ', invented' : '';
-  return `${taken} ${time.slice(0, 16).replace('T', ' ')} UTC, ${where}${invented}`;
+  const time = (facts.measuredAt ?? receivedAt).slice(0, 16).replace('T', ' ');
+  const calculated = plane === facts.plane ? '' : 'calculated for ';
+  const where = plane === 'feed_point' ? 'the feed point' : 'the analyzer';
+  return [
+    `${facts.measuredAt === null ? 'received ' : ''}${time} UTC`,
+    `${calculated === '' ? 'at ' : calculated}${where}`,
+    ...(facts.invented ? ['invented'] : []),
+  ].join(', ');
 }

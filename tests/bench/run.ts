@@ -1,5 +1,6 @@
 import { parseArgs } from 'node:util';
 import { analysisFigures } from './analysis.ts';
+import { chartFigures } from './charts.ts';
 import { type Figure, printFigures } from './measure.ts';
 import { readingFigures } from './reading.ts';
 import { serviceFigures } from './service.ts';
@@ -14,6 +15,7 @@ const { values } = parseArgs({
 const groups: Record<string, () => Promise<readonly Figure[]> | readonly Figure[]> = {
   reading: readingFigures,
   analysis: analysisFigures,
+  charts: chartFigures,
   service: serviceFigures,
 };
 

@@ -24,6 +24,7 @@ import { clubRoutes } from './routes/club.ts';
 import { compareRoutes } from './routes/compare.ts';
 import { eventRoutes } from './routes/events.ts';
 import { historyRoutes } from './routes/history.ts';
+import { lineCheckChartRoutes } from './routes/line-check-charts.ts';
 import { lineCheckRoutes, lineCheckUploadRoutes } from './routes/line-checks.ts';
 import { loadCheckRoutes, loadCheckUploadRoutes } from './routes/load-checks.ts';
 import { memberRoutes } from './routes/members.ts';
@@ -97,6 +98,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     loadCheckRoutes(behindToken, service);
     cableRoutes(behindToken, service);
     lineCheckRoutes(behindToken, service);
+    lineCheckChartRoutes(behindToken, service);
     sweepRoutes(behindToken, service);
     sweepPointRoutes(behindToken, service);
     sweepReportRoutes(behindToken, service);

@@ -29,6 +29,7 @@ import { findOrRefuse, findProblems, listProblems, resolveReference } from './ed
 
 const tags = ['line checks'];
 const params = z.strictObject({ antenna: idOrKeySchema });
+export const lineCheckParams = z.strictObject({ antenna: idOrKeySchema, check: idSchema });
 const uploadQuery = z
   .strictObject({ ...fileQuery, ...lineQuery, analyzer: idOrKeySchema.optional() })
   .refine(({ far_end, load_ohm }) => far_end === 'loaded' || load_ohm === undefined, {
@@ -77,7 +78,7 @@ export function lineCheckRoutes(app: App, service: Service): void {
         operationId: 'getLineCheck',
         tags,
         summary: 'Read a line check with its trace',
-        params: z.strictObject({ antenna: idOrKeySchema, check: idSchema }),
+        params: lineCheckParams,
         querystring: noQuery,
         response: answers(
           { 200: jsonAnswer('The check.', lineCheckWithTraceSchema) },
@@ -87,14 +88,21 @@ export function lineCheckRoutes(app: App, service: Service): void {
     },
     async (request, reply) => {
       const antenna = await findOrRefuse(request, service, 'antennas', request.params.antenna);
-      const { check } = request.params;
-      const record = await service.store.findLineCheck(antenna.clubId, check);
-      if (record === null || record.facts.antennaId !== antenna.id) {
-        throw new Problem('not-found', { detail: `The antenna has no line check \`${check}\`.` });
-      }
+      const record = await findLineCheckOrRefuse(service, antenna, request.params.check);
       return reply.type('application/json').send(await withTrace(service, antenna, record));
     },
   );
+}
+
+/** A line check of an antenna. Throws `not-found`. */
+export async function findLineCheckOrRefuse(
+  service: Service,
+  antenna: AntennaRecord,
+  id: string,
+): Promise<LineCheckRecord> {
+  const record = await service.store.findLineCheck(antenna.clubId, id);
+  if (record !== null && record.facts.antennaId === antenna.id) return record;
+  throw new Problem('not-found', { detail: `The antenna has no line check \`${id}\`.` });
 }
 
 /** The upload of a line check; stands among the routes that take any body. */

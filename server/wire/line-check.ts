@@ -105,6 +105,9 @@ const traceSchema = z
   })
   .meta({ id: 'ReflectionTrace', description: 'Reflection against distance.' });
 
+/** A trace as it is stored. */
+export type TraceWire = z.output<typeof traceSchema>;
+
 const farEndSchema = z.enum(['open', 'shorted', 'loaded']);
 
 export const lineCheckSchema = z

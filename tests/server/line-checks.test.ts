@@ -2,6 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { findCable } from '../../core/line/cables.ts';
 import { type FeedLine, type FeedLineSection, resolveFeedLine } from '../../core/line/feed-line.ts';
 import { addAntenna } from '../support/club-records.ts';
+import { linearReader, markPlace } from '../support/read-chart.ts';
 import { makeTestApp, type TestApp, testUrl } from '../support/test-app.ts';
 import { lineEndFile } from '../support/through-line.ts';
 
@@ -80,6 +81,22 @@ describe('a check of a line with an open end', () => {
     const highest = trace.magnitude.indexOf(Math.max(...trace.magnitude)) * trace.step_m;
     expect(Math.abs(highest - 22)).toBeLessThan(trace.resolution_m);
     expect(trace.magnitude.length * trace.step_m).toBeGreaterThan(30);
+  });
+
+  it('is drawn with its end at the length that it tells, and not sent again', async () => {
+    const { items } = (await club.call({ url: listUrl })).json();
+    const oldest = items[items.length - 1];
+    const url = `${listUrl}/${oldest.id}/chart.svg?width=800`;
+    const chart = await club.call({ url });
+    expect(chart.headers['content-type']).toBe('image/svg+xml');
+    const metres = linearReader(chart.body, 'axis-x');
+    const end = metres(markPlace(chart.body, 'place end').x);
+    expect(Math.abs(end - oldest.report.length_m)).toBeLessThan(0.1);
+    expect(chart.headers['link']).toContain(`/line-checks/${oldest.id}>; rel="alternate"`);
+    const again = { 'if-none-match': String(chart.headers.etag) };
+    expect((await club.call({ url, headers: again })).statusCode).toBe(304);
+    const elsewhere = url.replace('field-20m', 'unlined');
+    expect((await club.call({ url: elsewhere })).statusCode).toBe(404);
   });
 
   it('of the same bytes told alike is answered with the first record', async () => {

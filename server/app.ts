@@ -22,6 +22,7 @@ import { antennaRoutes } from './routes/antennas.ts';
 import { cableRoutes } from './routes/cables.ts';
 import { clubRoutes } from './routes/club.ts';
 import { compareRoutes } from './routes/compare.ts';
+import { dashboardRoutes } from './routes/dashboard.ts';
 import { eventRoutes } from './routes/events.ts';
 import { historyRoutes } from './routes/history.ts';
 import { lineCheckChartRoutes } from './routes/line-check-charts.ts';
@@ -106,6 +107,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     adviceRoutes(behindToken, service);
     workRoutes(behindToken, service);
     historyRoutes(behindToken, service);
+    dashboardRoutes(behindToken, service);
     eventRoutes(behindToken, service);
     compareRoutes(behindToken, service);
     planRoutes(behindToken);

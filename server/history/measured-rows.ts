@@ -53,14 +53,23 @@ export async function measuredPage(
   const { store } = service;
   const { clubId, id } = antenna;
   const entries = await store.listHistory(clubId, id, filter, page, order);
-  const startsMs = eraStarts(await store.allWork(clubId, id));
+  return { items: await measuredEntries(service, antenna, entries.items), next: entries.next };
+}
+
+/** Entries of an antenna's history with their measures on the present basis, as `measuredPage`. */
+export async function measuredEntries(
+  service: Service,
+  antenna: AntennaRecord,
+  entries: readonly HistoryEntry[],
+): Promise<MeasuredRow[]> {
+  const startsMs = eraStarts(await service.store.allWork(antenna.clubId, antenna.id));
   const judging = await judgingOf(service, antenna);
   const items: MeasuredRow[] = [];
-  for (const { record, stored } of entries.items) {
+  for (const { record, stored } of entries) {
     const { measures } = await presentMeasures(service, judging, { record, stored });
     items.push({ record, row: rowOf(record, startsMs, measures) });
   }
-  return { items, next: entries.next };
+  return items;
 }
 
 /** The first `most` sweeps of a history in the given order, with their measures. */

@@ -36,8 +36,19 @@ export class KeptAnswers {
     find: () => Promise<TaggedAnswer>,
     type = jsonType,
   ): Promise<FastifyReply> {
-    // A principal sees no more of the club than another who may ask for the same URL.
-    const url = `${principalOf(request).clubId} ${type} ${request.url}`;
+    return this.sendOf(principalOf(request).clubId, request, reply, find, type);
+  }
+
+  /** The same of the club that is named, where nobody needs to be known. */
+  async sendOf(
+    clubId: string,
+    request: FastifyRequest,
+    reply: FastifyReply,
+    find: () => Promise<TaggedAnswer>,
+    type = jsonType,
+  ): Promise<FastifyReply> {
+    // Whoever may ask for a URL sees no more of the club than another who may.
+    const url = `${clubId} ${type} ${request.url}`;
     const known = this.knownTag(url);
     const text = known === undefined ? undefined : this.textOfTag.get(known);
     if (known !== undefined && isNotModified(request, reply, known)) return reply.code(304).send();

@@ -31,6 +31,7 @@ export async function collectRoutes(app: App): Promise<void> {
         { name: 'work', description: 'What was done to antennas.' },
         { name: 'cables', description: 'Cables with their sources, and the club’s own.' },
         { name: 'line checks', description: 'Sweeps into feed lines: length, loss and faults.' },
+        { name: 'dashboard', description: 'How everything stands, in one answer.' },
         { name: 'events', description: 'What happens, as it happens.' },
         { name: 'plans', description: 'Band plans with their sources.' },
         { name: 'people', description: 'The club, its members and their tokens.' },

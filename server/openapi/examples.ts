@@ -115,6 +115,7 @@ function calls({
     getAdvice: { url: `/v1/sweeps/${throughLine}/advice?power_w=50` },
     getUsable: { url: `/v1/sweeps/${sweep}/usable` },
     getSweepPoints: { url: `/v1/sweeps/${sweep}/points` },
+    getDashboard: { url: '/v1/dashboard' },
     listPlans: { url: '/v1/plans' },
   };
 }

@@ -63,8 +63,8 @@ export function editableEvent(kind: EditableKind, act: 'added' | 'edited'): Even
 
 /** The part of the store that tells what happened, in order. */
 export interface EventStore {
-  /** The number of the newest event; 0 if there is none. */
-  newestSeq(): Promise<number>;
+  /** The number of the newest event, of one club or of all; 0 if there is none. */
+  newestSeq(clubId?: string): Promise<number>;
   /** Events after that number, of one club or (null) of all, oldest first. */
   listEvents(clubId: string | null, afterSeq: number, limit: number): Promise<LedgerEvent[]>;
   /** Calls back after each write of this process; returns what ends that. */

@@ -59,6 +59,13 @@ export interface FreshWork {
   readonly facts: WorkFacts;
 }
 
+/** The newest good sweep of an antenna in one of its design bands; band null: the newest of all. */
+export interface Standing {
+  readonly antennaId: string;
+  readonly band: string | null;
+  readonly entry: HistoryEntry;
+}
+
 /** The part of the store that keeps what happened to antennas over time. */
 export interface HistoryStore {
   /** By (measuredAt or receivedAt, id). */
@@ -69,6 +76,8 @@ export interface HistoryStore {
     page: PageRequest,
     order?: HistoryOrder,
   ): Promise<Page<HistoryEntry>>;
+  /** How every antenna of a club stands; what has no such sweep is left out. */
+  listStandings(clubId: string): Promise<readonly Standing[]>;
   /** Keeps what a sweep measured in place of what was kept before. */
   keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): Promise<void>;
   /** Sweeps of any club whose measures are still to be made. */

@@ -42,12 +42,16 @@ export class EventQueries {
   constructor(connection: Connection) {
     this.prepared = {
       newest: connection.prepare<[], number>('SELECT max(seq) FROM event').pluck(),
+      newestOfClub: connection
+        .prepare<[string], number>('SELECT max(seq) FROM event WHERE club_id = ?')
+        .pluck(),
       list: connection.prepare<unknown[], EventRow>(eventListQueries.events),
     };
   }
 
-  newestSeq(): number {
-    return this.prepared.newest.get() ?? 0;
+  newestSeq(clubId?: string): number {
+    const { newest, newestOfClub } = this.prepared;
+    return (clubId === undefined ? newest.get() : newestOfClub.get(clubId)) ?? 0;
   }
 
   list(clubId: string, seq: number, limit: number): LedgerEvent[] {

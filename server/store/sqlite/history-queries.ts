@@ -1,6 +1,7 @@
 import type { HistoryFilter, HistoryOrder } from '../history-store.ts';
 import type { PageRequest } from '../port.ts';
 import type { Connection } from './connection.ts';
+import { prepareStandings, type StandingRow } from './dashboard-query.ts';
 import { type SweepRow, sweepFields, sweepTables, type WorkRow, workColumns } from './rows.ts';
 
 export interface HistoryEntryRow extends SweepRow {
@@ -45,9 +46,12 @@ const latest = '~';
 
 /** The questions about histories, prepared once on a connection that only reads. */
 export class HistoryQueries {
+  /** How every antenna of a club stands. */
+  readonly standings: (clubId: string) => StandingRow[];
   private readonly prepared;
 
   constructor(connection: Connection) {
+    this.standings = prepareStandings(connection);
     this.prepared = prepareAll(connection);
   }
 

@@ -5,6 +5,7 @@ import type {
   HistoryEntry,
   HistoryFilter,
   HistoryOrder,
+  Standing,
   StoredMeasures,
   WorkRecord,
 } from '../history-store.ts';
@@ -214,6 +215,15 @@ export class SqliteStore implements Store {
     return pageOf(rows, page, toHistoryEntry, ({ sortAt, id }) => [sortAt, id]);
   }
 
+  async listStandings(clubId: string): Promise<readonly Standing[]> {
+    const rows = this.read(({ history }) => history.standings(clubId));
+    return rows.map(({ antennaId, band, ...entry }) => ({
+      antennaId,
+      band: band === '' ? null : band,
+      entry: toHistoryEntry(entry),
+    }));
+  }
+
   async keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): Promise<void> {
     await this.writer.run('keepMeasures', clubId, sweepId, stored);
   }
@@ -240,8 +250,8 @@ export class SqliteStore implements Store {
     return this.read(({ history }) => history.allWork(clubId, antennaId)).map(toWorkRecord);
   }
 
-  async newestSeq(): Promise<number> {
-    return this.read(({ events }) => events.newestSeq());
+  async newestSeq(clubId?: string): Promise<number> {
+    return this.read(({ events }) => events.newestSeq(clubId));
   }
 
   async listEvents(clubId: string, afterSeq: number, limit: number): Promise<LedgerEvent[]> {

@@ -89,7 +89,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
   healthRoutes(app, service);
   problemPageRoutes(app);
   await app.register(async (behindToken: App) => {
-    metricsRoutes(behindToken, metricsText);
+    metricsRoutes(behindToken, service, metricsText);
     clubRoutes(behindToken, service);
     memberRoutes(behindToken, service);
     tokenRoutes(behindToken, service);

@@ -72,6 +72,12 @@ function backupText(lastBackupAt: number | null): string {
   return metricText(name, 'gauge', 'Begin of the newest good backup since 1970-01-01.', lines);
 }
 
-function metricText(name: string, type: string, help: string, lines: readonly string[]): string {
+/** One metric with its samples in the Prometheus text format. */
+export function metricText(
+  name: string,
+  type: string,
+  help: string,
+  lines: readonly string[],
+): string {
   return `# HELP ${name} ${help}\n# TYPE ${name} ${type}\n${lines.map((line) => `${line}\n`).join('')}`;
 }

@@ -1,4 +1,7 @@
 import { z } from 'zod';
+import { principalOf } from '../auth/bearer.ts';
+import { antennaStandings } from '../dashboard/dashboard.ts';
+import { antennaGauges } from '../dashboard/gauges.ts';
 import type { App } from '../http/app-type.ts';
 import { Problem } from '../problems.ts';
 import type { Service } from '../service.ts';
@@ -73,7 +76,7 @@ async function answersInTime({ store }: Service): Promise<boolean> {
 }
 
 /** The counters, behind a token: they tell how a club works. */
-export function metricsRoutes(app: App, metricsText: () => string): void {
+export function metricsRoutes(app: App, service: Service, metricsText: () => string): void {
   app.get(
     '/metrics',
     {
@@ -81,12 +84,12 @@ export function metricsRoutes(app: App, metricsText: () => string): void {
       schema: {
         operationId: 'getMetrics',
         tags,
-        summary: 'Counters in the Prometheus text format',
+        summary: 'Counters, and gauges of the club’s antennas, in the Prometheus text format',
         querystring: noQuery,
         response: answers(
           {
             200: {
-              description: 'The counters since the start.',
+              description: 'Counters since the start, and how the antennas of the club stand.',
               content: { 'text/plain': { schema: z.string() } },
             },
           },
@@ -101,10 +104,12 @@ export function metricsRoutes(app: App, metricsText: () => string): void {
         ),
       },
     },
-    async (_request, reply) =>
-      reply
+    async (request, reply) => {
+      const standings = await antennaStandings(service, principalOf(request).clubId);
+      return reply
         .header('cache-control', 'no-store')
         .type('text/plain; version=0.0.4; charset=utf-8')
-        .send(metricsText()),
+        .send(metricsText() + antennaGauges(standings, service.now()));
+    },
   );
 }

@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { listPlans } from '../../core/bands/plans.ts';
+import { addAntenna, resonatorFile, upload } from '../support/club-records.ts';
 import { makeTestApp, type TestApp } from '../support/test-app.ts';
 
 let club: TestApp;
@@ -39,6 +40,37 @@ describe('the counters', () => {
     const counts = buckets.slice(0, 12).map((line) => Number(line.split(' ').at(-1)));
     expect(counts).toHaveLength(12);
     expect(counts).toEqual([...counts].sort((a, b) => a - b));
+  });
+});
+
+describe('the gauges of the antennas', () => {
+  it('have no sample before the first sweep, and then what it measured', async () => {
+    await addAntenna(club);
+    const samples = async () =>
+      (await club.call({ url: '/metrics' })).body
+        .split('\n')
+        .filter((line) => line.startsWith('sweep_ledger_antenna_'));
+    expect(await samples()).toEqual([]);
+    const file = resonatorFile({ lowHz: 13_950_000, highHz: 14_400_000, slopeOhmPerHz: 1e-4 });
+    await upload(club, file, '?measured_at=2026-05-22T12:00:00Z');
+    const found = new Map(
+      (await samples()).map((line): [string, number] => {
+        const [name, value] = line.split(' ');
+        return [name, Number(value)];
+      }),
+    );
+    const inBand = '{antenna="field-20m",band="20m"}';
+    expect([...found.keys()]).toEqual([
+      `sweep_ledger_antenna_minimum_swr${inBand}`,
+      `sweep_ledger_antenna_resonance_hertz${inBand}`,
+      `sweep_ledger_antenna_usable_ratio${inBand}`,
+      'sweep_ledger_antenna_days_since_test{antenna="field-20m"}',
+    ]);
+    // A series resonator of 60 ohm at 50 ohm, ten days before the clock of the test.
+    const [swr, resonanceHz, usable, days] = found.values();
+    expect(swr).toBeCloseTo(1.2, 3);
+    expect(resonanceHz).toBeCloseTo(14_175_000, -3);
+    expect([usable, days]).toEqual([1, 10]);
   });
 });
 

@@ -16,6 +16,7 @@ import { keepKnownMethods } from './known-methods.ts';
 import { logAnswers } from './log.ts';
 import { measureRequests } from './metrics.ts';
 import { collectRoutes } from './openapi/collect.ts';
+import { pageRoutes } from './pages/page-routes.ts';
 import { adviceRoutes } from './routes/advice.ts';
 import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
@@ -88,6 +89,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
 
   healthRoutes(app, service);
   problemPageRoutes(app);
+  await app.register(async (scope: App) => pageRoutes(scope, service));
   await app.register(async (behindToken: App) => {
     metricsRoutes(behindToken, service, metricsText);
     clubRoutes(behindToken, service);

@@ -45,7 +45,8 @@ export function sendError(
     .send(Buffer.from(JSON.stringify(body)));
 }
 
-function toProblem(error: unknown): Problem {
+/** Any thrown value as a problem of the catalogue. */
+export function toProblem(error: unknown): Problem {
   if (error instanceof Problem) return error;
   if (error instanceof StoreError) return storeProblem(error);
   if (hasZodFastifySchemaValidationErrors(error)) return validationProblem(error);

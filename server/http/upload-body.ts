@@ -46,7 +46,8 @@ async function filePart(body: Uint8Array<ArrayBuffer>, type: string): Promise<Up
   return { bytes: new Uint8Array(await file.arrayBuffer()), fileName: file.name || null };
 }
 
-async function parseForm(body: Uint8Array<ArrayBuffer>, type: string): Promise<FormData> {
+/** A form from a body that was kept as bytes. Throws `malformed-request`. */
+export async function parseForm(body: Uint8Array<ArrayBuffer>, type: string): Promise<FormData> {
   try {
     return await new Response(body, { headers: { 'content-type': type } }).formData();
   } catch {

@@ -87,6 +87,9 @@ const antennaSchema = z
   })
   .meta({ id: 'Antenna', description: 'One antenna at a site, and what it is judged by.' });
 
+/** An antenna as it is sent. */
+export type AntennaWire = z.output<typeof antennaSchema>;
+
 const site = idOrKeySchema.meta({ description: 'Id or key of the site it stands at.' });
 const createSchema = z.strictObject({
   ...facts,
@@ -102,7 +105,7 @@ const editSchema = z.strictObject({ ...facts, site }).partial();
 const params = z.strictObject({ antenna: idOrKeySchema });
 const tags = ['antennas'];
 
-function toWire(record: AntennaRecord): z.output<typeof antennaSchema> {
+function toWire(record: AntennaRecord): AntennaWire {
   return { ...editableToWire(record), ...toSnakeCase(record.facts) };
 }
 

@@ -1,5 +1,7 @@
+import type { FastifyReply } from 'fastify';
 import { z } from 'zod';
 import type { App } from '../http/app-type.ts';
+import { pagePolicy } from '../pages/layout.ts';
 import { problemListPage, problemPage } from '../pages/problem-page.ts';
 import { Problem, type ProblemSlug, problemKinds } from '../problems.ts';
 import { answers } from '../wire/problem.ts';
@@ -22,7 +24,7 @@ export function problemPageRoutes(app: App): void {
         response: answers({ 200: html('A page.') }, ['malformed-request', 'internal']),
       },
     },
-    async (_request, reply) => reply.type('text/html; charset=utf-8').send(problemListPage()),
+    async (_request, reply) => sendProblemPage(reply, problemListPage()),
   );
 
   app.get(
@@ -46,9 +48,16 @@ export function problemPageRoutes(app: App): void {
     async (request, reply) => {
       const { slug } = request.params;
       if (!isSlug(slug)) throw new Problem('not-found');
-      return reply.type('text/html; charset=utf-8').send(problemPage(slug));
+      return sendProblemPage(reply, problemPage(slug));
     },
   );
+}
+
+function sendProblemPage(reply: FastifyReply, markup: string): FastifyReply {
+  return reply
+    .header('content-security-policy', pagePolicy)
+    .type('text/html; charset=utf-8')
+    .send(markup);
 }
 
 function isSlug(text: string): text is ProblemSlug {

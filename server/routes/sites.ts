@@ -55,6 +55,9 @@ const siteSchema = z
   })
   .meta({ id: 'Site', description: 'A place where antennas stand.' });
 
+/** A site as it is sent. */
+export type SiteWire = z.output<typeof siteSchema>;
+
 const facts = { key: keySchema, name: nameSchema, ...place, note: noteSchema };
 const createSchema = z.strictObject({
   ...facts,
@@ -67,7 +70,7 @@ const editSchema = z.strictObject(facts).partial();
 const params = z.strictObject({ site: idOrKeySchema });
 const tags = ['sites'];
 
-function toWire(record: SiteRecord): z.output<typeof siteSchema> {
+function toWire(record: SiteRecord): SiteWire {
   return { ...editableToWire(record), ...toSnakeCase(record.facts) };
 }
 

@@ -1,4 +1,5 @@
 import { execFileSync } from 'node:child_process';
+import { cpSync } from 'node:fs';
 import { join } from 'node:path';
 import { projectRoot } from '../../server/project-files.ts';
 
@@ -13,4 +14,6 @@ export function setup(): void {
     cwd: root,
     stdio: 'inherit',
   });
+  const assets = 'server/pages/assets';
+  cpSync(join(root, assets), join(root, 'dist', assets), { recursive: true });
 }

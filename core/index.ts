@@ -114,6 +114,14 @@ export {
 } from './network/return-loss.ts';
 export { magnitudeOfSwr, sweepSwr, swrOf } from './network/swr.ts';
 export {
+  automaticBaseline,
+  type BandBaseline,
+  type BaselineResonance,
+  type BaselineValue,
+  chosenBaseline,
+  isGoodBand,
+} from './record/baseline.ts';
+export {
   type BandChange,
   type ChangeVerdict,
   type ComparedAntenna,
@@ -132,6 +140,7 @@ export {
   weathers,
 } from './record/conditions.ts';
 export { type CurveDifference, curveDifference } from './record/curve-difference.ts';
+export { byUrgency, type Due, type DueQuestion, type DueState, dueOf } from './record/due.ts';
 export { bandToFile, type FilingBand } from './record/filing.ts';
 export {
   type BandMeasures,

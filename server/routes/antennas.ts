@@ -74,6 +74,12 @@ const facts = {
     description:
       'From the analyzer to the antenna. Null: not known. Empty: the analyzer sits at the feed point.',
   }),
+  test_interval_days: z
+    .int()
+    .min(1)
+    .max(3660)
+    .nullable()
+    .meta({ description: 'Days from one test to the next; null: as the club has it (/v1/due).' }),
   note: noteSchema,
 };
 
@@ -99,6 +105,7 @@ const createSchema = z.strictObject({
   max_swr: facts.max_swr.default(2),
   reference_ohm: facts.reference_ohm.default(50),
   feed_line: facts.feed_line.default(null),
+  test_interval_days: facts.test_interval_days.default(null),
   note: noteSchema.default(''),
 });
 const editSchema = z.strictObject({ ...facts, site }).partial();
@@ -106,7 +113,8 @@ const params = z.strictObject({ antenna: idOrKeySchema });
 const tags = ['antennas'];
 
 function toWire(record: AntennaRecord): AntennaWire {
-  return { ...editableToWire(record), ...toSnakeCase(record.facts) };
+  const { testIntervalDays = null, ...known } = record.facts;
+  return { ...editableToWire(record), ...toSnakeCase({ ...known, testIntervalDays }) };
 }
 
 const planPlaces = { plan: { pointer: '#/plan' }, licence: { pointer: '#/licence' } };

@@ -23,6 +23,8 @@ export const toldEventKinds = [
   'line_check_added',
   'sweep_added',
   'work_added',
+  'baseline_chosen',
+  'test_interval_set',
 ] as const;
 export type ToldEventKind = (typeof toldEventKinds)[number];
 export type EventKind = ToldEventKind | InnerEventKind;

@@ -66,6 +66,14 @@ export interface Standing {
   readonly entry: HistoryEntry;
 }
 
+/** Which sweeps a member chose as the baseline of an era. */
+export interface ChosenBaseline {
+  /** Id of the work that began the era; empty for the first. */
+  readonly era: string;
+  /** None: automatic again. */
+  readonly sweepIds: readonly string[];
+}
+
 /** The part of the store that keeps what happened to antennas over time. */
 export interface HistoryStore {
   /** By (measuredAt or receivedAt, id). */
@@ -87,6 +95,16 @@ export interface HistoryStore {
   findWork(clubId: string, id: string): Promise<WorkRecord | null>;
   /** Newest first by (doneAt, id). */
   listWork(clubId: string, antennaId: string, page: PageRequest): Promise<Page<WorkRecord>>;
+  /** Takes the place of what was chosen for the era before. */
+  chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): Promise<void>;
+  /** What holds for each era for which anything was ever chosen. */
+  chosenBaselines(clubId: string, antennaId: string): Promise<readonly ChosenBaseline[]>;
+
+  /** How often the club tests antennas that have no interval of their own; null: not at all. */
+  setTestInterval(actor: Actor, days: number | null): Promise<void>;
+  /** Undefined if the club never said. */
+  testInterval(clubId: string): Promise<number | null | undefined>;
+
   /** All work on an antenna, oldest first. */
   allWork(clubId: string, antennaId: string): Promise<readonly WorkRecord[]>;
 }

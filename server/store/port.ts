@@ -80,6 +80,8 @@ export interface AntennaFacts {
   readonly licence: string | null;
   readonly maxSwr: number;
   readonly referenceOhm: number;
+  /** Days from one test to the next; null or left out: as the club has it. */
+  readonly testIntervalDays?: number | null;
   /** Null: not known. Empty: the analyzer is connected at the feed point. */
   readonly feedLine: readonly FeedLineSection[] | null;
   readonly note: string;

@@ -18,6 +18,8 @@ const eventPaths: Readonly<Record<ToldEventKind, (event: ToldEvent) => string>> 
   line_check_added: (event) => ofAntenna(event, `/line-checks/${event.subjectId}`),
   sweep_added: ({ subjectId }) => `/v1/sweeps/${subjectId}`,
   work_added: (event) => ofAntenna(event, `/work/${event.subjectId}`),
+  baseline_chosen: (event) => ofAntenna(event, '/baselines'),
+  test_interval_set: () => '/v1/due',
 };
 
 /** Events of an earlier version do not name the antenna. */

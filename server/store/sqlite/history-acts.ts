@@ -1,4 +1,4 @@
-import type { FreshWork, StoredMeasures } from '../history-store.ts';
+import type { ChosenBaseline, FreshWork, StoredMeasures } from '../history-store.ts';
 import { type Actor, StoreError, type SweepRecord } from '../port.ts';
 import type { Connection } from './connection.ts';
 import { eventLog } from './event-log.ts';
@@ -12,6 +12,8 @@ export interface HistoryActs {
   move(record: SweepRecord): void;
   keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): null;
   addWork(actor: Actor, fresh: FreshWork): WorkRow;
+  chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): null;
+  setTestInterval(actor: Actor, days: number | null): null;
 }
 
 interface Place {
@@ -51,6 +53,12 @@ export function historyActs(connection: Connection): HistoryActs {
   const selectWork = connection.prepare<unknown[], WorkRow>(
     `SELECT ${workColumns} WHERE club_id = ? AND id = ?`,
   );
+  const insertBaseline = connection.prepare(
+    'INSERT INTO baseline (club_id, antenna_id, era, sweeps, at, member_id) VALUES (?, ?, ?, ?, ?, ?)',
+  );
+  const insertInterval = connection.prepare(
+    'INSERT INTO test_interval (club_id, days, at, member_id) VALUES (?, ?, ?, ?)',
+  );
   const insertEvent = eventLog(connection);
 
   const insertRows = (
@@ -81,6 +89,16 @@ export function historyActs(connection: Connection): HistoryActs {
       deleteBands.run(clubId, sweepId);
       insertRows(clubId, sweepId, place, bands);
       deleteUnmeasured.run(clubId, sweepId);
+      return null;
+    },
+    chooseBaseline({ clubId, memberId, at }, antennaId, { era, sweepIds }) {
+      insertBaseline.run(clubId, antennaId, era, JSON.stringify(sweepIds), at, memberId);
+      insertEvent.run(clubId, 'baseline_chosen', antennaId, at, memberId, { antennaId });
+      return null;
+    },
+    setTestInterval({ clubId, memberId, at }, days) {
+      insertInterval.run(clubId, days, at, memberId);
+      insertEvent.run(clubId, 'test_interval_set', clubId, at, memberId);
       return null;
     },
     addWork({ clubId, memberId, at }, { id, antennaId, doneAt, facts }) {

@@ -9,6 +9,11 @@ export interface HistoryEntryRow extends SweepRow {
   readonly measures: string | null;
 }
 
+export interface BaselineRow {
+  readonly era: string;
+  readonly sweeps: string;
+}
+
 /** The history table leads, so that a page costs the same however long the history is. */
 const historyEntries = `SELECT ${sweepFields}, basis, measures FROM history
   CROSS JOIN sweep_current ON sweep_current.club_id = history.club_id
@@ -38,6 +43,9 @@ export const historyListQueries = {
     AND (done_at, id) < (@doneAt, @id) ORDER BY done_at DESC, id DESC LIMIT @limit`,
   allWork: `SELECT ${workColumns} WHERE club_id = @clubId AND antenna_id = @antennaId
     ORDER BY done_at, id`,
+  baselines: `SELECT era, sweeps FROM baseline
+    WHERE club_id = @clubId AND antenna_id = @antennaId ORDER BY seq`,
+  testInterval: `SELECT days FROM test_interval WHERE club_id = @clubId ORDER BY seq DESC LIMIT 1`,
 } as const;
 
 /** Before any time and after any. */
@@ -96,6 +104,15 @@ export class HistoryQueries {
     return this.prepared.work.all({ clubId, antennaId, doneAt, id, limit: limit + 1 });
   }
 
+  /** Everything that was ever chosen, oldest first. */
+  baselines(clubId: string, antennaId: string): BaselineRow[] {
+    return this.prepared.baselines.all({ clubId, antennaId });
+  }
+
+  testInterval(clubId: string): { readonly days: number | null } | undefined {
+    return this.prepared.testInterval.get({ clubId });
+  }
+
   allWork(clubId: string, antennaId: string): WorkRow[] {
     return this.prepared.allWork.all({ clubId, antennaId });
   }
@@ -126,5 +143,7 @@ function prepareAll(connection: Connection) {
     workById: prepare<WorkRow>(`SELECT ${workColumns} WHERE club_id = ? AND id = ?`),
     work: prepare<WorkRow>(lists.work),
     allWork: prepare<WorkRow>(lists.allWork),
+    baselines: prepare<BaselineRow>(lists.baselines),
+    testInterval: prepare<{ readonly days: number | null }>(lists.testInterval),
   };
 }

@@ -1,4 +1,4 @@
-import type { HistoryEntry, WorkRecord } from '../history-store.ts';
+import type { ChosenBaseline, HistoryEntry, WorkRecord } from '../history-store.ts';
 import {
   type CableRecord,
   type Editable,
@@ -63,6 +63,14 @@ export const workColumns = `club_id AS clubId, id, antenna_id AS antennaId, done
 /** A row as the record that callers know. */
 export function toWorkRecord(row: WorkRow): WorkRecord {
   return { ...row, facts: parsed(row.facts) };
+}
+
+/** What holds by now of all that was chosen, given oldest first. */
+export function toChosenBaselines(
+  rows: readonly { readonly era: string; readonly sweeps: string }[],
+): readonly ChosenBaseline[] {
+  const newest = new Map(rows.map(({ era, sweeps }) => [era, sweeps]));
+  return [...newest].map(([era, sweeps]) => ({ era, sweepIds: parsed(sweeps) }));
 }
 
 /** A row with what it has of measures. */

@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import type { LedgerEvent } from '../events.ts';
 import type {
+  ChosenBaseline,
   FreshWork,
   HistoryEntry,
   HistoryFilter,
@@ -45,6 +46,7 @@ import { packPoints, unpackPoints } from './points-codec.ts';
 import type { Reader } from './reader.ts';
 import {
   toCableRecord,
+  toChosenBaselines,
   toEditable,
   toHistoryEntry,
   toLineCheckRecord,
@@ -244,6 +246,23 @@ export class SqliteStore implements Store {
   async listWork(clubId: string, antennaId: string, page: PageRequest): Promise<Page<WorkRecord>> {
     const rows = this.read(({ history }) => history.work(clubId, antennaId, page));
     return pageOf(rows, page, toWorkRecord, ({ doneAt, id }) => [doneAt, id]);
+  }
+
+  async chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): Promise<void> {
+    await this.writer.run('chooseBaseline', actor, antennaId, chosen);
+  }
+
+  async chosenBaselines(clubId: string, antennaId: string): Promise<readonly ChosenBaseline[]> {
+    const rows = this.read(({ history }) => history.baselines(clubId, antennaId));
+    return toChosenBaselines(rows);
+  }
+
+  async setTestInterval(actor: Actor, days: number | null): Promise<void> {
+    await this.writer.run('setTestInterval', actor, days);
+  }
+
+  async testInterval(clubId: string): Promise<number | null | undefined> {
+    return this.read(({ history }) => history.testInterval(clubId))?.days;
   }
 
   async allWork(clubId: string, antennaId: string): Promise<readonly WorkRecord[]> {

@@ -1,5 +1,5 @@
 import { editableEvent } from '../events.ts';
-import type { FreshWork, StoredMeasures } from '../history-store.ts';
+import type { ChosenBaseline, FreshWork, StoredMeasures } from '../history-store.ts';
 import {
   type Actor,
   type CableFacts,
@@ -95,6 +95,8 @@ export interface WriteActs extends PeopleActs {
   };
   keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): null;
   addWork(actor: Actor, fresh: FreshWork): WorkRow;
+  chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): null;
+  setTestInterval(actor: Actor, days: number | null): null;
   /** Takes the lock that every write needs and gives it back: tells whether a write could begin. */
   takeLock(): null;
 }
@@ -281,6 +283,8 @@ export function writeActs(connection: Connection): WriteActs {
     },
     keepMeasures: history.keepMeasures,
     addWork: history.addWork,
+    chooseBaseline: history.chooseBaseline,
+    setTestInterval: history.setTestInterval,
     takeLock() {
       connection.exec('BEGIN IMMEDIATE; ROLLBACK');
       return null;

@@ -28,6 +28,7 @@ import { dashboardRoutes } from './routes/dashboard.ts';
 import { dueRoutes } from './routes/due.ts';
 import { eventRoutes } from './routes/events.ts';
 import { historyRoutes } from './routes/history.ts';
+import { historyChartRoutes } from './routes/history-charts.ts';
 import { lineCheckChartRoutes } from './routes/line-check-charts.ts';
 import { lineCheckRoutes, lineCheckUploadRoutes } from './routes/line-checks.ts';
 import { loadCheckRoutes, loadCheckUploadRoutes } from './routes/load-checks.ts';
@@ -114,6 +115,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     dashboardRoutes(behindToken, service);
     baselineRoutes(behindToken, service);
     dueRoutes(behindToken, service);
+    historyChartRoutes(behindToken, service);
     eventRoutes(behindToken, service);
     compareRoutes(behindToken, service);
     planRoutes(behindToken);

@@ -43,6 +43,7 @@ import { sweepReportRoutes } from './routes/sweep-reports.ts';
 import { sweepRoutes } from './routes/sweeps.ts';
 import { tokenRoutes } from './routes/tokens.ts';
 import { uploadRoutes } from './routes/upload.ts';
+import { webhookRoutes } from './routes/webhooks.ts';
 import { workRoutes } from './routes/work.ts';
 import type { Service } from './service.ts';
 
@@ -117,6 +118,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     dueRoutes(behindToken, service);
     historyChartRoutes(behindToken, service);
     eventRoutes(behindToken, service);
+    webhookRoutes(behindToken, service);
     compareRoutes(behindToken, service);
     planRoutes(behindToken);
     // In a scope of their own, since they take any body.

@@ -26,6 +26,7 @@ export const configSchema = z.object({
   DISK_RESERVE_BYTES: setting(wholeNumber(0, 2 ** 40).default(64 * 1024 * 1024)),
   BACKUP_EVERY_HOURS: setting(wholeNumber(0, 24 * 366).default(24)),
   BACKUP_KEEP: setting(wholeNumber(1, 1000).default(7)),
+  PRIVATE_WEBHOOKS: setting(z.enum(['on', 'off']).default('off')),
   SHUTDOWN_SECONDS: setting(wholeNumber(1, 60).default(8)),
 });
 
@@ -45,6 +46,8 @@ export interface Config {
   /** 0: none are made. */
   readonly backupEveryHours: number;
   readonly backupKeep: number;
+  /** Whether webhooks may go to private addresses, and by http. */
+  readonly privateWebhooks: boolean;
   readonly shutdownSeconds: number;
 }
 
@@ -80,6 +83,7 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     diskReserveBytes: settings.DISK_RESERVE_BYTES,
     backupEveryHours: settings.BACKUP_EVERY_HOURS,
     backupKeep: settings.BACKUP_KEEP,
+    privateWebhooks: settings.PRIVATE_WEBHOOKS === 'on',
     shutdownSeconds: settings.SHUTDOWN_SECONDS,
   });
 }

@@ -19,6 +19,7 @@ import { projectRoot } from './project-files.ts';
 import type { Service } from './service.ts';
 import { ledgerPath } from './store/ledger-path.ts';
 import { openSqliteStore } from './store/sqlite/open.ts';
+import { sendWebhooks } from './webhooks/start.ts';
 import { firstSteps } from './welcome.ts';
 
 async function main(): Promise<void> {
@@ -29,6 +30,7 @@ async function main(): Promise<void> {
   const backups = backupsOf(opened, log, config);
   const service = backups === null ? opened : { ...opened, lastBackupAt: backups.lastGoodAt };
   const app = await buildApp({ service, log, document: readDocument() });
+  sendWebhooks(app, service);
   closeOnSignal(app, service, config, backups, pool);
   await firstRun(service, config);
   await app.listen({ host: config.host, port: config.port });
@@ -50,6 +52,7 @@ async function openService(config: Config, { ingest }: IngestPool): Promise<Serv
     newId: makeIdSource(Date.now, randomBytes),
     publicUrl: config.publicUrl,
     ingest,
+    privateWebhooks: config.privateWebhooks,
     limits: { ...defaultReadLimits, maxBytes: config.maxUploadBytes, maxPoints: config.maxPoints },
   };
 }

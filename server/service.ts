@@ -13,6 +13,8 @@ export interface Service {
   readonly limits: ReadLimits;
   /** Reads and analyses a file on its way in. */
   readonly ingest: Ingest;
+  /** Whether webhooks may go to private addresses, and by http; not if left out. */
+  readonly privateWebhooks?: boolean;
   /** How often an open stream of events is shown to live; 15 seconds if left out. */
   readonly heartbeatMs?: number;
   /** When the newest good backup was begun, ms since 1970; null if there is none or none are made. */

@@ -37,7 +37,7 @@ export function eventRoutes(app: App, service: Service): void {
         operationId: 'streamEvents',
         tags: ['events'],
         summary: 'What happens in the club, as it happens',
-        description: `Server-sent events. The kinds are ${toldEventKinds.map((kind) => `\`${kind}\``).join(', ')}; the data of each is an Event as in the schema. With \`Last-Event-ID\` what was missed comes first. Where that is more than ${mostReplayed} events, or the id is not known here, one \`reset\` comes instead: read anew what you show. The stream ends when the token is revoked and when the service stops.`,
+        description: `Server-sent events. The kinds are ${toldEventKinds.map((kind) => `\`${kind}\``).join(', ')}; the data of each is JSON: \`id\`, \`kind\`, \`at\`, \`subject_id\`, \`antenna_id\` (or null), \`member_id\` (null: the service itself) and \`url\`. With \`Last-Event-ID\` what was missed comes first. Where that is more than ${mostReplayed} events, or the id is not known here, one \`reset\` comes instead: read anew what you show. The stream ends when the token is revoked and when the service stops.`,
         querystring: noQuery,
         headers: z.looseObject({
           'last-event-id': z

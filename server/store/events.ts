@@ -1,12 +1,15 @@
 import type { EditableKind } from './port.ts';
 
-/** What happens to people and their tokens is written down, but told to no listener. */
+/** What happens to people, their tokens and webhooks is written down, but told to no listener. */
 type InnerEventKind =
   | 'member_added'
   | 'member_edited'
   | 'member_erased'
   | 'token_added'
-  | 'token_revoked';
+  | 'token_revoked'
+  | 'webhook_added'
+  | 'webhook_edited'
+  | 'webhook_removed';
 
 /** What listeners are told of. A new kind is a new line here and one in `eventPaths`. */
 export const toldEventKinds = [
@@ -67,8 +70,8 @@ export function editableEvent(kind: EditableKind, act: 'added' | 'edited'): Even
 export interface EventStore {
   /** The number of the newest event, of one club or of all; 0 if there is none. */
   newestSeq(clubId?: string): Promise<number>;
-  /** Events after that number, of one club or (null) of all, oldest first. */
-  listEvents(clubId: string | null, afterSeq: number, limit: number): Promise<LedgerEvent[]>;
+  /** The club's events after that number, oldest first. */
+  listEvents(clubId: string, afterSeq: number, limit: number): Promise<LedgerEvent[]>;
   /** Calls back after each write of this process; returns what ends that. */
   onWrite(listener: () => void): () => void;
 }

@@ -14,6 +14,7 @@ import type { Conditions } from '../../core/record/conditions.ts';
 import type { EventStore } from './events.ts';
 import type { HistoryStore, StoredMeasures } from './history-store.ts';
 import type { KnownToken, PeopleStore } from './people.ts';
+import type { WebhookStore } from './webhooks.ts';
 
 /** Where and by whom a change was made: written with it. */
 export interface Actor {
@@ -309,6 +310,9 @@ export interface TokenRecord {
 export interface Store extends HistoryStore, EventStore {
   /** Members, their tokens, and the club itself. */
   readonly people: PeopleStore;
+
+  /** Where events are sent. */
+  readonly webhooks: WebhookStore;
 
   /** Adds the club with its first member, a steward, and that member's token, in one act. */
   addClub(

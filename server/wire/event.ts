@@ -30,7 +30,7 @@ function ofAntenna({ details }: ToldEvent, below: string): string {
 
 export const eventKindSchema = z.enum(toldEventKinds);
 
-export const eventSchema = z
+const eventSchema = z
   .object({
     id: z
       .string()

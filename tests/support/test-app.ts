@@ -36,6 +36,7 @@ interface TestAppOptions {
   /** Puts something between the routes and the store, to make it fail. */
   readonly around?: (store: Store) => Store;
   readonly heartbeatMs?: number;
+  readonly privateWebhooks?: boolean;
   readonly logTo?: DestinationStream;
 }
 
@@ -53,6 +54,7 @@ export async function makeTestApp(options: TestAppOptions = {}): Promise<TestApp
     publicUrl: testUrl,
     ingest: async (incoming) => ingest(incoming),
     limits: { ...defaultReadLimits, ...options.limits },
+    privateWebhooks: options.privateWebhooks ?? false,
     ...(options.heartbeatMs === undefined ? {} : { heartbeatMs: options.heartbeatMs }),
   };
   const log = options.logTo === undefined ? makeLog('silent') : makeLog('trace', options.logTo);

@@ -16,6 +16,7 @@ import {
   type SweepRow,
   sweepColumns,
 } from './rows.ts';
+import { WebhookQueries, webhookListQueries } from './sqlite-webhooks.ts';
 
 export interface FileRow {
   readonly sha256: Buffer;
@@ -50,6 +51,7 @@ export const listQueries = {
     ORDER BY sort_at DESC, id DESC LIMIT @limit`,
   ...historyListQueries,
   ...eventListQueries,
+  ...webhookListQueries,
 } as const;
 
 /** Later than any time, so that a first page begins at the newest. */
@@ -60,6 +62,7 @@ export class Reader {
   readonly people: PeopleReader;
   readonly history: HistoryQueries;
   readonly events: EventQueries;
+  readonly webhooks: WebhookQueries;
   private readonly connection: Connection;
   private readonly prepared;
 
@@ -69,6 +72,7 @@ export class Reader {
     this.prepared = prepareAll(connection);
     this.history = new HistoryQueries(connection);
     this.events = new EventQueries(connection);
+    this.webhooks = new WebhookQueries(connection);
   }
 
   clubs(): ClubRecord[] {

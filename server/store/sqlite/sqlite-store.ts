@@ -55,11 +55,13 @@ import {
   toWorkRecord,
 } from './rows.ts';
 import { SqlitePeople } from './sqlite-people.ts';
+import { SqliteWebhooks } from './sqlite-webhooks.ts';
 import type { Writer } from './writer.ts';
 
 /** The Store port over one SQLite file: one writer in its thread, one reader here. */
 export class SqliteStore implements Store {
   readonly people: SqlitePeople;
+  readonly webhooks: SqliteWebhooks;
   private readonly path: string;
   private readonly reader: Reader;
   private readonly writer: Writer;
@@ -72,6 +74,7 @@ export class SqliteStore implements Store {
     this.reader = reader;
     this.writer = writer;
     this.reserveBytes = reserveBytes;
+    this.webhooks = new SqliteWebhooks((ask) => this.read((all) => ask(all.webhooks)), writer);
     this.people = new SqlitePeople((ask) => this.read((all) => ask(all.people)), writer);
   }
 

@@ -15,7 +15,7 @@ import type { Packed } from './compression.ts';
 import type { Connection } from './connection.ts';
 import { eventLog } from './event-log.ts';
 import { historyActs } from './history-acts.ts';
-import { type PeopleActs, peopleActs } from './people-acts.ts';
+import { type PeopleActs, peopleActs, type WriteEvent } from './people-acts.ts';
 import {
   type CableRow,
   cableColumns,
@@ -29,6 +29,7 @@ import {
   sweepColumns,
   type WorkRow,
 } from './rows.ts';
+import { type WebhookActs, webhookActs } from './webhook-acts.ts';
 
 /** A sweep packed for the writer. */
 export interface PackedSweep {
@@ -79,7 +80,7 @@ export interface EditedResource extends FreshResource {
 }
 
 /** What the writer does, each whole or not at all. Arguments and results pass between threads. */
-export interface WriteActs extends PeopleActs {
+export interface WriteActs extends PeopleActs, WebhookActs {
   addClub(club: ClubRecord, token: TokenRecord, secretSha256: Uint8Array): null;
   addResource(fresh: FreshResource): ResourceRow;
   editResource(edited: EditedResource): ResourceRow;
@@ -168,6 +169,8 @@ export function writeActs(connection: Connection): WriteActs {
      WHERE club_id = ? AND antenna_id = ? AND file_sha256 = ? AND tested = ?`,
   );
 
+  const writeEvent: WriteEvent = ({ clubId, at, memberId }, kind, id) =>
+    insertEvent.run(clubId, kind, id, at, memberId);
   const history = historyActs(connection);
   const keepRevision = (kind: EditableKind, actor: Actor, row: ResourceRow) => {
     const { at, memberId } = actor;
@@ -176,9 +179,8 @@ export function writeActs(connection: Connection): WriteActs {
   };
 
   return {
-    ...peopleActs(connection, ({ clubId, at, memberId }, kind, id) =>
-      insertEvent.run(clubId, kind, id, at, memberId),
-    ),
+    ...peopleActs(connection, writeEvent),
+    ...webhookActs(connection, writeEvent),
     addClub(club, token, secretSha256) {
       const { id, key, name, invented, createdAt } = club;
       insertClub.run(id, key, name, invented ? 1 : 0, createdAt, createdAt);

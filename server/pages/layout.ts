@@ -60,7 +60,10 @@ ${body}
 `.markup;
 }
 
-const places = [['/', texts.nav.board]] as const;
+const places = [
+  ['/', texts.nav.board],
+  ['/upload', texts.nav.upload],
+] as const;
 
 function navigation({ clubName }: Viewer, path: string): Html {
   const links = places.map(

@@ -14,6 +14,7 @@ import { Refusal } from './member-api.ts';
 import { refusalPage } from './refusal-page.ts';
 import { signInRoutes } from './sign-in-routes.ts';
 import { sweepPageRoutes } from './sweep-page-routes.ts';
+import { uploadPageRoutes } from './upload-page-routes.ts';
 
 /**
  * The pages for people, in a scope of their own. None needs a right itself: what it shows it asks
@@ -45,6 +46,7 @@ export async function pageRoutes(scope: App, service: Service): Promise<void> {
   boardRoutes(scope);
   antennaPageRoutes(scope);
   sweepPageRoutes(scope);
+  uploadPageRoutes(scope, service);
 }
 
 function showRefusal(

@@ -42,6 +42,7 @@ import { sweepPointRoutes } from './routes/sweep-points.ts';
 import { sweepReportRoutes } from './routes/sweep-reports.ts';
 import { sweepRoutes } from './routes/sweeps.ts';
 import { tokenRoutes } from './routes/tokens.ts';
+import { trackRoutes } from './routes/tracks.ts';
 import { uploadRoutes } from './routes/upload.ts';
 import { webhookRoutes } from './routes/webhooks.ts';
 import { workRoutes } from './routes/work.ts';
@@ -113,6 +114,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     adviceRoutes(behindToken, service);
     workRoutes(behindToken, service);
     historyRoutes(behindToken, service);
+    trackRoutes(behindToken, service);
     dashboardRoutes(behindToken, service);
     baselineRoutes(behindToken, service);
     dueRoutes(behindToken, service);

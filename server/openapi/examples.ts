@@ -120,6 +120,7 @@ function calls({
     },
     listDueTests: { url: '/v1/due' },
     setTestInterval: { method: 'PATCH', url: '/v1/due', body: { interval_days: 365 } },
+    followResonances: { url: '/v1/antennas/hilltop-40m/tracks?band=40m' },
     getAdvice: { url: `/v1/sweeps/${throughLine}/advice?power_w=50` },
     getUsable: { url: `/v1/sweeps/${sweep}/usable` },
     getSweepPoints: { url: `/v1/sweeps/${sweep}/points` },

@@ -50,11 +50,21 @@ async function compare(): Promise<readonly Figure[]> {
       small,
       ({ filled }) => `/v1/antennas/${filled.antennaKey}/sweeps?limit=50`,
     );
+    const historyOf = (query: string) =>
+      readsInTurns(
+        large,
+        small,
+        ({ filled }) => `/v1/antennas/${filled.antennaKey}/history?limit=20${query}`,
+      );
+    const history = await historyOf('');
+    const ofBand = await historyOf('&band=20m');
     const uploads = await uploadsInTurns(large, small);
     const bytes = statSync(join(large.folder, 'ledger.sqlite')).size;
     const at = `${many.sweeps} sweeps in ${many.antennas} antennas / ${few.sweeps}`;
     return [
       ratioFigure('sweep_list_growth', list, 'report', at),
+      ratioFigure('history_growth', history, 'report', at),
+      ratioFigure('history_of_band_growth', ofBand, 'report', at),
       ratioFigure('upload_growth', uploads, '>= 0.8', at),
       ratioFigure('start_ms', { large: large.startMs, small: small.startMs }, '<= 1.5', at),
       {

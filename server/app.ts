@@ -24,6 +24,7 @@ import { baselineRoutes } from './routes/baselines.ts';
 import { cableRoutes } from './routes/cables.ts';
 import { clubRoutes } from './routes/club.ts';
 import { compareRoutes } from './routes/compare.ts';
+import { compareChartRoutes } from './routes/compare-charts.ts';
 import { dashboardRoutes } from './routes/dashboard.ts';
 import { dueRoutes } from './routes/due.ts';
 import { eventRoutes } from './routes/events.ts';
@@ -122,6 +123,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     eventRoutes(behindToken, service);
     webhookRoutes(behindToken, service);
     compareRoutes(behindToken, service);
+    compareChartRoutes(behindToken, service);
     planRoutes(behindToken);
     // In a scope of their own, since they take any body.
     await behindToken.register(async (scope: App) => {

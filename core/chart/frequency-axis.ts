@@ -16,9 +16,12 @@ export interface FrequencyAxis {
 const roomAroundOne = 0.005;
 
 /** The axis over all that was swept, from edge to edge. */
-export function frequencyAxis({ frequencyHz }: Pick<Sweep, 'frequencyHz'>, { plot }: Frame) {
-  const first = frequencyHz[0];
-  const last = frequencyHz[frequencyHz.length - 1];
+export function frequencyAxis({ frequencyHz }: Pick<Sweep, 'frequencyHz'>, frame: Frame) {
+  return frequencyAxisOver(frequencyHz[0], frequencyHz[frequencyHz.length - 1], frame);
+}
+
+/** The axis from one frequency to another. */
+export function frequencyAxisOver(first: number, last: number, { plot }: Frame) {
   const room = first === last ? Math.max(1, first * roomAroundOne) : 0;
   const lowHz = first - room;
   const highHz = last + room;

@@ -1,11 +1,10 @@
 import type { UsableSpan } from '../analysis/summary.ts';
 import type { UsableReport } from '../bands/usable-report.ts';
-import { reflectionMagnitude, type Sweep } from '../sweep.ts';
 import { bandStripSvg, outsideBandsSvg, stripRowPx, stripRows } from './band-strip.ts';
 import { around, type Box, type Point } from './boxes.ts';
 import type { ChartStyle } from './chart-style.ts';
 import { Envelope } from './envelope.ts';
-import { borderSvg, type Frame, frameOf, headingSvg, yAxisSvg } from './frame.ts';
+import { borderSvg, type Frame, frameOf, headingSvg } from './frame.ts';
 import { type FrequencyAxis, frequencyAxis, frequencyAxisSvg } from './frequency-axis.ts';
 import { labelsSvg } from './label-svg.ts';
 import { type Label, placeLabels } from './labels.ts';
@@ -14,15 +13,10 @@ import { markPx, svgDocument, svgGroup, svgLine, svgMark, svgPath, svgText } fro
 import type { SweepChart } from './sweep-chart.ts';
 import { type SweepMark, sweepMarks } from './sweep-marks.ts';
 import { sweepWords } from './sweep-words.ts';
-import { swrOrdinate, swrTickValues } from './swr-ordinate.ts';
+import { pointsSvg, type SwrAxis, swrAxis, swrAxisSvg, swrLine } from './swr-axis.ts';
 import { textWidth } from './text-width.ts';
 import { type PixelLine, thinLine } from './thin-line.ts';
 
-/** The SWR axis, pixels from the top of the chart. */
-type SwrAxis = (swr: number) => number;
-
-/** Fewer points than this are shown as dots: there the line between them is the chart's own. */
-const fewPoints = 60;
 const usableBarPx = 5;
 /** Where along its line the limit may be named, the best first. */
 const nameShares = [1, 0, 0.75, 0.25, 0.5];
@@ -36,26 +30,21 @@ export function swrChart(chart: SweepChart, style: ChartStyle): string {
   const { heading, sweep, summary, report } = chart;
   const above = stripRows * stripRowPx + 6;
   const frame = frameOf(style, { left: 52, right: 14, above, below: 48 });
-  const { plot, palette, numbers, sizePx } = frame;
+  const { palette, numbers } = frame;
   const axis = frequencyAxis(sweep, frame);
-  const height = plot.bottom - plot.top;
-  const y: SwrAxis = (swr) => plot.bottom - swrOrdinate(swr) * height;
-  const ticks = swrTickValues(height, sizePx * 1.25).map((swr) => ({
-    at: swr,
-    text: swr === Number.POSITIVE_INFINITY ? '∞' : numbers.significant(swr, 2),
-  }));
+  const y = swrAxis(frame);
   const against = `against ${numbers.significant(summary.referenceOhm, 3)} Ω`;
   const line = swrLine(sweep, axis, frame);
   const body = [
     outsideBandsSvg(report.bands, axis, frame),
-    yAxisSvg(frame, ticks, y, `SWR ${against}`),
+    swrAxisSvg(y, summary.referenceOhm, frame),
     frequencyAxisSvg(axis, frame),
     borderSvg(frame),
     bandStripSvg(report.bands, axis, frame),
     usableBarsSvg(chart, axis, frame),
     limitSvg(report.maxSwr, summary.spans, axis, y, frame),
     svgPath('swr', pathText(thinLine(line)), { stroke: palette.first, width: 2.4 }),
-    dotsSvg(line, frame),
+    pointsSvg(line, palette.first),
     marksSvg(chart, line, axis, y, frame),
     headingSvg(heading, frame),
   ];
@@ -66,21 +55,6 @@ export function swrChart(chart: SweepChart, style: ChartStyle): string {
     description: sweepWords(chart, `SWR ${against}`, style.numbers),
     body: body.join(''),
   });
-}
-
-/** The points in pixels; a total reflection lies at the head of the plot. */
-function swrLine(sweep: Sweep, { x }: FrequencyAxis, { plot }: Frame): PixelLine {
-  const height = plot.bottom - plot.top;
-  const y = reflectionMagnitude(sweep).map(
-    (magnitude) => plot.bottom - Math.min(1, magnitude) * height,
-  );
-  return { x: sweep.frequencyHz.map(x), y };
-}
-
-function dotsSvg({ x, y }: PixelLine, { palette }: Frame): string {
-  if (x.length > fewPoints) return '';
-  const dots = [...x].map((at, i) => `M${px(at)} ${px(y[i])}h0`);
-  return `<path class="points" d="${dots.join('')}" stroke="${palette.first}" stroke-width="4.5" stroke-linecap="round"/>`;
 }
 
 /** Along the foot of the plot: permitted by the plan and within the limit. */

@@ -8,6 +8,7 @@ import { buildApp } from './app.ts';
 import { type BackupSchedule, scheduleBackups } from './backup-schedule.ts';
 import { type Config, ConfigError, httpUrl, readConfig } from './config.ts';
 import { demoClub } from './demo/demo-club.ts';
+import { watchOverdue } from './events/overdue.ts';
 import { addFirstClub } from './first-run.ts';
 import { fillHistory } from './history/measured-rows.ts';
 import type { App } from './http/app-type.ts';
@@ -31,6 +32,7 @@ async function main(): Promise<void> {
   const service = backups === null ? opened : { ...opened, lastBackupAt: backups.lastGoodAt };
   const app = await buildApp({ service, log, document: readDocument() });
   sendWebhooks(app, service);
+  watchOverdue(app, service);
   closeOnSignal(app, service, config, backups, pool);
   await firstRun(service, config);
   await app.listen({ host: config.host, port: config.port });

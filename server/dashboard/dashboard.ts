@@ -1,4 +1,7 @@
+import { type BaselineChange, changeSince } from '../../core/record/baseline-change.ts';
 import type { BandMeasures } from '../../core/record/measures.ts';
+import { baselinesOfEras } from '../history/baselines.ts';
+import { dueTests } from '../history/due-tests.ts';
 import { measuredEntries } from '../history/measured-rows.ts';
 import type { Service } from '../service.ts';
 import type { HistoryEntry, Standing } from '../store/history-store.ts';
@@ -21,6 +24,8 @@ export interface BandStanding {
   /** Null: no good sweep of the band is among the newest. */
   readonly sweep: SweepRecord | null;
   readonly measures: BandMeasures | null;
+  /** The era of the sweep. */
+  readonly eraIndex: number | null;
 }
 
 export interface AntennaStanding {
@@ -32,17 +37,32 @@ export interface AntennaStanding {
   readonly bands: readonly BandStanding[];
 }
 
-export interface SiteStanding {
+/** An antenna with what else a member wants to see at a glance. */
+export interface AntennaOverview extends AntennaStanding {
+  /** Null: it is not tested at an interval. */
+  readonly dueAtMs: number | null;
+  /** By band, against the baseline of the sweep's era; none where the sweep is part of that. */
+  readonly changes: ReadonlyMap<string, BaselineChange>;
+}
+
+export interface SiteOverview {
   readonly site: SiteRecord;
-  readonly antennas: readonly AntennaStanding[];
+  readonly antennas: readonly AntennaOverview[];
 }
 
 /** How everything of a club stands: sites and antennas by key. */
 export async function dashboardOf(
   service: Service,
   clubId: string,
-): Promise<readonly SiteStanding[]> {
-  const antennas = await antennaStandings(service, clubId);
+): Promise<readonly SiteOverview[]> {
+  const due = new Map(
+    (await dueTests(service, clubId)).map((test) => [test.antenna.id, test.due.dueAtMs]),
+  );
+  const antennas: AntennaOverview[] = [];
+  for (const standing of await antennaStandings(service, clubId)) {
+    const dueAtMs = due.get(standing.antenna.id) ?? null;
+    antennas.push({ ...standing, dueAtMs, changes: await changesOf(service, standing) });
+  }
   const sites = await everyOne(service, 'sites', clubId);
   return sites.map((site) => ({
     site,
@@ -83,7 +103,7 @@ async function antennaStanding(
     const row = measured.find(({ record }) => record.id === sweep?.id)?.row;
     const measures = row?.measures.bands.find((candidate) => candidate.band === band) ?? null;
     const state = bandState(measures?.sweptFraction ?? 0, measures?.usableFraction ?? 0);
-    return { band, state, sweep, measures };
+    return { band, state, sweep, measures, eraIndex: row?.eraIndex ?? null };
   });
   const newest = standings.find(({ band }) => band === null);
   return {
@@ -92,6 +112,23 @@ async function antennaStanding(
     latestSweep: newest?.entry.record ?? null,
     bands,
   };
+}
+
+async function changesOf(
+  service: Service,
+  { antenna, bands }: AntennaStanding,
+): Promise<ReadonlyMap<string, BaselineChange>> {
+  const eras = new Set(bands.flatMap(({ eraIndex }) => eraIndex ?? []));
+  const baselines = await baselinesOfEras(service, antenna, eras);
+  const changes = new Map<string, BaselineChange>();
+  for (const { band, sweep, measures, eraIndex } of bands) {
+    const ofEra = baselines.find((baseline) => baseline.eraIndex === eraIndex);
+    const baseline = ofEra?.bands.find((candidate) => candidate.band === band);
+    if (sweep === null || measures === null || baseline === undefined) continue;
+    if (baseline.sweepIds.includes(sweep.id)) continue;
+    changes.set(band, changeSince(baseline, measures));
+  }
+  return changes;
 }
 
 const pageSize = 500;

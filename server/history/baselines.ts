@@ -6,7 +6,7 @@ import {
 import type { HistoryRow } from '../../core/record/measures.ts';
 import { startsEra } from '../../core/record/work.ts';
 import type { Service } from '../service.ts';
-import type { WorkRecord } from '../store/history-store.ts';
+import type { ChosenBaseline, WorkRecord } from '../store/history-store.ts';
 import type { AntennaRecord } from '../store/port.ts';
 import { measuredRow, measuredRows } from './measured-rows.ts';
 
@@ -38,15 +38,42 @@ export async function baselinesOf(
   const eras = await erasOf(service, antenna);
   const chosen = await service.store.chosenBaselines(antenna.clubId, antenna.id);
   const baselines: EraBaseline[] = [];
-  for (const [eraIndex, begunBy] of eras.entries()) {
-    const own = chosen.find(({ era }) => era === (begunBy?.id ?? ''))?.sweepIds ?? [];
-    const bands =
-      own.length > 0
-        ? chosenBaseline(await rowsOf(service, antenna, own))
-        : automaticBaseline(await firstRows(service, antenna, begunBy, eras[eraIndex + 1] ?? null));
-    baselines.push({ eraIndex, begunBy, bands });
+  for (const eraIndex of eras.keys()) {
+    baselines.push(await eraBaseline(service, antenna, eras, chosen, eraIndex));
   }
   return baselines;
+}
+
+/** The baseline of those eras of an antenna that are asked for. */
+export async function baselinesOfEras(
+  service: Service,
+  antenna: AntennaRecord,
+  eraIndexes: ReadonlySet<number>,
+): Promise<readonly EraBaseline[]> {
+  if (eraIndexes.size === 0) return [];
+  const eras = await erasOf(service, antenna);
+  const chosen = await service.store.chosenBaselines(antenna.clubId, antenna.id);
+  const baselines: EraBaseline[] = [];
+  for (const eraIndex of eraIndexes) {
+    baselines.push(await eraBaseline(service, antenna, eras, chosen, eraIndex));
+  }
+  return baselines;
+}
+
+async function eraBaseline(
+  service: Service,
+  antenna: AntennaRecord,
+  eras: readonly (WorkRecord | null)[],
+  chosen: readonly ChosenBaseline[],
+  eraIndex: number,
+): Promise<EraBaseline> {
+  const begunBy = eras[eraIndex] ?? null;
+  const own = chosen.find(({ era }) => era === (begunBy?.id ?? ''))?.sweepIds ?? [];
+  const bands =
+    own.length > 0
+      ? chosenBaseline(await rowsOf(service, antenna, own))
+      : automaticBaseline(await firstRows(service, antenna, begunBy, eras[eraIndex + 1] ?? null));
+  return { eraIndex, begunBy, bands };
 }
 
 async function rowsOf(

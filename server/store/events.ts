@@ -28,6 +28,7 @@ export const toldEventKinds = [
   'work_added',
   'baseline_chosen',
   'test_interval_set',
+  'test_overdue',
 ] as const;
 export type ToldEventKind = (typeof toldEventKinds)[number];
 export type EventKind = ToldEventKind | InnerEventKind;
@@ -46,6 +47,7 @@ export interface LedgerEvent {
   readonly kind: EventKind;
   readonly subjectId: string;
   readonly at: string;
+  /** Empty: the service itself. */
   readonly memberId: string;
   readonly details: EventDetails;
 }
@@ -72,6 +74,8 @@ export interface EventStore {
   newestSeq(clubId?: string): Promise<number>;
   /** The club's events after that number, oldest first. */
   listEvents(clubId: string, afterSeq: number, limit: number): Promise<LedgerEvent[]>;
+  /** Tells once that the test of an antenna that was due then is overdue. */
+  noteOverdue(clubId: string, antennaId: string, dueAt: string, at: string): Promise<void>;
   /** Calls back after each write of this process; returns what ends that. */
   onWrite(listener: () => void): () => void;
 }

@@ -1,7 +1,9 @@
 import { z } from 'zod';
-import type { AntennaStanding, BandStanding, SiteStanding } from '../dashboard/dashboard.ts';
+import type { BaselineChange } from '../../core/record/baseline-change.ts';
+import type { AntennaStanding, BandStanding, SiteOverview } from '../dashboard/dashboard.ts';
 import { standingStates } from '../dashboard/states.ts';
 import type { SweepRecord } from '../store/port.ts';
+import { toSnakeCase } from './case.ts';
 import { frequencySchema, idSchema, inventedSchema, timeSchema } from './common.ts';
 import { halfWidth } from './history.ts';
 import { rounded } from './rounding.ts';
@@ -38,14 +40,43 @@ const antennaFields = {
   state: stateSchema,
 };
 
+const difference = z
+  .object({ value: z.number(), u95: halfWidth })
+  .nullable()
+  .meta({ description: 'Positive for more than in the baseline; null where either lacks it.' });
+
+const changeSchema = z
+  .object({
+    verdict: z.enum(['same', 'changed', 'unknown']).meta({
+      description:
+        '`changed`: a difference is beyond its half-width. `unknown`: no half-width is known.',
+    }),
+    minimum_swr: difference,
+    resonance_hz: difference,
+    usable_fraction: z.number(),
+  })
+  .meta({
+    id: 'BaselineChange',
+    description: 'How a sweep differs from the baseline of its era.',
+  });
+
 const bandSchema = z
-  .object({ ...bandFields, sweep: sweepSchema.nullable() })
+  .object({
+    ...bandFields,
+    change: changeSchema
+      .nullable()
+      .meta({ description: 'Null: there is no baseline, or the sweep is part of it.' }),
+    sweep: sweepSchema.nullable(),
+  })
   .meta({ id: 'DashboardBand' });
 const antennaSchema = z
   .object({
     id: idSchema,
     ...antennaFields,
     latest_sweep: sweepSchema.nullable().meta({ description: 'The newest, good or not.' }),
+    due_at: timeSchema
+      .nullable()
+      .meta({ description: 'When it is to be tested again; null: it has no interval.' }),
     bands: z.array(bandSchema),
     url: z.url(),
     history_url: z.url(),
@@ -89,7 +120,7 @@ export const publicDashboardSchema = z
 
 /** A dashboard as members are sent it, with URLs under this one. */
 export function dashboardToWire(
-  sites: readonly SiteStanding[],
+  sites: readonly SiteOverview[],
   publicUrl: string,
 ): z.output<typeof dashboardSchema> {
   return {
@@ -103,8 +134,10 @@ export function dashboardToWire(
           id,
           ...antennaToWire(standing),
           latest_sweep: sweepToWire(standing.latestSweep, publicUrl),
+          due_at: standing.dueAtMs === null ? null : new Date(standing.dueAtMs).toISOString(),
           bands: standing.bands.map((band) => ({
             ...bandToWire(band),
+            change: changeToWire(standing.changes.get(band.band)),
             sweep: sweepToWire(band.sweep, publicUrl),
           })),
           url: `${publicUrl}/v1/antennas/${id}`,
@@ -119,7 +152,7 @@ export function dashboardToWire(
 /** A dashboard as anybody is sent it: days for times, no ids, no coordinates, no notes. */
 export function publicDashboardToWire(
   club: { readonly name: string; readonly invented: boolean },
-  sites: readonly SiteStanding[],
+  sites: readonly SiteOverview[],
 ): z.output<typeof publicDashboardSchema> {
   return {
     club: club.name,
@@ -156,6 +189,10 @@ function bandToWire({ band, state, measures }: BandStanding) {
     minimum_swr_hz: minimum?.frequencyHz ?? null,
     resonances_hz: measures?.resonances.map(({ frequencyHz }) => frequencyHz) ?? [],
   });
+}
+
+function changeToWire(change: BaselineChange | undefined) {
+  return change === undefined ? null : rounded(toSnakeCase(change));
 }
 
 function sweepToWire(sweep: SweepRecord | null, publicUrl: string) {

@@ -75,6 +75,32 @@ describe('an antenna on the dashboard', () => {
     expect((await antenna()).state).toBe('partly_usable');
   });
 
+  it('is held against the first good sweep of its era', async () => {
+    // 60 ohm before, 75 ohm now: an SWR of 1.2, then 1.5.
+    const file = resonatorFile({ ...whole, resistanceOhm: 75, slopeOhmPerHz: 1e-4, comment: '75' });
+    await upload(club, file, measuredOn('2026-03-02').replace('T10', 'T11'));
+    const work = { kind: 'element_replaced', done_at: '2026-02-01T10:00:00Z' };
+    const url = '/v1/antennas/field-20m/work';
+    expect((await club.call({ method: 'POST', url, payload: work })).statusCode).toBe(201);
+    // All three sweeps since then make the baseline.
+    expect((await antenna()).bands[0].change).toBeNull();
+    const again = resonatorFile({ ...whole, resistanceOhm: 75, slopeOhmPerHz: 1e-4, comment: '2' });
+    await upload(club, again, measuredOn('2026-03-02').replace('T10', 'T12'));
+    const third = resonatorFile({ ...whole, resistanceOhm: 90, slopeOhmPerHz: 1e-4, comment: '3' });
+    await upload(club, third, measuredOn('2026-03-02').replace('T10', 'T13'));
+    const [{ change }] = (await antenna()).bands;
+    expect(change.minimum_swr.value).toBeCloseTo(1.8 - 1.2, 2);
+    expect(Math.abs(change.resonance_hz.value)).toBeLessThan(1000);
+    expect(['changed', 'unknown']).toContain(change.verdict);
+  });
+
+  it('is due an interval after its newest good sweep', async () => {
+    const headers = { 'if-match': '*' };
+    const payload = { test_interval_days: 10 };
+    await club.call({ method: 'PATCH', url: '/v1/antennas/field-20m', headers, payload });
+    expect((await antenna()).due_at).toBe('2026-03-12T13:00:00.000Z');
+  });
+
   it('is unusable where no part is within the limit', async () => {
     const file = resonatorFile({ ...whole, resistanceOhm: 300, comment: 'high' });
     await upload(club, file, measuredOn('2026-03-03'));

@@ -280,6 +280,10 @@ export class SqliteStore implements Store {
     return this.read(({ events }) => events.list(clubId, afterSeq, limit));
   }
 
+  async noteOverdue(clubId: string, antennaId: string, dueAt: string, at: string): Promise<void> {
+    await this.writer.run('noteOverdue', clubId, antennaId, dueAt, at);
+  }
+
   onWrite(listener: () => void): () => void {
     return this.writer.onWrite(listener);
   }

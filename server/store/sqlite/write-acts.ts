@@ -98,6 +98,7 @@ export interface WriteActs extends PeopleActs, WebhookActs {
   addWork(actor: Actor, fresh: FreshWork): WorkRow;
   chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): null;
   setTestInterval(actor: Actor, days: number | null): null;
+  noteOverdue(clubId: string, antennaId: string, dueAt: string, at: string): null;
   /** Takes the lock that every write needs and gives it back: tells whether a write could begin. */
   takeLock(): null;
 }
@@ -167,6 +168,11 @@ export function writeActs(connection: Connection): WriteActs {
   const selectLineCheckByFile = connection.prepare<unknown[], LineCheckRow>(
     `SELECT ${lineCheckColumns}
      WHERE club_id = ? AND antenna_id = ? AND file_sha256 = ? AND tested = ?`,
+  );
+
+  const upsertOverdue = connection.prepare(
+    `INSERT INTO overdue_told (club_id, antenna_id, due_at) VALUES (?, ?, ?)
+     ON CONFLICT DO UPDATE SET due_at = excluded.due_at WHERE due_at <> excluded.due_at`,
   );
 
   const writeEvent: WriteEvent = ({ clubId, at, memberId }, kind, id) =>
@@ -287,6 +293,11 @@ export function writeActs(connection: Connection): WriteActs {
     addWork: history.addWork,
     chooseBaseline: history.chooseBaseline,
     setTestInterval: history.setTestInterval,
+    noteOverdue(clubId, antennaId, dueAt, at) {
+      const { changes } = upsertOverdue.run(clubId, antennaId, dueAt);
+      if (changes > 0) insertEvent.run(clubId, 'test_overdue', antennaId, at, '', { antennaId });
+      return null;
+    },
     takeLock() {
       connection.exec('BEGIN IMMEDIATE; ROLLBACK');
       return null;

@@ -26,6 +26,7 @@ import { clubRoutes } from './routes/club.ts';
 import { compareRoutes } from './routes/compare.ts';
 import { compareChartRoutes } from './routes/compare-charts.ts';
 import { dashboardRoutes } from './routes/dashboard.ts';
+import { driftRoutes } from './routes/drift.ts';
 import { dueRoutes } from './routes/due.ts';
 import { eventRoutes } from './routes/events.ts';
 import { historyRoutes } from './routes/history.ts';
@@ -115,6 +116,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     adviceRoutes(behindToken, service);
     workRoutes(behindToken, service);
     historyRoutes(behindToken, service);
+    driftRoutes(behindToken, service);
     trackRoutes(behindToken, service);
     dashboardRoutes(behindToken, service);
     baselineRoutes(behindToken, service);

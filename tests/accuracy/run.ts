@@ -1,6 +1,7 @@
 import { writeFileSync } from 'node:fs';
 import { parseArgs } from 'node:util';
 import { benchCase, runBench } from './bench.ts';
+import { driftBench } from './drift-bench.ts';
 import type { Estimator } from './estimator.ts';
 import { fitModel } from './model-fit.ts';
 import { families } from './models/families.ts';
@@ -12,6 +13,8 @@ import { tableOf } from './table.ts';
 const REPORT_SEED = 20_261_201;
 const CASES = 3000;
 const QUICK_CASES = 400;
+const STATIONS = 60;
+const QUICK_STATIONS = 6;
 
 const usage = `npm run accuracy -- [--json FILE] [--seed N] [--cases N] [--family NAME] [--quick] [--case N]
 
@@ -53,7 +56,9 @@ function main(): number {
   }
   const started = performance.now();
   const plan = family === undefined ? { seed, cases } : { seed, cases, family };
-  const report = reportOf(runBench(plan, summaryEstimator));
+  const stations = values.quick ? QUICK_STATIONS : STATIONS;
+  const ofStations = family === undefined ? driftBench({ seed, stations }) : {};
+  const report = { ...reportOf(runBench(plan, summaryEstimator)), ...ofStations };
   console.log(`Accuracy bench: seed ${seed}, ${cases} cases, ${family ?? 'all families'}`);
   console.log(tableOf(report));
   console.log(`${((performance.now() - started) / 1000).toFixed(0)} s`);

@@ -13,7 +13,7 @@ export type FaultKind = keyof typeof rightNames;
 
 export interface TrueFault {
   readonly kind: FaultKind;
-  /** The first sweep that a finding could rest on: see `onset`. */
+  /** The first sweep after it. */
   readonly firstPlace: number;
   readonly rightNames: readonly DriftCode[];
   /** Sweeps that can show it: all, or the wet ones, from `firstPlace` on. */
@@ -70,7 +70,7 @@ function visitsOf(random: Random): readonly Visit[] {
   });
 }
 
-/** Relative changes that a fault makes, in the logarithms of frequency, SWR and width. */
+/** Changes that a fault makes, in the logarithms of frequency, SWR and width. */
 interface Change {
   readonly frequency: number;
   readonly swr: number;
@@ -167,14 +167,13 @@ function simulatedAntenna(
   return { sweeps, fault: kind === null ? null : faultOf(kind, visits, from, era, size) };
 }
 
-/** Null where the era ends before three sweeps could show the fault. */
 function faultOf(
   kind: FaultKind,
   visits: readonly Visit[],
   from: number,
   era: number,
   size: Change,
-): TrueFault | null {
+): TrueFault {
   const shows = ({ atMs, isWet, eraIndex }: Visit, place: number) => {
     if (place < from || eraIndex !== era) return false;
     if (kind === 'wet') return isWet;

@@ -3,15 +3,26 @@ import type { DriftMeasure } from './drift-series.ts';
 import type { Effect, SeriesModel } from './series-model.ts';
 import { usualScatter } from './usual-scatter.ts';
 
-export type DriftCode =
-  | 'slow_drift_down'
-  | 'slow_drift_up'
-  | 'sudden_jump'
-  | 'loss_growing'
-  | 'only_when_wet'
-  | 'instrument_off'
-  | 'resonance_lost'
-  | 'test_overdue';
+export const driftCodes = [
+  'slow_drift_down',
+  'slow_drift_up',
+  'sudden_jump',
+  'loss_growing',
+  'only_when_wet',
+  'instrument_off',
+  'resonance_lost',
+  'test_overdue',
+] as const;
+export type DriftCode = (typeof driftCodes)[number];
+
+/** What a keeper can do about it. */
+export const driftSteps = [
+  'inspect_antenna',
+  'check_line',
+  'look_for_water',
+  'check_instrument',
+  'sweep_again',
+] as const;
 
 /** What became of an antenna or an instrument, and on which sweeps that rests. */
 export interface DriftFinding {
@@ -23,12 +34,7 @@ export interface DriftFinding {
   /** Ids of sweeps. */
   readonly evidence: readonly string[];
   readonly confidence: 'medium' | 'high';
-  readonly next:
-    | 'inspect_antenna'
-    | 'check_line'
-    | 'look_for_water'
-    | 'check_instrument'
-    | 'sweep_again';
+  readonly next: (typeof driftSteps)[number];
   /** Relative: in all, or by year for a slow drift. */
   readonly change: number | null;
   /** The first sweep that shows it; milliseconds since 1970, UTC. */
@@ -56,12 +62,7 @@ export function findingsOf(models: readonly SeriesModel[]): readonly DriftFindin
   const losses = found.filter((one) => isLoss(one, models));
   const isOfLoss = ({ model, effect }: Found) =>
     model.measure !== 'resonance_hz' &&
-    losses.some(
-      (loss) =>
-        effect.eraIndex === loss.effect.eraIndex &&
-        effect.kind !== 'wet' &&
-        effect.after.at(-1) !== undefined,
-    );
+    losses.some((loss) => effect.eraIndex === loss.effect.eraIndex && effect.kind !== 'wet');
   const rest = found.filter((one) => !isOfLoss(one));
   return [
     ...clearest(losses).map((one) => ofLoss(one)),

@@ -8,8 +8,6 @@ import { type WorkRow, workColumns } from './rows.ts';
 export interface HistoryActs {
   /** Takes a new sweep into its antenna's history. */
   enter(record: SweepRecord, stored: StoredMeasures): void;
-  /** Moves a sweep to where its facts, as they are now, put it. */
-  move(record: SweepRecord): void;
   keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): null;
   addWork(actor: Actor, fresh: FreshWork): WorkRow;
   chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): null;
@@ -32,10 +30,6 @@ export function historyActs(connection: Connection): HistoryActs {
   const insertRow = connection.prepare(
     `INSERT INTO history (club_id, sweep_id, band, antenna_id, sort_at, analyzer_id, weather)
      VALUES (@clubId, @sweepId, @band, @antennaId, @sortAt, @analyzerId, @weather)`,
-  );
-  const updateRows = connection.prepare(
-    `UPDATE history SET antenna_id = @antennaId, sort_at = @sortAt, analyzer_id = @analyzerId, weather = @weather
-     WHERE club_id = @clubId AND sweep_id = @sweepId`,
   );
   const selectPlace = connection.prepare<unknown[], Place>(
     `SELECT antenna_id AS antennaId, sort_at AS sortAt, analyzer_id AS analyzerId, weather
@@ -76,10 +70,6 @@ export function historyActs(connection: Connection): HistoryActs {
       const bands = measures.bands.map(({ band }) => band);
       insertMeasures.run(clubId, id, basis, JSON.stringify(measures));
       insertRows(clubId, id, placeOf(record), ['', ...bands]);
-    },
-    move(record) {
-      const { clubId, id } = record;
-      updateRows.run({ clubId, sweepId: id, ...placeOf(record) });
     },
     keepMeasures(clubId, sweepId, { basis, measures }) {
       const place = selectPlace.get(clubId, sweepId);

@@ -1,3 +1,4 @@
+import type { FastifyRequest } from 'fastify';
 import { z } from 'zod';
 import { actorOf } from '../auth/bearer.ts';
 import type { App } from '../http/app-type.ts';
@@ -5,13 +6,21 @@ import { refuseFuture } from '../http/measured-at.ts';
 import { pageRequest, sendPage } from '../http/pages.ts';
 import { Problem } from '../problems.ts';
 import type { Service } from '../service.ts';
+import type { WorkRecord } from '../store/history-store.ts';
 import { idOrKeySchema, idSchema, noQuery, pageQuery, pageSchema } from '../wire/common.ts';
 import { answers, jsonAnswer } from '../wire/problem.ts';
-import { lengthChangeM, workInputSchema, workSchema, workToWire } from '../wire/work.ts';
+import {
+  lengthChangeM,
+  withdrawalSchema,
+  workInputSchema,
+  workSchema,
+  workToWire,
+} from '../wire/work.ts';
 import { addProblems, findOrRefuse, findProblems, listProblems } from './editables.ts';
 
 const tags = ['work'];
 const params = z.strictObject({ antenna: idOrKeySchema });
+const workParams = z.strictObject({ antenna: idOrKeySchema, work: idSchema });
 
 /** The work on an antenna, newest first: each piece but an inspection begins a new era. */
 export function workRoutes(app: App, service: Service): void {
@@ -47,19 +56,37 @@ export function workRoutes(app: App, service: Service): void {
         operationId: 'getWork',
         tags,
         summary: 'Read a piece of work',
-        params: z.strictObject({ antenna: idOrKeySchema, work: idSchema }),
+        params: workParams,
         querystring: noQuery,
         response: answers({ 200: jsonAnswer('The work.', workSchema) }, findProblems),
       },
     },
+    async (request) => workToWire(await findWorkOrRefuse(request, service, request.params)),
+  );
+
+  app.post(
+    '/v1/antennas/:antenna/work/:work/withdrawal',
+    {
+      config: { right: 'keep' },
+      schema: {
+        operationId: 'withdrawWork',
+        tags,
+        summary: 'Take work back that was told wrong',
+        description:
+          'It stays on record and begins no era any more. Taking it back again changes nothing.',
+        params: workParams,
+        querystring: noQuery,
+        body: withdrawalSchema,
+        response: answers({ 200: jsonAnswer('The work as it is now.', workSchema) }, [
+          ...addProblems,
+          'not-found',
+        ]),
+      },
+    },
     async (request) => {
-      const antenna = await findOrRefuse(request, service, 'antennas', request.params.antenna);
-      const { work } = request.params;
-      const record = await service.store.findWork(antenna.clubId, work);
-      if (record === null || record.antennaId !== antenna.id) {
-        throw new Problem('not-found', { detail: `The antenna has no work \`${work}\`.` });
-      }
-      return workToWire(record);
+      const { id } = await findWorkOrRefuse(request, service, request.params);
+      const actor = actorOf(request, service);
+      return workToWire(await service.store.withdrawWork(actor, id, request.body.reason));
     },
   );
 
@@ -102,4 +129,17 @@ export function workRoutes(app: App, service: Service): void {
         .send(workToWire(record));
     },
   );
+}
+
+async function findWorkOrRefuse(
+  request: FastifyRequest,
+  service: Service,
+  params: z.output<typeof workParams>,
+): Promise<WorkRecord> {
+  const antenna = await findOrRefuse(request, service, 'antennas', params.antenna);
+  const record = await service.store.findWork(antenna.clubId, params.work);
+  if (record === null || record.antennaId !== antenna.id) {
+    throw new Problem('not-found', { detail: `The antenna has no work \`${params.work}\`.` });
+  }
+  return record;
 }

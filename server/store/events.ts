@@ -26,6 +26,7 @@ export const toldEventKinds = [
   'line_check_added',
   'sweep_added',
   'work_added',
+  'work_withdrawn',
   'baseline_chosen',
   'test_interval_set',
   'test_overdue',

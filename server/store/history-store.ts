@@ -49,6 +49,10 @@ export interface WorkRecord {
   readonly doneAt: string;
   readonly addedAt: string;
   readonly addedBy: string;
+  /** When it was taken back as told wrong; null if it holds. */
+  readonly withdrawnAt: string | null;
+  /** Why it was taken back; null if it holds. */
+  readonly withdrawnFor: string | null;
   readonly facts: WorkFacts;
 }
 
@@ -93,7 +97,9 @@ export interface HistoryStore {
 
   addWork(actor: Actor, fresh: FreshWork): Promise<WorkRecord>;
   findWork(clubId: string, id: string): Promise<WorkRecord | null>;
-  /** Newest first by (doneAt, id). */
+  /** Takes work back that was told wrong; the first withdrawal holds. */
+  withdrawWork(actor: Actor, id: string, reason: string): Promise<WorkRecord>;
+  /** Newest first by (doneAt, id), withdrawn work among it. */
   listWork(clubId: string, antennaId: string, page: PageRequest): Promise<Page<WorkRecord>>;
   /** Takes the place of what was chosen for the era before. */
   chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): Promise<void>;
@@ -105,6 +111,6 @@ export interface HistoryStore {
   /** Undefined if the club never said. */
   testInterval(clubId: string): Promise<number | null | undefined>;
 
-  /** All work on an antenna, oldest first. */
+  /** All work on an antenna that holds, oldest first. */
   allWork(clubId: string, antennaId: string): Promise<readonly WorkRecord[]>;
 }

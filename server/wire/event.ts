@@ -18,6 +18,7 @@ const eventPaths: Readonly<Record<ToldEventKind, (event: ToldEvent) => string>> 
   line_check_added: (event) => ofAntenna(event, `/line-checks/${event.subjectId}`),
   sweep_added: ({ subjectId }) => `/v1/sweeps/${subjectId}`,
   work_added: (event) => ofAntenna(event, `/work/${event.subjectId}`),
+  work_withdrawn: (event) => ofAntenna(event, `/work/${event.subjectId}`),
   baseline_chosen: (event) => ofAntenna(event, '/baselines'),
   test_overdue: (event) => ofAntenna(event, '/sweeps'),
   test_interval_set: () => '/v1/due',

@@ -30,6 +30,11 @@ export const workInputSchema = z
     path: ['length_mm'],
   });
 
+const reasonSchema = z.string().min(1).max(500);
+
+/** Why work is taken back. */
+export const withdrawalSchema = z.strictObject({ reason: reasonSchema });
+
 export const workSchema = z
   .object({
     id: idSchema,
@@ -42,6 +47,8 @@ export const workSchema = z
     invented: inventedSchema,
     added_at: timeSchema,
     added_by: idSchema,
+    withdrawn_at: timeSchema.nullable().meta({ description: 'Null if it holds.' }),
+    withdrawn_for: reasonSchema.nullable(),
   })
   .meta({ id: 'Work', description: 'Work on an antenna, kept for good.' });
 
@@ -65,5 +72,7 @@ export function workToWire(record: WorkRecord): z.output<typeof workSchema> {
     invented,
     added_at: record.addedAt,
     added_by: record.addedBy,
+    withdrawn_at: record.withdrawnAt,
+    withdrawn_for: record.withdrawnFor,
   };
 }

@@ -70,3 +70,36 @@ describe('work on an antenna', () => {
     expect(answer.statusCode).toBe(404);
   });
 });
+
+describe('work that was told wrong', () => {
+  it('is taken back for a reason, stays on record, and begins no era any more', async () => {
+    const eras = async () =>
+      (await club.call({ url: '/v1/antennas/field-20m/baselines' })).json().items.length;
+    const before = await eras();
+    const told = await tell({ kind: 'moved', done_at: '2026-04-20T10:00:00Z' });
+    const { id } = told.json();
+    expect(await eras()).toBe(before + 1);
+    const withdraw = (reason: string) =>
+      club.call({ method: 'POST', url: `${url}/${id}/withdrawal`, payload: { reason } });
+    const answer = await withdraw('It was the other antenna.');
+    expect(answer.statusCode).toBe(200);
+    expect(answer.json()).toMatchObject({
+      withdrawn_at: '2026-06-01T12:00:00.000Z',
+      withdrawn_for: 'It was the other antenna.',
+    });
+    expect(await eras()).toBe(before);
+    const { items } = (await club.call({ url })).json();
+    expect(items).toContainEqual(answer.json());
+    expect((await withdraw('Again.')).json()).toEqual(answer.json());
+  });
+
+  it('is that of the antenna in the path', async () => {
+    const { items } = (await club.call({ url })).json();
+    const answer = await club.call({
+      method: 'POST',
+      url: `/v1/antennas/other/work/${items[0].id}/withdrawal`,
+      payload: { reason: 'x' },
+    });
+    expect(answer.statusCode).toBe(404);
+  });
+});

@@ -10,6 +10,7 @@ export interface HistoryActs {
   enter(record: SweepRecord, stored: StoredMeasures): void;
   keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): null;
   addWork(actor: Actor, fresh: FreshWork): WorkRow;
+  withdrawWork(actor: Actor, id: string, reason: string): WorkRow;
   chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): null;
   setTestInterval(actor: Actor, days: number | null): null;
 }
@@ -45,7 +46,11 @@ export function historyActs(connection: Connection): HistoryActs {
     'INSERT INTO work_entry (club_id, id, antenna_id, done_at, added_at, added_by, facts) VALUES (?, ?, ?, ?, ?, ?, ?)',
   );
   const selectWork = connection.prepare<unknown[], WorkRow>(
-    `SELECT ${workColumns} WHERE club_id = ? AND id = ?`,
+    `SELECT ${workColumns} WHERE work_entry.club_id = ? AND id = ?`,
+  );
+  const insertWithdrawal = connection.prepare(
+    `INSERT INTO work_withdrawal (club_id, work_id, reason, at, member_id) VALUES (?, ?, ?, ?, ?)
+     ON CONFLICT DO NOTHING`,
   );
   const insertBaseline = connection.prepare(
     'INSERT INTO baseline (club_id, antenna_id, era, sweeps, at, member_id) VALUES (?, ?, ?, ?, ?, ?)',
@@ -80,6 +85,14 @@ export function historyActs(connection: Connection): HistoryActs {
       insertRows(clubId, sweepId, place, bands);
       deleteUnmeasured.run(clubId, sweepId);
       return null;
+    },
+    withdrawWork({ clubId, memberId, at }, id, reason) {
+      const { changes } = insertWithdrawal.run(clubId, id, reason, at, memberId);
+      const row = selectWork.get(clubId, id);
+      if (row === undefined) throw new StoreError('unavailable', `There is no work ${id}.`);
+      const { antennaId } = row;
+      if (changes > 0) insertEvent.run(clubId, 'work_withdrawn', id, at, memberId, { antennaId });
+      return row;
     },
     chooseBaseline({ clubId, memberId, at }, antennaId, { era, sweepIds }) {
       insertBaseline.run(clubId, antennaId, era, JSON.stringify(sweepIds), at, memberId);

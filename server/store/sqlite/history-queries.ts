@@ -39,10 +39,10 @@ export const historyListQueries = {
   historyOldestOfAnalyzer: `${historyEntries} ${ofAnalyzer} ${oldestFirst}`,
   historyOldestOfWeather: `${historyEntries} ${ofWeather} ${oldestFirst}`,
   historyOldestOfBoth: `${historyEntries} ${ofAnalyzer} ${ofWeather} ${oldestFirst}`,
-  work: `SELECT ${workColumns} WHERE club_id = @clubId AND antenna_id = @antennaId
+  work: `SELECT ${workColumns} WHERE work_entry.club_id = @clubId AND antenna_id = @antennaId
     AND (done_at, id) < (@doneAt, @id) ORDER BY done_at DESC, id DESC LIMIT @limit`,
-  allWork: `SELECT ${workColumns} WHERE club_id = @clubId AND antenna_id = @antennaId
-    ORDER BY done_at, id`,
+  allWork: `SELECT ${workColumns} WHERE work_entry.club_id = @clubId AND antenna_id = @antennaId
+    AND withdrawal.at IS NULL ORDER BY done_at, id`,
   baselines: `SELECT era, sweeps FROM baseline
     WHERE club_id = @clubId AND antenna_id = @antennaId ORDER BY seq`,
   testInterval: `SELECT days FROM test_interval WHERE club_id = @clubId ORDER BY seq DESC LIMIT 1`,
@@ -140,7 +140,7 @@ function prepareAll(connection: Connection) {
          AND sweep_current.sweep_id = unmeasured.sweep_id
        ${sweepTables} LIMIT ?`,
     ),
-    workById: prepare<WorkRow>(`SELECT ${workColumns} WHERE club_id = ? AND id = ?`),
+    workById: prepare<WorkRow>(`SELECT ${workColumns} WHERE work_entry.club_id = ? AND id = ?`),
     work: prepare<WorkRow>(lists.work),
     allWork: prepare<WorkRow>(lists.allWork),
     baselines: prepare<BaselineRow>(lists.baselines),

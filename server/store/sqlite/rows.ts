@@ -53,12 +53,17 @@ export interface WorkRow {
   readonly doneAt: string;
   readonly addedAt: string;
   readonly addedBy: string;
+  readonly withdrawnAt: string | null;
+  readonly withdrawnFor: string | null;
   readonly facts: string;
 }
 
 /** Columns and table of a `WorkRow`, for SELECT. */
-export const workColumns = `club_id AS clubId, id, antenna_id AS antennaId, done_at AS doneAt,
-  added_at AS addedAt, added_by AS addedBy, facts FROM work_entry`;
+export const workColumns = `work_entry.club_id AS clubId, id, antenna_id AS antennaId, done_at AS doneAt,
+  added_at AS addedAt, added_by AS addedBy, facts, withdrawal.at AS withdrawnAt,
+  withdrawal.reason AS withdrawnFor FROM work_entry
+  LEFT JOIN work_withdrawal AS withdrawal ON withdrawal.club_id = work_entry.club_id
+    AND withdrawal.work_id = work_entry.id`;
 
 /** A row as the record that callers know. */
 export function toWorkRecord(row: WorkRow): WorkRecord {

@@ -241,6 +241,10 @@ export class SqliteStore implements Store {
     return toWorkRecord(await this.writer.run('addWork', actor, fresh));
   }
 
+  async withdrawWork(actor: Actor, id: string, reason: string): Promise<WorkRecord> {
+    return toWorkRecord(await this.writer.run('withdrawWork', actor, id, reason));
+  }
+
   async findWork(clubId: string, id: string): Promise<WorkRecord | null> {
     const row = this.read(({ history }) => history.workById(clubId, id));
     return row === null ? null : toWorkRecord(row);

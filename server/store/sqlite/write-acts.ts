@@ -96,6 +96,7 @@ export interface WriteActs extends PeopleActs, WebhookActs {
   };
   keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): null;
   addWork(actor: Actor, fresh: FreshWork): WorkRow;
+  withdrawWork(actor: Actor, id: string, reason: string): WorkRow;
   chooseBaseline(actor: Actor, antennaId: string, chosen: ChosenBaseline): null;
   setTestInterval(actor: Actor, days: number | null): null;
   noteOverdue(clubId: string, antennaId: string, dueAt: string, at: string): null;
@@ -291,6 +292,7 @@ export function writeActs(connection: Connection): WriteActs {
     },
     keepMeasures: history.keepMeasures,
     addWork: history.addWork,
+    withdrawWork: history.withdrawWork,
     chooseBaseline: history.chooseBaseline,
     setTestInterval: history.setTestInterval,
     noteOverdue(clubId, antennaId, dueAt, at) {

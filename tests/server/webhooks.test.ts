@@ -3,6 +3,7 @@ import { Webhook } from 'standardwebhooks';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { WebhookDeliveries } from '../../server/webhooks/deliveries.ts';
 import { makeSend, type Resolve } from '../../server/webhooks/send.ts';
+import { sendWebhooks } from '../../server/webhooks/start.ts';
 import { addAntenna, resonatorFile, upload } from '../support/club-records.ts';
 import { makeTestApp, type TestApp, testUrl } from '../support/test-app.ts';
 import { type Receiver, startReceiver } from '../support/webhook-receiver.ts';
@@ -96,6 +97,24 @@ describe('what a webhook is sent', () => {
     await addAntenna(club);
     await deliveries().deliverDue();
     expect(receiver.received.map(({ body }) => JSON.parse(body).type)).toEqual(['antennas_added']);
+  });
+});
+
+describe('a service that listens', () => {
+  it('sends what happens as it happens, and stops with the service', async () => {
+    sendWebhooks(club.app, club.service);
+    await club.app.listen({ host: '127.0.0.1', port: 0 });
+    const arrived = new Promise<void>((resolve) => {
+      receiver.answer = (response) => {
+        response.writeHead(204).end();
+        resolve();
+      };
+    });
+    await add();
+    await addSite('first');
+    await arrived;
+    expect(receiver.received.map(({ body }) => JSON.parse(body).type)).toEqual(['sites_added']);
+    await club.app.close();
   });
 });
 

@@ -64,6 +64,23 @@ export type {
   UsableReport,
   UsableVerdict,
 } from './bands/usable-report.ts';
+export type { ChartHeading, ChartStyle } from './chart/chart-style.ts';
+export { type CompareChart, compareChart, type NamedSweep } from './chart/compare-chart.ts';
+export {
+  type HistoryChart,
+  type HistoryPoint,
+  type HistorySeries,
+  historyChart,
+} from './chart/history-chart.ts';
+export { type ImpedanceChart, impedanceChart } from './chart/impedance-chart.ts';
+export { type ThemeName, themeNames } from './chart/palettes.ts';
+export {
+  type ReflectionDistanceChart,
+  reflectionDistanceChart,
+} from './chart/reflection-distance-chart.ts';
+export { type SmithChart, smithChart } from './chart/smith-chart.ts';
+export type { SweepChart } from './chart/sweep-chart.ts';
+export { swrChart } from './chart/swr-chart.ts';
 export { columnsGrammar } from './formats/delimited/columns-grammar.ts';
 export { formatColumns } from './formats/delimited/format-columns.ts';
 export type { ColumnMapping, MappedColumn } from './formats/delimited/mapping.ts';

@@ -14,6 +14,8 @@ export interface Frame {
   readonly palette: Palette;
   readonly numbers: NumberText;
   readonly sizePx: number;
+  /** There is room for short texts only. */
+  readonly isNarrow: boolean;
 }
 
 interface Margins {
@@ -29,7 +31,8 @@ const paddingPx = 10;
 
 /** The frame of a chart with these margins around its plot. */
 export function frameOf(style: ChartStyle, margins: Margins): Frame {
-  const sizePx = style.widthPx < narrowPx ? 11 : 12;
+  const isNarrow = style.widthPx < narrowPx;
+  const sizePx = isNarrow ? 11 : 12;
   return {
     plot: {
       left: margins.left,
@@ -41,6 +44,7 @@ export function frameOf(style: ChartStyle, margins: Margins): Frame {
     palette: palettes[style.theme],
     numbers: numberText(style.numbers),
     sizePx,
+    isNarrow,
   };
 }
 

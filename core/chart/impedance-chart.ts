@@ -112,7 +112,7 @@ function marksSvg(
   frame: Frame,
 ): string {
   const { plot, palette, numbers, sizePx, style } = frame;
-  const marks = sweepMarks(summary, axis.unit, numbers)
+  const marks = sweepMarks(summary, axis.unit, numbers, frame.isNarrow)
     .filter(({ kind }) => kind !== 'minimum')
     .map((mark) => ({ ...mark, at: { x: axis.x(mark.frequencyHz), y: y(0) } }));
   const envelope = new Envelope(style.widthPx, [resistance, reactance]);

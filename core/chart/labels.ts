@@ -30,6 +30,8 @@ export interface LabelRoom {
 }
 
 const gapsPx = [4, 16, 32, 52, 76];
+/** A leader longer than this part of the plot's height leads astray. */
+const mostGap = 0.22;
 const lineHeight = 1.2;
 const descent = 0.28;
 /** East, west, north, south, then the corners: where the text stands from its mark. */
@@ -70,7 +72,8 @@ interface Taken {
 function placeLabel(label: Label, { taken, leaders }: Taken, room: LabelRoom): PlacedLabel | null {
   const width = textWidth(label.text, room.sizePx);
   let lastResort: PlacedLabel | null = null;
-  for (const gap of label.isMinor === true ? gapsPx.slice(0, 1) : gapsPx) {
+  const furthest = label.isMinor === true ? 0 : mostGap * (room.bounds.bottom - room.bounds.top);
+  for (const gap of gapsPx.filter((one, i) => i === 0 || one <= furthest)) {
     for (const direction of directions) {
       const placed = candidate(label, direction, gap, width, room.sizePx);
       if (!holds(room.bounds, placed.box)) continue;

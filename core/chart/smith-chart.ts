@@ -1,5 +1,5 @@
 import type { ComplexSweep } from '../sweep.ts';
-import { around, type Point } from './boxes.ts';
+import { around, type Box, type Point } from './boxes.ts';
 import type { ChartStyle } from './chart-style.ts';
 import { CoveredCells } from './covered-cells.ts';
 import { type Frame, frameOf, headingSvg } from './frame.ts';
@@ -8,9 +8,9 @@ import { labelsSvg } from './label-svg.ts';
 import { type Label, placeLabels } from './labels.ts';
 import { pathText, px } from './path-text.ts';
 import {
+  gridTextBoxes,
   type ReflectionPlane,
   reflectionPoint,
-  resistanceTextBoxes,
   smithGridSvg,
 } from './smith-grid.ts';
 import { markPx, svgDocument, svgGroup, svgMark, svgPath, svgText } from './svg.ts';
@@ -111,10 +111,13 @@ function marksSvg(
     {
       bounds: { left: 2, right: style.widthPx - 2, top: plot.top, bottom: plot.bottom },
       blocked: [
-        ...resistanceTextBoxes(plane, summary.referenceOhm, frame),
+        ...gridTextBoxes(plane, summary.referenceOhm, frame),
         ...marks.map(({ at }) => around(at, markPx + 1)),
       ],
-      isCrossed: (box) => cells.crosses(box) || (box.top < centre.y && box.bottom > centre.y),
+      isCrossed: (box) =>
+        cells.crosses(box) ||
+        (box.top < centre.y && box.bottom > centre.y) ||
+        isOnCircle(box, centre, limitAt.y - centre.y),
       sizePx,
     },
   );
@@ -129,6 +132,15 @@ function marksSvg(
     shapes.toReversed().join('') +
     labelsSvg(labels, frame)
   );
+}
+
+/** Whether a circle runs through a box. */
+function isOnCircle({ left, right, top, bottom }: Box, { x, y }: Point, radiusPx: number): boolean {
+  const nearX = Math.max(left - x, 0, x - right);
+  const nearY = Math.max(top - y, 0, y - bottom);
+  const farX = Math.max(Math.abs(left - x), Math.abs(right - x));
+  const farY = Math.max(Math.abs(top - y), Math.abs(bottom - y));
+  return Math.hypot(nearX, nearY) < radiusPx && Math.hypot(farX, farY) > radiusPx;
 }
 
 /** The place of a frequency on the trace, between its points in a straight line. */

@@ -38,17 +38,24 @@ export function smithGridSvg(plane: ReflectionPlane, referenceOhm: number, frame
   return svgGroup('smith-grid', lines + axis + rim + gridTexts(plane, referenceOhm, frame));
 }
 
-/** What the texts along the real axis cover. */
-export function resistanceTextBoxes(
+/** What the texts of the grid cover. */
+export function gridTextBoxes(
   plane: ReflectionPlane,
   referenceOhm: number,
-  { numbers, sizePx }: Frame,
+  frame: Frame,
 ): readonly Box[] {
-  return multiples.map((r) => {
+  const { numbers, sizePx } = frame;
+  const reactances = reactanceTexts(plane, referenceOhm, frame).map(({ text, at, anchor }) => {
+    const width = textWidth(text, sizePx);
+    const left = at.x - { start: 0, middle: 0.5, end: 1 }[anchor] * width;
+    return { left, right: left + width, top: at.y - sizePx, bottom: at.y + 2 };
+  });
+  const resistances = multiples.map((r) => {
     const { x, y } = reflectionPoint(plane, (r - 1) / (r + 1), 0);
     const width = textWidth(numbers.significant(r * referenceOhm, 3), sizePx);
     return { left: x + 1, right: x + 5 + width, top: y - 1.2 * sizePx, bottom: y };
   });
+  return [...reactances, ...resistances];
 }
 
 /** From the rim, where R is 0, to the point of infinite impedance. */
@@ -70,18 +77,38 @@ function gridTexts(plane: ReflectionPlane, referenceOhm: number, frame: Frame): 
     const { x, y } = reflectionPoint(plane, (r - 1) / (r + 1), 0);
     return svgText(written(r), { x: x + 3, y: y - 3 }, look);
   });
-  const reactances = multiples.flatMap((multiple) =>
-    [multiple, -multiple].map((x) => {
+  const reactances = reactanceTexts(plane, referenceOhm, frame).map(({ text, at, anchor }) =>
+    svgText(text, at, { ...look, anchor }),
+  );
+  return (
+    svgGroup('resistances', resistances.join('')) + svgGroup('reactances', reactances.join(''))
+  );
+}
+
+interface RimText {
+  readonly text: string;
+  readonly at: Point;
+  readonly anchor: 'start' | 'middle' | 'end';
+}
+
+/** Beside the rim where each arc ends. */
+function reactanceTexts(
+  plane: ReflectionPlane,
+  referenceOhm: number,
+  { numbers, sizePx }: Frame,
+): readonly RimText[] {
+  const size = sizePx - 1;
+  return multiples.flatMap((multiple) =>
+    [multiple, -multiple].map((x): RimText => {
       const square = x * x + 1;
       const re = (x * x - 1) / square;
       const im = (2 * x) / square;
       const { x: left, y } = reflectionPoint(plane, re, im);
-      const anchor = re < -0.3 ? 'end' : re > 0.3 ? 'start' : 'middle';
-      const at = { x: left + 6 * re, y: y - 6 * im + size * (0.36 - 0.4 * im) };
-      return svgText(`${x < 0 ? '\u2212' : '+'}${written(multiple)}`, at, { ...look, anchor });
+      return {
+        text: `${x < 0 ? '\u2212' : '+'}${numbers.significant(multiple * referenceOhm, 3)}`,
+        at: { x: left + 6 * re, y: y - 6 * im + size * (0.36 - 0.4 * im) },
+        anchor: re < -0.3 ? 'end' : re > 0.3 ? 'start' : 'middle',
+      };
     }),
-  );
-  return (
-    svgGroup('resistances', resistances.join('')) + svgGroup('reactances', reactances.join(''))
   );
 }

@@ -17,13 +17,21 @@ export interface SweepMark {
   readonly text: string;
 }
 
-/** The marks of a sweep, those first that most deserve a label. */
+/**
+ * The marks of a sweep, those first that most deserve a label. Short texts leave the unit to the
+ * axis.
+ */
 export function sweepMarks(
   { minimumSwr, resonances, reactanceMagnitudeMinima }: Summary,
   unit: FrequencyUnit,
   numbers: NumberText,
+  isShort = false,
 ): readonly SweepMark[] {
-  const written = (hz: number, u95Hz: number | null) => frequencyText(hz, u95Hz, unit, numbers);
+  const written = (hz: number, u95Hz: number | null) => {
+    const text = frequencyText(hz, u95Hz, unit, numbers);
+    return isShort ? text.slice(0, text.indexOf(' ')) : text;
+  };
+  const at = isShort ? ':' : ' at';
   const marks: SweepMark[] = [];
   if (minimumSwr !== null) {
     const { frequencyHz, frequencyU95Hz, swr, resistanceOhm, atEdge } = minimumSwr;
@@ -32,11 +40,11 @@ export function sweepMarks(
     marks.push({ kind: 'minimum', shape: 'disc', frequencyHz, swr, resistanceOhm, text });
   }
   for (const { frequencyHz, frequencyU95Hz, swr, resistanceOhm } of bySwr(resonances)) {
-    const text = `X = 0 at ${written(frequencyHz, frequencyU95Hz)}`;
+    const text = `X = 0${at} ${written(frequencyHz, frequencyU95Hz)}`;
     marks.push({ kind: 'resonance', shape: 'diamond', frequencyHz, swr, resistanceOhm, text });
   }
   for (const { frequencyHz, frequencyU95Hz, resistanceOhm } of reactanceMagnitudeMinima) {
-    const text = `|X| least at ${written(frequencyHz, frequencyU95Hz)}`;
+    const text = `|X| least${at} ${written(frequencyHz, frequencyU95Hz)}`;
     marks.push({ kind: 'reactance', shape: 'square', frequencyHz, swr: null, resistanceOhm, text });
   }
   return marks;

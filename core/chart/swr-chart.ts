@@ -130,7 +130,7 @@ function marksSvg(
   frame: Frame,
 ): string {
   const { plot, palette, numbers, sizePx } = frame;
-  const marks = sweepMarks(summary, axis.unit, numbers).map((mark) => ({
+  const marks = sweepMarks(summary, axis.unit, numbers, frame.isNarrow).map((mark) => ({
     ...mark,
     at: placeOf(mark, line, axis, y),
   }));

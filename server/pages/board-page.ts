@@ -1,39 +1,61 @@
-import type { AntennaWire } from '../routes/antennas.ts';
-import type { SiteWire } from '../routes/sites.ts';
+import type { z } from 'zod';
+import type { DueWire } from '../routes/due.ts';
+import type { dashboardSchema } from '../wire/dashboard.ts';
 import { type Html, html } from './html.ts';
 import { texts } from './texts.ts';
+import { megahertz, percent, swrText, time } from './values.ts';
 
 const words = texts.board;
+type Site = z.output<typeof dashboardSchema>['sites'][number];
+type Antenna = Site['antennas'][number];
+type Band = Antenna['bands'][number];
 
 export interface BoardParts {
-  readonly sites: readonly SiteWire[];
-  readonly antennas: readonly AntennaWire[];
-  /** The lists are longer than the board shows. */
-  readonly isCut: boolean;
+  readonly sites: readonly Site[];
+  readonly due: ReadonlyMap<string, DueWire>;
 }
 
-/** What the club has: its sites, each with its antennas. */
-export function boardPage({ sites, antennas, isCut }: BoardParts): Html {
+/** How every antenna of the club stands, by site. The script writes it anew when something happens. */
+export function boardPage({ sites, due }: BoardParts): Html {
   if (sites.length === 0) return html`<p>${words.empty}</p>`;
-  return html`${sites.map((site) =>
-    siteSection(
-      site,
-      antennas.filter(({ site_id: id }) => id === site.id),
-    ),
-  )}${isCut ? html`<p class="aside">${words.cut}</p>` : null}`;
+  return html`<div id="board" data-events="/board/events">${sites.map((site) => siteSection(site, due))}</div>
+<p class="aside" role="status" data-changed="${words.changed}"></p>`;
 }
 
-function siteSection({ key, name }: SiteWire, antennas: readonly AntennaWire[]): Html {
+function siteSection({ key, name, antennas }: Site, due: BoardParts['due']): Html {
   const body =
     antennas.length === 0
       ? html`<p>${words.noAntenna}</p>`
-      : html`<div class="wide" role="region" aria-labelledby="site-${key}" tabindex="0"><table>
-<thead><tr><th scope="col">${words.antenna}</th><th scope="col">${words.bands}</th><th scope="col">${words.limit}</th></tr></thead>
-<tbody>${antennas.map(antennaRow)}</tbody></table></div>`;
+      : html`<table class="board" role="table" aria-labelledby="site-${key}">
+<thead role="rowgroup"><tr role="row">${words.heads.map((head) => html`<th scope="col" role="columnheader">${head}</th>`)}</tr></thead>
+<tbody role="rowgroup">${antennas.map((antenna) => antennaRow(antenna, due.get(antenna.id)))}</tbody></table>`;
   return html`<section><h2 id="site-${key}">${name}</h2>${body}</section>`;
 }
 
-function antennaRow({ key, name, design_bands: bands, max_swr: limit }: AntennaWire): Html {
-  return html`<tr><th scope="row"><a href="/antennas/${key}">${name}</a></th>
-<td>${bands.join(', ')}</td><td class="number">${limit}</td></tr>`;
+function antennaRow(antenna: Antenna, due: DueWire | undefined): Html {
+  const { key, name, state, bands, latest_sweep: latest } = antenna;
+  const [, stateHead, bandsHead, latestHead, dueHead] = words.heads;
+  const cell = (head: string, value: Html | string | readonly Html[]) =>
+    html`<td role="cell" data-head="${head}">${value}</td>`;
+  const sweep =
+    latest === null
+      ? '–'
+      : html`<a href="/sweeps/${latest.id}">${time(latest.measured_at ?? latest.received_at)}</a>`;
+  return html`<tr role="row"><th scope="row" role="rowheader"><a href="/antennas/${key}">${name}</a></th>
+${cell(stateHead, html`<span class="verdict ${state}">${words.states[state]}</span>`)}
+${cell(bandsHead, bands.map(bandLine))}${cell(latestHead, sweep)}
+${cell(dueHead, due === undefined ? '–' : dueText(due))}</tr>`;
+}
+
+function bandLine({ band, state, usable_fraction: usable, ...of }: Band): Html {
+  const { minimum_swr: swr, minimum_swr_hz: hz } = of;
+  const lowest = swr === null || hz === null ? '' : words.lowest(swrText(swr), megahertz(hz));
+  const part = state === 'untested' ? words.states.untested : words.usable(percent(usable));
+  return html`<div>${band}: ${part}${lowest}</div>`;
+}
+
+/** When an antenna is to be tested again. */
+export function dueText({ state, due_at: dueAt }: DueWire): Html {
+  const date = dueAt === null ? null : html` ${time(dueAt)}`;
+  return html`<span class="due ${state}">${words.due[state]}</span>${date}`;
 }

@@ -63,6 +63,7 @@ ${body}
 const places = [
   ['/', texts.nav.board],
   ['/upload', texts.nav.upload],
+  ['/analyzers', texts.nav.analyzers],
 ] as const;
 
 function navigation({ clubName }: Viewer, path: string): Html {

@@ -1,3 +1,4 @@
+import type { Readable } from 'node:stream';
 import type { FastifyReply, FastifyRequest } from 'fastify';
 import type { z } from 'zod';
 import type { App } from '../http/app-type.ts';
@@ -46,14 +47,21 @@ export class MemberApi {
     return JSON.parse(answer.bytes.toString());
   }
 
-  /** The same, or null where the interface refuses with this status. */
-  async readUnless<Body>(status: number, path: string): Promise<Body | null> {
-    try {
-      return await this.read<Body>(path);
-    } catch (error) {
-      if (error instanceof Refusal && error.problem.status === status) return null;
-      throw error;
-    }
+  /** A GET whose answer is read as it comes; `signal` ends it. */
+  async open(
+    url: string,
+    signal: AbortSignal,
+    more: Readonly<Record<string, string>>,
+  ): Promise<{ readonly status: number; readonly stream: Readable }> {
+    const answer = await this.app.inject({
+      method: 'GET',
+      url,
+      signal,
+      payloadAsStream: true,
+      remoteAddress: this.request.ip,
+      headers: { ...more, ...this.authorization() },
+    });
+    return { status: answer.statusCode, stream: answer.stream() };
   }
 
   /** Any call; the answer is as it came. */
@@ -69,12 +77,16 @@ export class MemberApi {
       remoteAddress: this.request.ip,
       headers: {
         ...more,
-        ...(this.token === null ? {} : { authorization: `Bearer ${this.token}` }),
+        ...this.authorization(),
         ...(body === undefined ? {} : { 'content-type': 'application/octet-stream' }),
       },
       ...(body === undefined ? {} : { payload: Buffer.from(body) }),
     });
     return { status: statusCode, headers, bytes: rawPayload };
+  }
+
+  private authorization(): Readonly<Record<string, string>> {
+    return this.token === null ? {} : { authorization: `Bearer ${this.token}` };
   }
 }
 

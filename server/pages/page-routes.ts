@@ -5,9 +5,11 @@ import type { App } from '../http/app-type.ts';
 import { problemBody, problemKinds } from '../problems.ts';
 import type { Service } from '../service.ts';
 import { problemSchema } from '../wire/problem.ts';
+import { analyzersPageRoutes } from './analyzers-page-routes.ts';
 import { antennaPageRoutes } from './antenna-page-routes.ts';
 import { icon, script, style } from './assets.ts';
 import { boardRoutes } from './board-routes.ts';
+import { chartRoutes } from './chart-routes.ts';
 import { hidden } from './hidden.ts';
 import { page, pagePolicy } from './layout.ts';
 import { Refusal } from './member-api.ts';
@@ -44,7 +46,9 @@ export async function pageRoutes(scope: App, service: Service): Promise<void> {
   }
   signInRoutes(scope, service);
   boardRoutes(scope);
+  analyzersPageRoutes(scope);
   antennaPageRoutes(scope);
+  chartRoutes(scope);
   sweepPageRoutes(scope);
   uploadPageRoutes(scope, service);
 }

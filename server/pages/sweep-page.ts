@@ -3,6 +3,7 @@ import type { sweepWithSummarySchema } from '../wire/sweep.ts';
 import type { usableSchema } from '../wire/usable.ts';
 import { readingCautions, safetyCautions } from './cautions.ts';
 import { type Html, html } from './html.ts';
+import { picture } from './picture.ts';
 import { sentencesOf } from './sweep-words.ts';
 import { texts } from './texts.ts';
 import { usableTable } from './usable-table.ts';
@@ -30,6 +31,7 @@ ${sweep.invented ? html`<p class="tag">${texts.invented}</p>` : null}
 <section><h2>${words.inWords}</h2>
 ${sentencesOf(summary, antenna.max_swr).map((sentence) => html`<p>${sentence}</p>`)}
 ${details(words.absent, summary.absent)}</section>
+${charts(sweep)}
 <section><h2>${words.usable}</h2>${usableTable(usable)}</section>
 ${readingCautions(cautions)}
 <section><h2>${words.facts}</h2>${factsOf(parts)}
@@ -37,6 +39,16 @@ ${details(words.assumptions, sweep.assumptions)}</section>
 <section class="screen"><h2>${words.downloads}</h2>
 <ul>${downloads(sweep)}</ul><p class="aside">${words.print}</p></section>
 ${safetyCautions(cautions)}`;
+}
+
+/** The charts that the sweep has the phase for. */
+function charts({ id, phase }: Sweep): Html {
+  const chart = (kind: 'swr' | 'impedance') =>
+    picture(`/sweeps/${id}/chart.svg?kind=${kind}`, words.charts[kind]);
+  const smith = picture(`/sweeps/${id}/chart.svg?kind=smith`, words.charts.smith, 'square');
+  return html`<section><h2>${words.chartsTitle}</h2><div class="pair">${chart('swr')}${phase === 'none' ? null : chart('impedance')}${
+    phase === 'signed' ? html`<span class="screen">${smith}</span>` : null
+  }</div></section>`;
 }
 
 function details(title: string, notes: readonly { readonly detail: string }[]): Html | null {

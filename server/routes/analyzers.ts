@@ -46,6 +46,9 @@ const analyzerSchema = z
   })
   .meta({ id: 'Analyzer', description: 'One instrument that takes sweeps.' });
 
+/** An analyzer as it is sent. */
+export type AnalyzerWire = z.output<typeof analyzerSchema>;
+
 const facts = {
   key: keySchema,
   name: nameSchema,
@@ -61,7 +64,7 @@ const editSchema = z.strictObject(facts).partial();
 const params = z.strictObject({ analyzer: idOrKeySchema });
 const tags = ['analyzers'];
 
-function toWire(record: AnalyzerRecord): z.output<typeof analyzerSchema> {
+function toWire(record: AnalyzerRecord): AnalyzerWire {
   return { ...editableToWire(record), ...toSnakeCase(record.facts) };
 }
 

@@ -26,6 +26,9 @@ const dueSchema = z
   })
   .meta({ id: 'DueTest', description: 'When an antenna is to be tested again.' });
 
+/** When an antenna is due, as it is sent. */
+export type DueWire = z.output<typeof dueSchema>;
+
 const dueListSchema = z
   .object({
     interval_days: daysSchema.meta({

@@ -2,6 +2,7 @@ import { parseArgs } from 'node:util';
 import { analysisFigures } from './analysis.ts';
 import { chartFigures } from './charts.ts';
 import { type Figure, printFigures } from './measure.ts';
+import { pageFigures } from './pages.ts';
 import { readingFigures } from './reading.ts';
 import { serviceFigures } from './service.ts';
 
@@ -16,6 +17,7 @@ const groups: Record<string, () => Promise<readonly Figure[]> | readonly Figure[
   reading: readingFigures,
   analysis: analysisFigures,
   charts: chartFigures,
+  pages: pageFigures,
   service: serviceFigures,
 };
 

@@ -2,6 +2,20 @@
 
 const inZone = new Intl.DateTimeFormat(undefined, { dateStyle: 'medium', timeStyle: 'short' });
 
+const clock = new Intl.DateTimeFormat(undefined, { timeStyle: 'medium' });
+/** What comes within this is shown at once. */
+const gatherMs = 300;
+const changes = [
+  'reset',
+  'sweep_added',
+  'antennas_added',
+  'antennas_edited',
+  'sites_added',
+  'sites_edited',
+  'work_added',
+  'test_interval_set',
+];
+
 function writeTimes(root) {
   for (const time of root.querySelectorAll('time[datetime]')) {
     time.title = time.textContent;
@@ -74,6 +88,29 @@ function showAnswer(answer) {
   window.scrollTo(0, 0);
 }
 
+/** Keeps the board as it is now: whatever happens in the club, it is fetched anew. */
+function followBoard(board) {
+  const told = document.querySelector('[data-changed]');
+  let isWaiting = false;
+  const renew = async () => {
+    isWaiting = false;
+    const answer = await fetch(window.location.href);
+    const fresh = new DOMParser().parseFromString(await answer.text(), 'text/html');
+    const next = fresh.querySelector('#board');
+    if (next === null) return;
+    writeTimes(next);
+    board.replaceChildren(...document.adoptNode(next).childNodes);
+    told.textContent = told.dataset.changed.replace('{time}', clock.format(new Date()));
+  };
+  const later = () => {
+    if (isWaiting) return;
+    isWaiting = true;
+    setTimeout(() => renew().catch(() => undefined), gatherMs);
+  };
+  const events = new EventSource(board.dataset.events);
+  for (const kind of changes) events.addEventListener(kind, later);
+}
+
 function improve(root) {
   writeTimes(root);
   for (const form of root.querySelectorAll('form.upload')) {
@@ -88,3 +125,5 @@ function improve(root) {
 
 improve(document);
 tellZone();
+const board = document.querySelector('#board');
+if (board !== null) followBoard(board);

@@ -45,6 +45,12 @@ async function compare(): Promise<readonly Figure[]> {
   const small = await prepare('few', few);
   const large = await prepare('many', many);
   try {
+    const history = await readsInTurns(
+      large,
+      small,
+      ({ filled }) => `/v1/antennas/${filled.antennaKey}/history?limit=50`,
+    );
+    const dashboard = await readsInTurns(large, small, () => '/v1/dashboard');
     const list = await readsInTurns(
       large,
       small,
@@ -62,6 +68,8 @@ async function compare(): Promise<readonly Figure[]> {
     const bytes = statSync(join(large.folder, 'ledger.sqlite')).size;
     const at = `${many.sweeps} sweeps in ${many.antennas} antennas / ${few.sweeps}`;
     return [
+      ratioFigure('history_growth', history, '<= 1.5', at),
+      ratioFigure('dashboard_growth', dashboard, '<= 1.5', `${at}; a club of 50 antennas`),
       ratioFigure('sweep_list_growth', list, 'report', at),
       ratioFigure('history_growth', history, 'report', at),
       ratioFigure('history_of_band_growth', ofBand, 'report', at),
@@ -104,7 +112,7 @@ interface InTurns {
   readonly small: readonly number[];
 }
 
-/** Milliseconds a read, round by round in turns; an answer is asked for anew each time. */
+/** Milliseconds a read, round by round in turns. */
 async function readsInTurns(
   large: Side,
   small: Side,
@@ -124,6 +132,7 @@ async function readsInTurns(
 async function readTime({ service }: Side, path: string): Promise<number> {
   const times: number[] = [];
   for (let i = 0; i < requestsEach; i++) {
+    await writeSomething(service, i);
     const from = performance.now();
     const answer = await fetch(service.url + path, { headers: service.headers });
     await answer.arrayBuffer();
@@ -131,6 +140,17 @@ async function readTime({ service }: Side, path: string): Promise<number> {
     times.push(performance.now() - from);
   }
   return median(times);
+}
+
+/** After a write no answer can be one that was sent before. */
+async function writeSomething({ url, headers }: ServerProcess, number: number): Promise<void> {
+  const answer = await fetch(`${url}/v1/sites/bench`, {
+    method: 'PATCH',
+    headers: { ...headers, 'content-type': 'application/json', 'if-match': '*' },
+    body: JSON.stringify({ note: String(number) }),
+  });
+  await answer.arrayBuffer();
+  if (!answer.ok) throw new Error(`An edit was answered ${answer.status}`);
 }
 
 /** Uploads a second. */

@@ -142,7 +142,7 @@ export function lineCheckUploadRoutes(app: App, service: Service): void {
       const analyzerId = await analyzerIdOf(request, service, query.analyzer);
       const line = await toldLine(service, antenna, query);
       checkContentDigest(request.headers['content-digest'], bodyBytes(request));
-      const { bytes, fileName } = await uploadedFile(request);
+      const { bytes, fileName } = await uploadedFile(request, service.limits.maxBytes);
       const { clubId, memberId, at } = actorOf(request, service);
       const incoming = {
         id: service.newId(),

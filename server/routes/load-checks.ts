@@ -93,7 +93,7 @@ export function loadCheckUploadRoutes(app: App, service: Service): void {
       const { measured_at: measuredAt = null, load } = query;
       refuseFuture(measuredAt, service.now());
       checkContentDigest(request.headers['content-digest'], bodyBytes(request));
-      const { bytes, fileName } = await uploadedFile(request);
+      const { bytes, fileName } = await uploadedFile(request, service.limits.maxBytes);
       const { clubId, memberId, at } = actorOf(request, service);
       const incoming = {
         id: service.newId(),

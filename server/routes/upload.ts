@@ -112,7 +112,7 @@ async function keepSweep(
   { antenna, analyzer, facts, query }: Told,
 ): Promise<FastifyReply> {
   checkContentDigest(request.headers['content-digest'], bodyBytes(request));
-  const { bytes, fileName } = await uploadedFile(request);
+  const { bytes, fileName } = await uploadedFile(request, service.limits.maxBytes);
   const { clubId, memberId, at } = actorOf(request, service);
   const fileSha256 = sha256(bytes).toString('hex');
   const known = await service.store.findSweepByFile(clubId, fileSha256);

@@ -35,7 +35,7 @@ const binary = { type: 'string', format: 'binary' };
 /** The body of an upload, for the document. */
 export const fileRequestBody = {
   description:
-    'The file itself, under any content type, or a form with one part `file`. What kind of file it is is told from its content.',
+    'The file itself, under any content type, or a form with one part `file`. What kind of file it is is told from its content. It may be packed by gzip (also as `Content-Encoding: gzip`) or as a ZIP archive of one file: the file inside is kept.',
   required: true,
   content: {
     'application/octet-stream': { schema: binary, example: sampleFile },

@@ -45,24 +45,19 @@ async function compare(): Promise<readonly Figure[]> {
   const small = await prepare('few', few);
   const large = await prepare('many', many);
   try {
-    const history = await readsInTurns(
-      large,
-      small,
-      ({ filled }) => `/v1/antennas/${filled.antennaKey}/history?limit=50`,
-    );
+    const historyOf = (query: string) =>
+      readsInTurns(
+        large,
+        small,
+        ({ filled }) => `/v1/antennas/${filled.antennaKey}/history?limit=50${query}`,
+      );
+    const history = await historyOf('');
     const dashboard = await readsInTurns(large, small, () => '/v1/dashboard');
     const list = await readsInTurns(
       large,
       small,
       ({ filled }) => `/v1/antennas/${filled.antennaKey}/sweeps?limit=50`,
     );
-    const historyOf = (query: string) =>
-      readsInTurns(
-        large,
-        small,
-        ({ filled }) => `/v1/antennas/${filled.antennaKey}/history?limit=20${query}`,
-      );
-    const history = await historyOf('');
     const ofBand = await historyOf('&band=20m');
     const uploads = await uploadsInTurns(large, small);
     const bytes = statSync(join(large.folder, 'ledger.sqlite')).size;
@@ -71,7 +66,6 @@ async function compare(): Promise<readonly Figure[]> {
       ratioFigure('history_growth', history, '<= 1.5', at),
       ratioFigure('dashboard_growth', dashboard, '<= 1.5', `${at}; a club of 50 antennas`),
       ratioFigure('sweep_list_growth', list, 'report', at),
-      ratioFigure('history_growth', history, 'report', at),
       ratioFigure('history_of_band_growth', ofBand, 'report', at),
       ratioFigure('upload_growth', uploads, '>= 0.8', at),
       ratioFigure('start_ms', { large: large.startMs, small: small.startMs }, '<= 1.5', at),

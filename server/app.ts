@@ -18,6 +18,7 @@ import { measureRequests } from './metrics.ts';
 import { collectRoutes } from './openapi/collect.ts';
 import { pageRoutes } from './pages/page-routes.ts';
 import { adviceRoutes } from './routes/advice.ts';
+import { agreementRoutes } from './routes/agreement.ts';
 import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
 import { baselineRoutes } from './routes/baselines.ts';
@@ -105,6 +106,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     siteRoutes(behindToken, service);
     antennaRoutes(behindToken, service);
     analyzerRoutes(behindToken, service);
+    agreementRoutes(behindToken, service);
     loadCheckRoutes(behindToken, service);
     cableRoutes(behindToken, service);
     lineCheckRoutes(behindToken, service);

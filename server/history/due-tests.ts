@@ -45,7 +45,11 @@ export async function dueTests(service: Service, clubId: string): Promise<readon
   return tests.toSorted((a, b) => byUrgency(a.due, b.due));
 }
 
-async function allAntennas(service: Service, clubId: string): Promise<readonly AntennaRecord[]> {
+/** Every antenna of a club. */
+export async function allAntennas(
+  service: Service,
+  clubId: string,
+): Promise<readonly AntennaRecord[]> {
   const antennas: AntennaRecord[] = [];
   let after: PageRequest['after'] = null;
   do {

@@ -5,7 +5,7 @@ import type { App } from '../http/app-type.ts';
 import type { Service } from '../service.ts';
 import { idOrKeySchema } from '../wire/common.ts';
 import { driftSchema, driftToWire } from '../wire/drift.ts';
-import { answers } from '../wire/problem.ts';
+import { answers, jsonAnswer } from '../wire/problem.ts';
 import { findOrRefuse, findProblems } from './editables.ts';
 
 /** What an antenna's sweeps tell of it over time. */
@@ -25,7 +25,7 @@ export function driftRoutes(app: App, service: Service): void {
             description: 'Only this band; else the design bands, or all where there are none.',
           }),
         }),
-        response: answers({ 200: driftSchema.describe('The report.') }, findProblems),
+        response: answers({ 200: jsonAnswer('By band.', driftSchema) }, findProblems),
       },
     },
     async (request) => {

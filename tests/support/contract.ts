@@ -20,7 +20,12 @@ export function assertDocumented(
   answer: LightMyRequestResponse,
 ): void {
   const path = url.split('?', 1)[0];
-  const template = Object.keys(document.paths ?? {}).find((candidate) => matches(candidate, path));
+  const paths = document.paths ?? {};
+  // A path without parameters goes before one with, as in the standard.
+  const template =
+    paths[path] === undefined
+      ? Object.keys(paths).find((candidate) => matches(candidate, path))
+      : path;
   const operation = template === undefined ? undefined : operationOf(template, method);
   if (template === undefined || operation === undefined) {
     if (answer.statusCode === 404 || answer.statusCode === 405) return;

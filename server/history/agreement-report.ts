@@ -1,0 +1,30 @@
+import { type Agreement, agreementOf } from '../../core/record/agreement/agreement.ts';
+import {
+  type DriftSweep,
+  driftMeasures,
+  driftSeries,
+} from '../../core/record/drift/drift-series.ts';
+import type { Service } from '../service.ts';
+import { allAntennas } from './due-tests.ts';
+import { measuredRows } from './measured-rows.ts';
+
+/** Of each antenna so many of the newest sweeps are looked at. */
+export const mostAgreementSweeps = 400;
+
+/** How well a club's instruments agree, from all its antennas. */
+export async function clubAgreement(
+  service: Service,
+  clubId: string,
+): Promise<readonly Agreement[]> {
+  const series: (readonly DriftSweep[])[] = [];
+  for (const antenna of await allAntennas(service, clubId)) {
+    const newest = await measuredRows(service, antenna, {}, mostAgreementSweeps);
+    const rows = newest.map(({ row }) => row).toReversed();
+    for (const plane of ['measured', 'feed_point'] as const) {
+      const own = rows.filter(({ measures }) => measures.plane === plane);
+      const bands = new Set(own.flatMap(({ measures }) => measures.bands.map(({ band }) => band)));
+      series.push(...[...bands].map((band) => driftSeries(own, band)));
+    }
+  }
+  return driftMeasures.flatMap((measure) => agreementOf(series, measure) ?? []);
+}

@@ -1,0 +1,88 @@
+import { z } from 'zod';
+import type { Agreement } from '../../core/record/agreement/agreement.ts';
+import { driftMeasures } from '../../core/record/drift/drift-series.ts';
+import type { OutlierTest } from '../../core/record/statistics/outliers.ts';
+import { idSchema } from './common.ts';
+import { rounded } from './rounding.ts';
+
+const testSchema = z
+  .object({
+    analyzer_id: idSchema.meta({ description: 'The instrument that it is about.' }),
+    statistic: z.number(),
+    critical_5_percent: z.number(),
+    critical_1_percent: z.number(),
+    verdict: z.enum(['none', 'straggler', 'outlier']),
+  })
+  .meta({ id: 'OutlierTest', description: 'Straggler beyond 5 %, outlier beyond 1 %.' });
+
+const agreementSchema = z
+  .object({
+    measure: z.enum(driftMeasures),
+    occasions: z.int(),
+    repeatability: z.number().nullable(),
+    reproducibility: z.number().nullable(),
+    instruments: z.array(
+      z
+        .object({
+          analyzer_id: idSchema,
+          measurements: z.int(),
+          bias: z.number(),
+          low: z.number(),
+          high: z.number(),
+          correction_worth: z.boolean().meta({
+            description: 'The bias is no chance and more than is usual.',
+          }),
+        })
+        .meta({ id: 'InstrumentAgreement' }),
+    ),
+    cochran: testSchema.nullable().meta({ description: 'Whether one scatters more.' }),
+    grubbs: testSchema.nullable().meta({ description: 'Whether one lies apart.' }),
+  })
+  .meta({
+    id: 'Agreement',
+    description:
+      'Standard deviations and biases of the natural logarithm (0.01: about 1 %) by ISO 5725-2; biases from the mean of all, with 95 % limits.',
+  });
+
+export const agreementsSchema = z
+  .object({ items: z.array(agreementSchema) })
+  .meta({ id: 'Agreements', description: 'Measures in which instruments could be compared.' });
+
+/** Agreements as they are sent. */
+export function agreementsToWire(
+  agreements: readonly Agreement[],
+): z.output<typeof agreementsSchema> {
+  return rounded({ items: agreements.map(agreementToWire) });
+}
+
+function agreementToWire(agreement: Agreement): z.output<typeof agreementSchema> {
+  const { measure, occasions, precision, instruments } = agreement;
+  const testOf = (test: OutlierTest | null) =>
+    test === null
+      ? null
+      : {
+          analyzer_id: instruments[test.index].analyzerId,
+          statistic: test.statistic,
+          critical_5_percent: test.critical5,
+          critical_1_percent: test.critical1,
+          verdict: test.verdict,
+        };
+  return {
+    measure,
+    occasions,
+    repeatability: precision?.repeatability ?? null,
+    reproducibility: precision?.reproducibility ?? null,
+    instruments: instruments.map(
+      ({ analyzerId, measurements, bias, low, high, correctionWorth }) => ({
+        analyzer_id: analyzerId,
+        measurements,
+        bias,
+        low,
+        high,
+        correction_worth: correctionWorth,
+      }),
+    ),
+    cochran: testOf(agreement.cochran),
+    grubbs: testOf(agreement.grubbs),
+  };
+}

@@ -1,5 +1,9 @@
 import { type Agreement, agreementOf } from '../../core/record/agreement/agreement.ts';
 import {
+  type BiasOverAntennas,
+  biasesOverAntennas,
+} from '../../core/record/agreement/over-antennas.ts';
+import {
   type DriftSweep,
   driftMeasures,
   driftSeries,
@@ -11,11 +15,15 @@ import { measuredRows } from './measured-rows.ts';
 /** Of each antenna so many of the newest sweeps are looked at. */
 export const mostAgreementSweeps = 400;
 
+export interface ClubAgreement {
+  /** From occasions on which instruments met. */
+  readonly agreements: readonly Agreement[];
+  /** From every antenna's own series. */
+  readonly biases: readonly BiasOverAntennas[];
+}
+
 /** How well a club's instruments agree, from all its antennas. */
-export async function clubAgreement(
-  service: Service,
-  clubId: string,
-): Promise<readonly Agreement[]> {
+export async function clubAgreement(service: Service, clubId: string): Promise<ClubAgreement> {
   const series: (readonly DriftSweep[])[] = [];
   for (const antenna of await allAntennas(service, clubId)) {
     const newest = await measuredRows(service, antenna, {}, mostAgreementSweeps);
@@ -26,5 +34,8 @@ export async function clubAgreement(
       series.push(...[...bands].map((band) => driftSeries(own, band)));
     }
   }
-  return driftMeasures.flatMap((measure) => agreementOf(series, measure) ?? []);
+  return {
+    agreements: driftMeasures.flatMap((measure) => agreementOf(series, measure) ?? []),
+    biases: driftMeasures.flatMap((measure) => biasesOverAntennas(series, measure)),
+  };
 }

@@ -1,7 +1,9 @@
 import { z } from 'zod';
 import type { Agreement } from '../../core/record/agreement/agreement.ts';
+import type { BiasOverAntennas } from '../../core/record/agreement/over-antennas.ts';
 import { driftMeasures } from '../../core/record/drift/drift-series.ts';
 import type { OutlierTest } from '../../core/record/statistics/outliers.ts';
+import type { ClubAgreement } from '../history/agreement-report.ts';
 import { idSchema } from './common.ts';
 import { rounded } from './rounding.ts';
 
@@ -44,15 +46,46 @@ const agreementSchema = z
       'Standard deviations and biases of the natural logarithm (0.01: about 1 %) by ISO 5725-2; biases from the mean of all, with 95 % limits.',
   });
 
+const overAntennasSchema = z
+  .object({
+    measure: z.enum(driftMeasures),
+    analyzer_id: idSchema,
+    measurements: z.int(),
+    bias: z.number(),
+    low: z.number(),
+    high: z.number(),
+    off: z.boolean().meta({
+      description: 'It differs from most others by more than chance and more than is usual.',
+    }),
+  })
+  .meta({
+    id: 'BiasOverAntennas',
+    description: 'How far an instrument lies from the middle one of the others, relative.',
+  });
+
 export const agreementsSchema = z
-  .object({ items: z.array(agreementSchema) })
+  .object({
+    items: z.array(agreementSchema).meta({ description: 'From occasions on which they met.' }),
+    over_antennas: z.array(overAntennasSchema).meta({
+      description: 'From the series of all antennas, also where no instruments met.',
+    }),
+  })
   .meta({ id: 'Agreements', description: 'Measures in which instruments could be compared.' });
 
 /** Agreements as they are sent. */
-export function agreementsToWire(
-  agreements: readonly Agreement[],
-): z.output<typeof agreementsSchema> {
-  return rounded({ items: agreements.map(agreementToWire) });
+export function agreementsToWire({
+  agreements,
+  biases,
+}: ClubAgreement): z.output<typeof agreementsSchema> {
+  return rounded({
+    items: agreements.map(agreementToWire),
+    over_antennas: biases.map(biasToWire),
+  });
+}
+
+function biasToWire(bias: BiasOverAntennas): z.output<typeof overAntennasSchema> {
+  const { measure, analyzerId, measurements, low, high, off } = bias;
+  return { measure, analyzer_id: analyzerId, measurements, bias: bias.bias, low, high, off };
 }
 
 function agreementToWire(agreement: Agreement): z.output<typeof agreementSchema> {

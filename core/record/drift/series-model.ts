@@ -33,6 +33,8 @@ export interface SeriesModel {
   readonly sweeps: readonly DriftSweep[];
   /** Logarithms, less what instruments and the year explain. */
   readonly corrected: Float64Array;
+  /** What is left of the logarithms for instruments and scatter to explain. */
+  readonly ofInstruments: Float64Array;
   /** Standard deviation of the logarithm from one sweep to the next. */
   readonly scatter: number;
   readonly biases: readonly InstrumentBias[];
@@ -85,10 +87,17 @@ export function seriesModel(
   const corrected = y.map((value, i) =>
     base.nuisance.reduce((rest, k) => rest - fit.factors[k] * base.columns[k].values[i], value),
   );
+  const biasOf = new Map(
+    base.instruments.map((id, i) => [id, fit.factors[base.firstInstrument + i]]),
+  );
   return {
     measure,
     sweeps: measured,
     corrected,
+    ofInstruments: fit.residuals.map(
+      (rest, i) =>
+        rest + (biasOf.get(measured[i].analyzerId ?? '') ?? 0) + base.offsetOf(measured[i]),
+    ),
     scatter,
     biases: base.instruments.map((analyzerId, i) => ({
       analyzerId,

@@ -13,6 +13,13 @@ interface Finding {
   readonly since: string;
 }
 
+interface Bias {
+  readonly measure: string;
+  readonly analyzer_id: string;
+  readonly bias: number;
+  readonly off: boolean;
+}
+
 let club: TestApp;
 beforeAll(async () => {
   club = await makeTestApp();
@@ -69,5 +76,18 @@ describe('the demo club over two years', () => {
   it('answers for a band that was never swept with no bands', async () => {
     const answer = await club.call({ url: '/v1/antennas/boathouse-2m/drift?band=160m' });
     expect(answer.json().bands).toEqual([]);
+  });
+
+  it('has a handheld that shows frequencies 0.3 % too high, and no other instrument that is off', async () => {
+    const analyzer = (await club.call({ url: '/v1/analyzers/handheld' })).json();
+    const answer = await club.call({ url: '/v1/analyzers/agreement' });
+    const over: readonly Bias[] = answer.json().over_antennas;
+    const off = over.filter((bias) => bias.off);
+    expect(off.map(({ measure }) => measure)).toEqual(['resonance_hz', 'minimum_swr_hz']);
+    for (const { analyzer_id, bias } of off) {
+      expect(analyzer_id).toBe(analyzer.id);
+      // The story: 1.003 times the true frequency.
+      expect(bias).toBeCloseTo(0.003, 3);
+    }
   });
 });

@@ -1,5 +1,6 @@
 import type { FastifyInstance } from 'fastify';
 import { type DestinationStream, type Logger, pino } from 'pino';
+import { pathForLog } from './auth/token-in-url.ts';
 
 /**
  * The log: JSON lines. What is written of a request or an error is an allow-list, so that no header,
@@ -22,7 +23,7 @@ export function logAnswers(app: FastifyInstance): void {
       {
         method: request.method,
         route: request.routeOptions.url,
-        path: request.url.split('?', 1)[0],
+        path: pathForLog(request.url),
         status: reply.statusCode,
         ms: Math.round(reply.elapsedTime * 10) / 10,
         club: request.actor?.clubId,

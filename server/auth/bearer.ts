@@ -2,8 +2,11 @@ import type { FastifyInstance, FastifyRequest } from 'fastify';
 import { Problem } from '../problems.ts';
 import { type Right, type Role, rightsOf } from '../rights.ts';
 import { type Service, timestamp } from '../service.ts';
+import type { KnownToken } from '../store/people.ts';
 import type { Actor } from '../store/port.ts';
 import { KnownTokens } from './known-tokens.ts';
+import { carriesToken } from './token-in-url.ts';
+import { noteUses } from './token-use.ts';
 
 /** Who is asking and what for, as the token tells. */
 export interface Principal {
@@ -27,13 +30,16 @@ declare module 'fastify' {
 /** Lets no request pass without the right that its route declares (RFC 6750). */
 export function guardRoutes(app: FastifyInstance, service: Service): void {
   const tokens = new KnownTokens(service.store);
+  const noteUse = noteUses(service);
   app.decorateRequest('actor', null);
   app.addHook('onRequest', async (request) => {
-    if (carriesTokenInUrl(request.url)) throw new Problem('token-in-url');
+    if (carriesToken(request.url)) throw new Problem('token-in-url');
     const { right = 'public' } = request.routeOptions.config;
     if (right === 'public') return;
-    const principal = await authenticate(request, service, tokens);
+    const token = await authenticate(request, service, tokens);
+    const principal = principalOfToken(token);
     request.actor = principal;
+    noteUse(token, request.log);
     if (!principal.rights.has(right)) throw lacking(right);
   });
 }
@@ -55,8 +61,8 @@ export async function isStillAllowed(request: FastifyRequest, service: Service):
   const { right = 'public' } = request.routeOptions.config;
   if (right === 'public') return true;
   try {
-    const tokens = new KnownTokens(service.store);
-    return (await authenticate(request, service, tokens)).rights.has(right);
+    const token = await authenticate(request, service, new KnownTokens(service.store));
+    return principalOfToken(token).rights.has(right);
   } catch (error) {
     if (error instanceof Problem) return false;
     throw error;
@@ -67,7 +73,7 @@ async function authenticate(
   request: FastifyRequest,
   service: Service,
   tokens: KnownTokens,
-): Promise<Principal> {
+): Promise<KnownToken> {
   const header = request.headers.authorization;
   if (header === undefined) throw unauthenticated('The request has no bearer token.');
   const match = /^Bearer +([^\s]+) *$/i.exec(header);
@@ -79,15 +85,13 @@ async function authenticate(
   if (known === null || (known.expiresAt !== null && known.expiresAt <= timestamp(service.now))) {
     throw unauthenticated('The token is not valid here.', 'invalid_token');
   }
-  const { id, clubId, memberId, role, scopes, expiresAt } = known;
-  const allowed = rightsOf(role, scopes);
-  return { clubId, memberId, tokenId: id, tokenExpiresAt: expiresAt, role, rights: allowed };
+  return known;
 }
 
-const tokenInUrl = /[?&](access_token=|[^=&]*=sl_[0-9A-Za-z]{36}(&|$))/;
-
-function carriesTokenInUrl(url: string): boolean {
-  return tokenInUrl.test(url);
+function principalOfToken(token: KnownToken): Principal {
+  const { id, clubId, memberId, role, scopes, expiresAt } = token;
+  const allowed = rightsOf(role, scopes);
+  return { clubId, memberId, tokenId: id, tokenExpiresAt: expiresAt, role, rights: allowed };
 }
 
 /** The problem of a valid token without the right. */

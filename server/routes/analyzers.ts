@@ -1,5 +1,6 @@
+import type { FastifyRequest } from 'fastify';
 import { z } from 'zod';
-import { principalOf } from '../auth/bearer.ts';
+import { lacking, principalOf } from '../auth/bearer.ts';
 import type { App } from '../http/app-type.ts';
 import { pageRequest, sendPage } from '../http/pages.ts';
 import type { Service } from '../service.ts';
@@ -148,6 +149,8 @@ export function analyzerRoutes(app: App, service: Service): void {
         operationId: 'editAnalyzer',
         tags,
         summary: 'Edit an analyzer: fields that are left out stay',
+        description:
+          'The right `measure` is enough for an analyzer that one added oneself; others need `keep`.',
         params,
         querystring: noQuery,
         headers: editHeaders,
@@ -157,9 +160,21 @@ export function analyzerRoutes(app: App, service: Service): void {
     },
     async (request, reply) => {
       const present = await findOrRefuse(request, service, 'analyzers', request.params.analyzer);
+      await refuseOthersAnalyzer(request, service, present.id);
       const { key = present.key, ...edits } = request.body;
       const next = { key, facts: withEdits(present.facts, toCamelCase(edits)) };
       return editEditable(request, reply, service, 'analyzers', present, next, toWire);
     },
   );
+}
+
+/** Without the right to keep, only what one added oneself. Throws `insufficient-right`. */
+async function refuseOthersAnalyzer(
+  request: FastifyRequest,
+  { store }: Service,
+  id: string,
+): Promise<void> {
+  const { clubId, memberId, rights } = principalOf(request);
+  if (rights.has('keep')) return;
+  if ((await store.whoAdded('analyzers', clubId, id)) !== memberId) throw lacking('keep');
 }

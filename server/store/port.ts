@@ -335,6 +335,8 @@ export interface Store extends HistoryStore, EventStore {
     clubId: string,
     idOrKey: string,
   ): Promise<Editable<EditableKinds[K]> | null>;
+  /** The member who added the record, by id; null if the club has none such. */
+  whoAdded(kind: EditableKind, clubId: string, id: string): Promise<string | null>;
   /** Ascending by key; antennas may be limited to one site. */
   listEditables<K extends EditableKind>(
     kind: K,

@@ -45,8 +45,17 @@ describe('a request behind the token', () => {
   });
 
   it('is refused with a token in the URL, even a valid one', async () => {
-    for (const query of ['access_token=x', `token=${club.token}`]) {
-      const answer = await club.call({ url: `/v1/sites?${query}` });
+    const encoded = `%73${club.token.slice(1)}`;
+    const urls = [
+      '/v1/sites?access_token=x',
+      `/v1/sites?token=${club.token}`,
+      `/v1/sites?note=before${club.token}after`,
+      `/v1/sites?note=${encoded}`,
+      `/v1/sites/${club.token}`,
+      `/problems/${encoded}`,
+    ];
+    for (const url of urls) {
+      const answer = await club.call({ url });
       expect(answer.statusCode).toBe(400);
       expect(answer.json().type).toBe(`${testUrl}/problems/token-in-url`);
     }
@@ -88,11 +97,14 @@ describe('the log', () => {
     await addAntenna(logged);
     await upload(logged, resonatorFile({ comment: 'secret-body' }), '?note=secret-note');
     await logged.call({ url: `/v1/sites?token=${logged.token}` });
+    await logged.call({ url: `/v1/sites/${logged.token}` });
+    await logged.call({ url: `/${logged.token}/nowhere` });
+    await logged.call({ url: `/v1/sites/%73${logged.token.slice(1)}` });
     await logged.call({ url: '/v1/sites', headers: { cookie: 'secret-cookie' } });
     await logged.close();
     expect(text).toContain('"route":"/v1/antennas/:antenna/sweeps"');
     expect(text).toContain(`"club":"${logged.actor.clubId}"`);
-    expect(text).not.toContain(logged.token);
+    expect(text).not.toContain(logged.token.slice(1));
     expect(text).not.toMatch(/secret-(body|note|cookie)/);
   });
 });

@@ -88,6 +88,26 @@ describe('a member', () => {
     expect((await addSite('late')).statusCode).toBe(201);
   });
 
+  it('who measures edits the analyzers they added, a keeper edits all', async () => {
+    const [one, two] = [await addMember(club, 'measurer'), await addMember(club, 'measurer')];
+    const keeper = await addMember(club, 'keeper');
+    const payload = { key: 'one-s-own', name: 'Own' };
+    const headers = bearer(one.token);
+    const url = '/v1/analyzers';
+    expect((await club.call({ method: 'POST', url, headers, payload })).statusCode).toBe(201);
+    const edit = async ({ token }: { token: string }) =>
+      club.call({
+        method: 'PATCH',
+        url: `${url}/one-s-own`,
+        headers: { ...bearer(token), 'if-match': '*' },
+        payload: { note: 'moved' },
+      });
+    expect((await edit(one)).statusCode).toBe(200);
+    const refused = await edit(two);
+    expect([refused.statusCode, typeOf(refused)]).toEqual([403, 'insufficient-right']);
+    expect((await edit(keeper)).statusCode).toBe(200);
+  });
+
   it('who has left has no valid token', async () => {
     const { id, token } = await addMember(club, 'reader');
     expect((await read('/v1/sites', token)).statusCode).toBe(200);

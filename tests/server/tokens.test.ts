@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { tokenPattern } from '../../server/auth/token.ts';
+import { StoreError } from '../../server/store/port.ts';
 import { addMember, bearer } from '../support/members.ts';
 import { makeTestApp, type TestApp, testUrl } from '../support/test-app.ts';
 
@@ -119,6 +120,42 @@ describe('revoking a token', () => {
     expect((await revoke(one.tokenId, two.token)).statusCode).toBe(404);
     expect(await statusOf(one.token)).toBe(200);
     expect((await revoke(two.tokenId, two.token)).statusCode).toBe(204);
+  });
+});
+
+describe('the last use of a token', () => {
+  it('is noted at most every five minutes', async () => {
+    const { id, token } = await addMember(club, 'reader');
+    const minute = 60_000;
+    const begun = club.clock.ms;
+    const used = async (minutes: number) => {
+      club.clock.ms = begun + minutes * minute;
+      expect(await statusOf(token)).toBe(200);
+      // A write of its own comes after the note: writes keep their order.
+      await ask({ label: 'after' });
+      const list = await club.call({ url: `/v1/tokens?member=${id}` });
+      return (Date.parse(list.json().items[0].last_used_at) - begun) / minute;
+    };
+    expect(await used(0)).toBe(0);
+    expect(await used(4.9)).toBe(0);
+    expect(await used(5)).toBe(5);
+    expect(await used(9.9)).toBe(5);
+    expect(await used(12)).toBe(12);
+    club.clock.ms = begun;
+  });
+
+  it('that cannot be noted is no fault of the request', async () => {
+    const failing = await makeTestApp({
+      around: (store) =>
+        new Proxy(store, {
+          get: (target, name) =>
+            name === 'people'
+              ? { noteTokenUse: () => Promise.reject(new StoreError('full', 'no room')) }
+              : Reflect.get(target, name).bind?.(target),
+        }),
+    });
+    expect((await failing.call({ url: '/v1/sites' })).statusCode).toBe(200);
+    await failing.close();
   });
 });
 

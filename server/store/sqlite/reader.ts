@@ -98,6 +98,10 @@ export class Reader {
     return this.prepared.resourcesOfSite.all({ ...asked, siteId });
   }
 
+  whoAdded(kind: EditableKind, clubId: string, id: string): string | null {
+    return this.prepared.whoAdded.get(clubId, kind, id)?.memberId ?? null;
+  }
+
   sweep(clubId: string, id: string): SweepRow | null {
     return this.prepared.sweep.get(clubId, id) ?? null;
   }
@@ -183,6 +187,10 @@ function prepareAll(connection: Connection) {
     ),
     resourceByKey: prepare<ResourceRow>(
       `SELECT ${resourceColumns} FROM resource WHERE club_id = ? AND kind = ? AND key = ?`,
+    ),
+    whoAdded: prepare<{ readonly memberId: string }>(
+      `SELECT member_id AS memberId FROM resource_revision
+       WHERE club_id = ? AND kind = ? AND id = ? AND revision = 1`,
     ),
     resources: prepare<ResourceRow>(listQueries.resources),
     resourcesOfSite: prepare<ResourceRow>(listQueries.resourcesOfSite),

@@ -115,6 +115,10 @@ export class SqliteStore implements Store {
     return row === null ? null : toEditable<K>(row);
   }
 
+  async whoAdded(kind: EditableKind, clubId: string, id: string): Promise<string | null> {
+    return this.read((reader) => reader.whoAdded(kind, clubId, id));
+  }
+
   async listEditables<K extends EditableKind>(
     kind: K,
     clubId: string,

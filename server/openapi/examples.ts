@@ -14,6 +14,7 @@ interface ExampleCall {
 /** Ids of records of the demo club that the examples are of. */
 interface ExampleRecords {
   readonly sweep: string;
+  readonly member: string;
   /** A sweep through a feed line. */
   readonly throughLine: string;
   /** A check of that feed line. */
@@ -23,6 +24,7 @@ interface ExampleRecords {
 /** By operation, in the order in which they are made. */
 function calls({
   sweep,
+  member,
   throughLine,
   lineCheck,
 }: ExampleRecords): Readonly<Record<string, ExampleCall>> {
@@ -36,6 +38,12 @@ function calls({
       method: 'POST',
       url: '/v1/members',
       body: { role: 'measurer', person: { name: 'Invented Member' } },
+    },
+    getMember: { url: `/v1/members/${member}` },
+    editMember: {
+      ...edit,
+      url: `/v1/members/${member}`,
+      body: { person: { name: 'Invented Steward' } },
     },
     listMembers: { url: '/v1/members' },
     listTokens: { url: '/v1/tokens' },

@@ -55,6 +55,7 @@ async function makeDocument(): Promise<string> {
     return (await app.inject({ url: `${list}?limit=1`, headers })).json().items[0].id;
   };
   await addExamples(document, app, first.token, {
+    member: first.actor.memberId,
     sweep: await newestOf('/v1/antennas/hilltop-20m/sweeps'),
     throughLine: await newestOf('/v1/antennas/boathouse-2m/sweeps'),
     lineCheck: await newestOf('/v1/antennas/boathouse-2m/line-checks'),

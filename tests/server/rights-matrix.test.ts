@@ -13,7 +13,7 @@ import { makeTestApp, type TestApp } from '../support/test-app.ts';
 const calls = routeCalls();
 const guarded = calls.filter(({ right }) => right !== 'public');
 /** Path parameters that name no record of a club. */
-const shared = new Set(['slug', 'plan']);
+const shared = new Set(['slug', 'plan', 'club']);
 const ofClub = guarded.filter(({ parameters }) => parameters.some((name) => !shared.has(name)));
 
 let club: TestApp;

@@ -23,7 +23,12 @@ const document: OpenAPIV3_1.Document = JSON.parse(
 );
 
 /** Bodies that the document has no example of, since their answers differ each time. */
-const bodiesWithoutExample: Readonly<Record<string, object>> = { addToken: { label: 'matrix' } };
+const bodiesWithoutExample: Readonly<Record<string, object>> = {
+  addToken: { label: 'matrix' },
+  withdrawWork: { reason: 'told twice' },
+  addWebhook: { url: 'https://receiver.example/ledger' },
+  editWebhook: { active: false },
+};
 
 /** Every operation of the document. */
 export function routeCalls(): RouteCall[] {

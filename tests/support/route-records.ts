@@ -47,12 +47,15 @@ export async function addRouteRecords(
     done_at: '2026-05-17T13:00:00Z',
     length_mm: 120,
   });
+  const webhook = await post('/v1/webhooks', { url: 'https://receiver.example/ledger' });
   const member = await addMember(club, 'reader');
   return {
     antenna: String(antenna),
     site: String(site),
     analyzer: analyzer.id,
     sweep: sweep.id,
+    other: sweep.id,
+    webhook: webhook.id,
     check: check.id,
     cable: cable.id,
     work: work.id,

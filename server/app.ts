@@ -39,6 +39,7 @@ import { memberRoutes } from './routes/members.ts';
 import { healthRoutes, metricsRoutes } from './routes/operations.ts';
 import { planRoutes } from './routes/plans.ts';
 import { problemPageRoutes } from './routes/problem-pages.ts';
+import { roundRoutes } from './routes/rounds.ts';
 import { siteRoutes } from './routes/sites.ts';
 import { sweepChartRoutes } from './routes/sweep-charts.ts';
 import { sweepPointRoutes } from './routes/sweep-points.ts';
@@ -117,6 +118,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     sweepChartRoutes(behindToken, service);
     adviceRoutes(behindToken, service);
     workRoutes(behindToken, service);
+    roundRoutes(behindToken, service);
     historyRoutes(behindToken, service);
     driftRoutes(behindToken, service);
     trackRoutes(behindToken, service);

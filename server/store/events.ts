@@ -30,6 +30,7 @@ export const toldEventKinds = [
   'baseline_chosen',
   'test_interval_set',
   'test_overdue',
+  'round_added',
 ] as const;
 export type ToldEventKind = (typeof toldEventKinds)[number];
 export type EventKind = ToldEventKind | InnerEventKind;

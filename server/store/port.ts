@@ -14,6 +14,7 @@ import type { Conditions } from '../../core/record/conditions.ts';
 import type { EventStore } from './events.ts';
 import type { HistoryStore, StoredMeasures } from './history-store.ts';
 import type { KnownToken, PeopleStore } from './people.ts';
+import type { RoundStore } from './round-store.ts';
 import type { WebhookStore } from './webhooks.ts';
 
 /** Where and by whom a change was made: written with it. */
@@ -307,7 +308,7 @@ export interface TokenRecord {
   readonly createdAt: string;
 }
 
-export interface Store extends HistoryStore, EventStore {
+export interface Store extends HistoryStore, EventStore, RoundStore {
   /** Members, their tokens, and the club itself. */
   readonly people: PeopleStore;
 

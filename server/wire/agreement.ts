@@ -17,7 +17,7 @@ const testSchema = z
   })
   .meta({ id: 'OutlierTest', description: 'Straggler beyond 5 %, outlier beyond 1 %.' });
 
-const agreementSchema = z
+export const agreementSchema = z
   .object({
     measure: z.enum(driftMeasures),
     occasions: z.int(),
@@ -88,7 +88,8 @@ function biasToWire(bias: BiasOverAntennas): z.output<typeof overAntennasSchema>
   return { measure, analyzer_id: analyzerId, measurements, bias: bias.bias, low, high, off };
 }
 
-function agreementToWire(agreement: Agreement): z.output<typeof agreementSchema> {
+/** One of them as it is sent. */
+export function agreementToWire(agreement: Agreement): z.output<typeof agreementSchema> {
   const { measure, occasions, precision, instruments } = agreement;
   const testOf = (test: OutlierTest | null) =>
     test === null

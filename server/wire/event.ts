@@ -22,6 +22,7 @@ const eventPaths: Readonly<Record<ToldEventKind, (event: ToldEvent) => string>> 
   baseline_chosen: (event) => ofAntenna(event, '/baselines'),
   test_overdue: (event) => ofAntenna(event, '/sweeps'),
   test_interval_set: () => '/v1/due',
+  round_added: ({ subjectId }) => `/v1/rounds/${subjectId}`,
 };
 
 /** Events of an earlier version do not name the antenna. */

@@ -39,15 +39,16 @@ interface Reading {
 const dayMs = 24 * 3600 * 1000;
 
 /**
- * Compares instruments by what they measured of the same thing within a day, in one era and in the
+ * Compares instruments by what they measured of the same thing within a day (or `occasionMs`), in one era and in the
  * same weather. Each series is of one antenna and band, ascending in time. Null where no two
  * instruments met, or too few did for an interval.
  */
 export function agreementOf(
   series: readonly (readonly DriftSweep[])[],
   measure: DriftMeasure,
+  occasionMs: number = dayMs,
 ): Agreement | null {
-  const readings = readingsOf(series, measure);
+  const readings = readingsOf(series, measure, occasionMs);
   const occasions = [...new Set(readings.map(({ occasion }) => occasion))];
   const ids = [...new Set(readings.map(({ analyzerId }) => analyzerId))].toSorted();
   const degrees = readings.length - occasions.length - ids.length + 1;
@@ -104,9 +105,10 @@ export function agreementOf(
 function readingsOf(
   series: readonly (readonly DriftSweep[])[],
   measure: DriftMeasure,
+  occasionMs: number,
 ): readonly Reading[] {
   return series
-    .flatMap((sweeps) => occasionsOf(sweeps, measure))
+    .flatMap((sweeps) => occasionsOf(sweeps, measure, occasionMs))
     .flatMap((met, occasion) =>
       met.map(({ analyzerId, values }) => ({
         occasion,
@@ -122,20 +124,21 @@ function readingsOf(
 function occasionsOf(
   sweeps: readonly DriftSweep[],
   measure: DriftMeasure,
+  occasionMs: number,
 ): readonly (readonly DriftSweep[])[] {
   const groups: DriftSweep[][] = [];
   for (const sweep of sweeps) {
     if (sweep.analyzerId === null || sweep.values[measure] === undefined) continue;
     const open = groups.at(-1);
-    if (open !== undefined && isOneOccasion(open[0], sweep)) open.push(sweep);
+    if (open !== undefined && isOneOccasion(open[0], sweep, occasionMs)) open.push(sweep);
     else groups.push([sweep]);
   }
   return groups.filter((met) => new Set(met.map(({ analyzerId }) => analyzerId)).size > 1);
 }
 
-function isOneOccasion(first: DriftSweep, sweep: DriftSweep): boolean {
+function isOneOccasion(first: DriftSweep, sweep: DriftSweep, occasionMs: number): boolean {
   return (
-    sweep.measuredAtMs - first.measuredAtMs < dayMs &&
+    sweep.measuredAtMs - first.measuredAtMs < occasionMs &&
     sweep.eraIndex === first.eraIndex &&
     sweep.wetness === first.wetness
   );

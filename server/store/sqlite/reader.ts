@@ -4,6 +4,7 @@ import type { Connection } from './connection.ts';
 import { EventQueries, eventListQueries } from './event-log.ts';
 import { HistoryQueries, historyListQueries } from './history-queries.ts';
 import { PeopleReader } from './people-reader.ts';
+import { RoundQueries, roundListQueries } from './rounds.ts';
 import {
   type CableRow,
   cableColumns,
@@ -52,6 +53,7 @@ export const listQueries = {
   ...historyListQueries,
   ...eventListQueries,
   ...webhookListQueries,
+  ...roundListQueries,
 } as const;
 
 /** Later than any time, so that a first page begins at the newest. */
@@ -63,6 +65,7 @@ export class Reader {
   readonly history: HistoryQueries;
   readonly events: EventQueries;
   readonly webhooks: WebhookQueries;
+  readonly rounds: RoundQueries;
   private readonly connection: Connection;
   private readonly prepared;
 
@@ -73,6 +76,7 @@ export class Reader {
     this.history = new HistoryQueries(connection);
     this.events = new EventQueries(connection);
     this.webhooks = new WebhookQueries(connection);
+    this.rounds = new RoundQueries(connection);
   }
 
   clubs(): ClubRecord[] {

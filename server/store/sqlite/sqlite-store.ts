@@ -36,6 +36,7 @@ import {
   type SweepRecord,
   type TokenRecord,
 } from '../port.ts';
+import type { FreshRound, RoundRecord } from '../round-store.ts';
 import { pack, packText, unpack, unpackText } from './compression.ts';
 import { copyInThread } from './copy-in-thread.ts';
 import { refuseBelowReserve } from './disk-reserve.ts';
@@ -44,6 +45,7 @@ import { pageOf } from './page-of.ts';
 import { toKnownToken } from './people-rows.ts';
 import { packPoints, unpackPoints } from './points-codec.ts';
 import type { Reader } from './reader.ts';
+import { toRoundRecord } from './rounds.ts';
 import {
   toCableRecord,
   toChosenBaselines,
@@ -274,6 +276,20 @@ export class SqliteStore implements Store {
 
   async testInterval(clubId: string): Promise<number | null | undefined> {
     return this.read(({ history }) => history.testInterval(clubId))?.days;
+  }
+
+  async addRound(actor: Actor, fresh: FreshRound): Promise<RoundRecord> {
+    return toRoundRecord(await this.writer.run('addRound', actor, fresh));
+  }
+
+  async findRound(clubId: string, id: string): Promise<RoundRecord | null> {
+    const row = this.read(({ rounds }) => rounds.round(clubId, id));
+    return row === null ? null : toRoundRecord(row);
+  }
+
+  async listRounds(clubId: string, page: PageRequest): Promise<Page<RoundRecord>> {
+    const rows = this.read(({ rounds }) => rounds.rounds(clubId, page));
+    return pageOf(rows, page, toRoundRecord, ({ beginsAt, id }) => [beginsAt, id]);
   }
 
   async allWork(clubId: string, antennaId: string): Promise<readonly WorkRecord[]> {

@@ -16,6 +16,7 @@ import type { Connection } from './connection.ts';
 import { eventLog } from './event-log.ts';
 import { historyActs } from './history-acts.ts';
 import { type PeopleActs, peopleActs, type WriteEvent } from './people-acts.ts';
+import { type RoundActs, roundActs } from './rounds.ts';
 import {
   type CableRow,
   cableColumns,
@@ -80,7 +81,7 @@ export interface EditedResource extends FreshResource {
 }
 
 /** What the writer does, each whole or not at all. Arguments and results pass between threads. */
-export interface WriteActs extends PeopleActs, WebhookActs {
+export interface WriteActs extends PeopleActs, WebhookActs, RoundActs {
   addClub(club: ClubRecord, token: TokenRecord, secretSha256: Uint8Array): null;
   addResource(fresh: FreshResource): ResourceRow;
   editResource(edited: EditedResource): ResourceRow;
@@ -179,6 +180,7 @@ export function writeActs(connection: Connection): WriteActs {
   const writeEvent: WriteEvent = ({ clubId, at, memberId }, kind, id) =>
     insertEvent.run(clubId, kind, id, at, memberId);
   const history = historyActs(connection);
+  const rounds = roundActs(connection);
   const keepRevision = (kind: EditableKind, actor: Actor, row: ResourceRow) => {
     const { at, memberId } = actor;
     const { clubId, id, revision, key, facts } = row;
@@ -295,6 +297,7 @@ export function writeActs(connection: Connection): WriteActs {
     withdrawWork: history.withdrawWork,
     chooseBaseline: history.chooseBaseline,
     setTestInterval: history.setTestInterval,
+    addRound: rounds.addRound,
     noteOverdue(clubId, antennaId, dueAt, at) {
       const { changes } = upsertOverdue.run(clubId, antennaId, dueAt);
       if (changes > 0) insertEvent.run(clubId, 'test_overdue', antennaId, at, '', { antennaId });

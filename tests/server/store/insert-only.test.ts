@@ -23,6 +23,14 @@ beforeAll(async () => {
   await store.withdrawWork(actor, idOf(70), 'Another antenna was trimmed.');
   await store.chooseBaseline(actor, idOf(20), { era: '', sweepIds: [idOf(30)] });
   await store.setTestInterval(actor, 90);
+  const facts = {
+    name: 'Spring round',
+    measures: { loadOhm: 50 },
+    analyzerIds: [idOf(10)],
+    endsAt: actor.at,
+    note: '',
+  };
+  await store.addRound(actor, { id: idOf(80), beginsAt: actor.at, facts });
   await store.close();
   ledger = openWriter(path);
 });
@@ -38,6 +46,7 @@ describe.each([
   'work_withdrawal',
   'baseline',
   'test_interval',
+  'round',
 ])('a row of %s', (table) => {
   it('is there', () => {
     expect(ledger.prepare(`SELECT * FROM ${table}`).all()).toHaveLength(1);

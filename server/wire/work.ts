@@ -7,7 +7,7 @@ const kindSchema = z.enum(workKinds).meta({
   description:
     'What was done. Each kind but `inspected` begins a new era: what was measured before it is of another antenna, so to speak.',
 });
-const lengthSchema = z.number().positive().max(100_000).meta({
+const lengthSchema = z.number().min(0.1).max(100_000).meta({
   description: 'By how much the whole element became shorter (trimmed) or longer (lengthened), mm.',
 });
 const doneBySchema = z.string().min(1).max(100);

@@ -38,6 +38,14 @@ describe('work on an antenna', () => {
     expect([length_mm, done_by, note]).toEqual([null, null, '']);
   });
 
+  it('changes the length by a tenth of a millimetre at least', async () => {
+    const shortened = { kind: 'trimmed', done_at: '2026-05-03T12:00:00Z' };
+    const answer = await tell({ ...shortened, length_mm: 2e-323 }, '/v1/antennas/other/work');
+    expect(answer.statusCode).toBe(400);
+    const least = await tell({ ...shortened, length_mm: 0.1 }, '/v1/antennas/other/work');
+    expect(least.json().length_mm).toBe(0.1);
+  });
+
   it('is listed newest first', async () => {
     const { items } = (await club.call({ url })).json();
     expect(items.map(({ kind }: { kind: string }) => kind)).toEqual(['line_replaced', 'trimmed']);

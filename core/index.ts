@@ -131,6 +131,12 @@ export {
 } from './network/return-loss.ts';
 export { magnitudeOfSwr, sweepSwr, swrOf } from './network/swr.ts';
 export {
+  type Agreement,
+  agreementOf,
+  type InstrumentAgreement,
+} from './record/agreement/agreement.ts';
+export { type BiasOverAntennas, biasesOverAntennas } from './record/agreement/over-antennas.ts';
+export {
   automaticBaseline,
   type BandBaseline,
   type BaselineResonance,
@@ -157,6 +163,18 @@ export {
   weathers,
 } from './record/conditions.ts';
 export { type CurveDifference, curveDifference } from './record/curve-difference.ts';
+export { type DriftReport, type DueTest, driftOf } from './record/drift/drift.ts';
+export {
+  type DriftMeasure,
+  type DriftSweep,
+  type DriftValue,
+  driftMeasures,
+  driftSeries,
+  type Wetness,
+} from './record/drift/drift-series.ts';
+export type { EraTrend, Interval } from './record/drift/era-trend.ts';
+export { type DriftCode, type DriftFinding, driftCodes } from './record/drift/findings.ts';
+export type { InstrumentBias, KnownBias, KnownBiases } from './record/drift/series-model.ts';
 export { byUrgency, type Due, type DueQuestion, type DueState, dueOf } from './record/due.ts';
 export { bandToFile, type FilingBand } from './record/filing.ts';
 export {

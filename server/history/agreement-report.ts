@@ -10,14 +10,20 @@ import {
 } from '../../core/record/drift/drift-series.ts';
 import type { Service } from '../service.ts';
 import { allAntennas } from './due-tests.ts';
+import { loadChecksOf, loadSeries } from './load-series.ts';
 import { measuredRows } from './measured-rows.ts';
 
 /** Of each antenna so many of the newest sweeps are looked at. */
 export const mostAgreementSweeps = 400;
 
+/** A club has no more that it would compare. */
+const mostAnalyzers = 200;
+
 export interface ClubAgreement {
   /** From occasions on which instruments met. */
   readonly agreements: readonly Agreement[];
+  /** Likewise, from checks of one load. */
+  readonly onLoads: Agreement | null;
   /** From every antenna's own series. */
   readonly biases: readonly BiasOverAntennas[];
 }
@@ -34,8 +40,21 @@ export async function clubAgreement(service: Service, clubId: string): Promise<C
       series.push(...[...bands].map((band) => driftSeries(own, band)));
     }
   }
+  const checks = await loadChecksOf(
+    service,
+    clubId,
+    await analyzerIds(service, clubId),
+    () => true,
+  );
   return {
+    onLoads: agreementOf(await loadSeries(service, checks), 'resistance_ohm'),
     agreements: driftMeasures.flatMap((measure) => agreementOf(series, measure) ?? []),
     biases: driftMeasures.flatMap((measure) => biasesOverAntennas(series, measure)),
   };
+}
+
+async function analyzerIds({ store }: Service, clubId: string): Promise<readonly string[]> {
+  const page = { limit: mostAnalyzers, after: null };
+  const { items } = await store.listEditables('analyzers', clubId, page);
+  return items.map(({ id }) => id);
 }

@@ -1,9 +1,13 @@
 import { type Agreement, agreementOf } from '../../core/record/agreement/agreement.ts';
-import { driftMeasures, driftSeries } from '../../core/record/drift/drift-series.ts';
+import {
+  type DriftSweep,
+  driftMeasures,
+  driftSeries,
+} from '../../core/record/drift/drift-series.ts';
 import type { HistoryRow } from '../../core/record/measures.ts';
 import type { Service } from '../service.ts';
-import type { LoadCheckRecord } from '../store/port.ts';
 import type { RoundRecord } from '../store/round-store.ts';
+import { loadChecksOf, loadSeries } from './load-series.ts';
 import { measuredRows } from './measured-rows.ts';
 
 /** What an instrument did in a round so far. */
@@ -16,7 +20,7 @@ export interface InstrumentProgress {
 export interface RoundProgress {
   readonly state: 'planned' | 'under_way' | 'complete' | 'over';
   readonly instruments: readonly InstrumentProgress[];
-  /** Of an antenna's round; empty until two instruments measured it often enough. */
+  /** Empty until two instruments measured often enough. */
   readonly agreements: readonly Agreement[];
 }
 
@@ -25,19 +29,41 @@ const mostLookedAt = 400;
 
 /** How far a round has come: who measured, and how well they agree. */
 export async function roundProgress(service: Service, round: RoundRecord): Promise<RoundProgress> {
-  const { measures, analyzerIds } = round.facts;
-  const rows = 'antennaId' in measures ? await rowsOf(service, round, measures.antennaId) : [];
-  const measured =
-    'antennaId' in measures
-      ? rows.map(({ analyzerId, sweepId }) => ({ analyzerId, id: sweepId }))
-      : await loadChecksOf(service, round, measures.loadOhm);
+  const { analyzerIds } = round.facts;
+  const { measured, series } = await measuredIn(service, round);
   const instruments = analyzerIds.map((analyzerId) => ({
     analyzerId,
     measurements: measured.filter((one) => one.analyzerId === analyzerId).map(({ id }) => id),
   }));
   const isComplete = instruments.every(({ measurements }) => measurements.length > 0);
-  const state = isComplete ? 'complete' : stateAt(round, service.now());
-  return { state, instruments, agreements: agreementsOf(rows, round) };
+  // The whole round is one occasion, however many days it takes.
+  const occasionMs = Date.parse(round.facts.endsAt) - Date.parse(round.beginsAt);
+  return {
+    state: isComplete ? 'complete' : stateAt(round, service.now()),
+    instruments,
+    agreements: driftMeasures.flatMap((name) => agreementOf(series, name, occasionMs) ?? []),
+  };
+}
+
+interface Measured {
+  readonly measured: readonly { readonly analyzerId: string | null; readonly id: string }[];
+  readonly series: readonly (readonly DriftSweep[])[];
+}
+
+async function measuredIn(service: Service, round: RoundRecord): Promise<Measured> {
+  const { clubId, beginsAt, facts } = round;
+  const { measures, analyzerIds, endsAt } = facts;
+  if ('antennaId' in measures) {
+    const rows = await rowsOf(service, round, measures.antennaId);
+    const measured = rows.map(({ analyzerId, sweepId }) => ({ analyzerId, id: sweepId }));
+    return { measured, series: seriesOf(rows) };
+  }
+  const checks = await loadChecksOf(service, clubId, analyzerIds, (check) => {
+    const at = check.facts.measuredAt ?? check.receivedAt;
+    return check.facts.loadOhm === measures.loadOhm && at >= beginsAt && at < endsAt;
+  });
+  const measured = checks.map(({ id, facts: { analyzerId } }) => ({ analyzerId, id }));
+  return { measured, series: await loadSeries(service, checks) };
 }
 
 function stateAt({ beginsAt, facts }: RoundRecord, nowMs: number): RoundProgress['state'] {
@@ -60,35 +86,11 @@ async function rowsOf(
     .filter(({ analyzerId }) => facts.analyzerIds.some((id) => id === analyzerId));
 }
 
-async function loadChecksOf(
-  { store }: Service,
-  { clubId, beginsAt, facts }: RoundRecord,
-  loadOhm: number | null,
-): Promise<readonly { readonly analyzerId: string; readonly id: string }[]> {
-  const page = { limit: mostLookedAt, after: null };
-  const isOfRound = (check: LoadCheckRecord) => {
-    const at = check.facts.measuredAt ?? check.receivedAt;
-    return check.facts.loadOhm === loadOhm && at >= beginsAt && at < facts.endsAt;
-  };
-  const lists = await Promise.all(
-    facts.analyzerIds.map((id) => store.listLoadChecks(clubId, id, page)),
-  );
-  return lists
-    .flatMap(({ items }) => items.filter(isOfRound))
-    .map(({ id, facts: { analyzerId } }) => ({ id, analyzerId }));
-}
-
-/** The whole round is one occasion, however many days it takes. */
-function agreementsOf(
-  rows: readonly HistoryRow[],
-  { beginsAt, facts }: RoundRecord,
-): readonly Agreement[] {
-  const occasionMs = Date.parse(facts.endsAt) - Date.parse(beginsAt);
+function seriesOf(rows: readonly HistoryRow[]): Measured['series'] {
   const bands = [...new Set(rows.flatMap(({ measures }) => measures.bands.map((b) => b.band)))];
   const planes = [...new Set(rows.map(({ measures }) => measures.plane))];
-  const series = planes.flatMap((plane) => {
+  return planes.flatMap((plane) => {
     const own = rows.filter(({ measures }) => measures.plane === plane);
     return bands.map((band) => driftSeries(own, band));
   });
-  return driftMeasures.flatMap((measure) => agreementOf(series, measure, occasionMs) ?? []);
 }

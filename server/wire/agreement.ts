@@ -66,6 +66,9 @@ const overAntennasSchema = z
 export const agreementsSchema = z
   .object({
     items: z.array(agreementSchema).meta({ description: 'From occasions on which they met.' }),
+    on_loads: agreementSchema.nullable().meta({
+      description: 'The resistance that they show of one load, likewise; null if none met on one.',
+    }),
     over_antennas: z.array(overAntennasSchema).meta({
       description: 'From the series of all antennas, also where no instruments met.',
     }),
@@ -75,10 +78,12 @@ export const agreementsSchema = z
 /** Agreements as they are sent. */
 export function agreementsToWire({
   agreements,
+  onLoads,
   biases,
 }: ClubAgreement): z.output<typeof agreementsSchema> {
   return rounded({
     items: agreements.map(agreementToWire),
+    on_loads: onLoads === null ? null : agreementToWire(onLoads),
     over_antennas: biases.map(biasToWire),
   });
 }

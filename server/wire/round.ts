@@ -62,7 +62,7 @@ export const roundProgressSchema = z
         .meta({ id: 'RoundInstrument' }),
     ),
     agreements: z.array(agreementSchema).meta({
-      description: 'Of an antenna’s round, once instruments measured it often enough.',
+      description: 'Once instruments measured often enough; of a load, its resistance.',
     }),
   })
   .meta({ id: 'RoundProgress', description: 'A round and how far it has come.' });

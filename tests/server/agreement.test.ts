@@ -15,7 +15,11 @@ afterAll(() => club.close());
 
 describe('the agreement of a club’s instruments', () => {
   it('is empty before two of them met', async () => {
-    expect((await club.call({ url })).json()).toEqual({ items: [], over_antennas: [] });
+    expect((await club.call({ url })).json()).toEqual({
+      items: [],
+      on_loads: null,
+      over_antennas: [],
+    });
   });
 
   it('tells by how much one of three shows frequencies too high', async () => {
@@ -41,5 +45,26 @@ describe('the agreement of a club’s instruments', () => {
       ({ correction_worth }: { correction_worth: boolean }) => correction_worth,
     );
     expect(worth.length).toBeGreaterThan(0);
+  });
+
+  it('tells by how much one of three shows a load’s resistance too high', async () => {
+    const reflections = { first: 0, second: 0.001, high: 0.06 };
+    for (const [key, reflection] of Object.entries(reflections)) {
+      for (const again of ['10:00', '11:00']) {
+        const answer = await club.call({
+          method: 'POST',
+          url: `/v1/analyzers/${key}/load-checks?load=50&measured_at=2026-05-10T${again}:00Z&file_name=load.s1p`,
+          payload: `# MHz S RI R 50\n! ${key} ${again}\n3.5 ${reflection} 0\n14 ${reflection} 0\n28 ${reflection} 0\n`,
+          headers: { 'content-type': 'application/octet-stream' },
+        });
+        expect(answer.statusCode).toBe(201);
+      }
+    }
+    const { on_loads } = (await club.call({ url })).json();
+    expect(on_loads).toMatchObject({ measure: 'resistance_ohm', occasions: 1 });
+    const biases = on_loads.instruments.map(({ bias }: { bias: number }) => bias);
+    // R = 50 (1 + Γ) / (1 - Γ).
+    const spread = Math.log(1.06 / 0.94);
+    expect(Math.max(...biases) - Math.min(...biases)).toBeCloseTo(spread, 5);
   });
 });

@@ -59,7 +59,7 @@ export function agreementOf(
   });
   // Levels and biases are known up to a common constant; so weak a prior makes the biases sum to 0.
   const columns = [
-    ...ids.map((id) => indicator(({ analyzerId }) => analyzerId === id, 1e-4)),
+    ...ids.map((id) => indicator(({ analyzerId }) => analyzerId === id, 1e-6)),
     ...occasions.map((at) => indicator(({ occasion }) => occasion === at, 0)),
   ];
   const logs = Float64Array.from(readings, ({ log }) => log);

@@ -7,6 +7,7 @@ import {
 } from 'fastify-type-provider-zod';
 import type { OpenAPIV3_1 } from 'openapi-types';
 import { guardRoutes } from './auth/bearer.ts';
+import { countRequests } from './auth/request-limits.ts';
 import { requireRouteRights } from './auth/route-rights.ts';
 import { closeSoon } from './closing.ts';
 import { serveDocs } from './docs.ts';
@@ -64,13 +65,14 @@ const requestTimeoutMs = 120_000;
 
 /** Builds the HTTP service from its parts; it does not listen yet. */
 export async function buildApp({ service, log, document }: AppParts): Promise<App> {
-  const { publicUrl, newId } = service;
+  const { publicUrl, newId, trustedProxies } = service;
   const app: App = Fastify({
     loggerInstance: log,
     logController: new LogController({ disableRequestLogging: true }),
     genReqId: newId,
     bodyLimit: jsonBodyLimit,
     requestTimeout: requestTimeoutMs,
+    trustProxy: trustedProxies.length === 0 ? false : [...trustedProxies],
     return503OnClosing: false,
     onProtoPoisoning: 'error',
     onConstructorPoisoning: 'error',
@@ -92,7 +94,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
   // After the hooks above, so that a refusal is logged, counted and has its headers too.
   answerErrorsAsProblems(app, publicUrl);
   closeSoon(app);
-  guardRoutes(app, service);
+  guardRoutes(app, service, await countRequests(app, service.requestLimits));
   if (document === null) await collectRoutes(app);
   else await serveDocs(app, document);
 

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import type { RequestLimits } from './auth/request-limits.ts';
 
 /** Environment text: an empty variable counts as not set, so that `PORT= npm start` works. */
 function setting<Schema extends z.ZodType>(schema: Schema) {
@@ -23,6 +24,9 @@ export const configSchema = z.object({
   ),
   MAX_UPLOAD_BYTES: setting(wholeNumber(1024, 64 * 1024 * 1024).default(16 * 1024 * 1024)),
   MAX_POINTS: setting(wholeNumber(1, 1_000_000).default(100_001)),
+  REQUESTS_PER_MINUTE_ADDRESS: setting(wholeNumber(0, 10_000_000).default(6000)),
+  REQUESTS_PER_MINUTE_TOKEN: setting(wholeNumber(0, 10_000_000).default(3000)),
+  TRUSTED_PROXIES: setting(z.string().max(1000).optional()),
   DISK_RESERVE_BYTES: setting(wholeNumber(0, 2 ** 40).default(64 * 1024 * 1024)),
   BACKUP_EVERY_HOURS: setting(wholeNumber(0, 24 * 366).default(24)),
   BACKUP_KEEP: setting(wholeNumber(1, 1000).default(7)),
@@ -41,6 +45,8 @@ export interface Config {
   readonly logLevel: string;
   readonly maxUploadBytes: number;
   readonly maxPoints: number;
+  readonly requestLimits: RequestLimits;
+  readonly trustedProxies: readonly string[];
   /** Uploads are refused while the disk has less than this free. */
   readonly diskReserveBytes: number;
   /** 0: none are made. */
@@ -80,6 +86,14 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     logLevel: settings.LOG_LEVEL,
     maxUploadBytes: settings.MAX_UPLOAD_BYTES,
     maxPoints: settings.MAX_POINTS,
+    requestLimits: {
+      perAddress: settings.REQUESTS_PER_MINUTE_ADDRESS,
+      perToken: settings.REQUESTS_PER_MINUTE_TOKEN,
+    },
+    trustedProxies: (settings.TRUSTED_PROXIES ?? '')
+      .split(',')
+      .map((address) => address.trim())
+      .filter((address) => address !== ''),
     diskReserveBytes: settings.DISK_RESERVE_BYTES,
     backupEveryHours: settings.BACKUP_EVERY_HOURS,
     backupKeep: settings.BACKUP_KEEP,

@@ -55,6 +55,8 @@ async function openService(config: Config, { ingest }: IngestPool): Promise<Serv
     publicUrl: config.publicUrl,
     ingest,
     privateWebhooks: config.privateWebhooks,
+    requestLimits: config.requestLimits,
+    trustedProxies: config.trustedProxies,
     limits: { ...defaultReadLimits, maxBytes: config.maxUploadBytes, maxPoints: config.maxPoints },
   };
 }

@@ -205,6 +205,13 @@ export const problemKinds = {
     meaning: 'Without `If-Match` an edit could overwrite what somebody else has just changed.',
     remedy: 'Read the record and send its `ETag` as `If-Match`.',
   },
+  'too-many-requests': {
+    status: 429,
+    title: 'Too many requests',
+    meaning:
+      'More requests came from this address, or with this token, than are taken in a minute.',
+    remedy: 'Wait for the seconds that `Retry-After` gives, and send fewer.',
+  },
   'headers-too-large': {
     status: 431,
     title: 'The header is too large',

@@ -1,4 +1,5 @@
 import type { ReadLimits } from '../core/formats/read-types.ts';
+import type { RequestLimits } from './auth/request-limits.ts';
 import type { Clock } from './ids.ts';
 import type { Ingest } from './ingest-pool.ts';
 import type { Store } from './store/port.ts';
@@ -11,6 +12,9 @@ export interface Service {
   /** Without a slash at its end. */
   readonly publicUrl: string;
   readonly limits: ReadLimits;
+  readonly requestLimits: RequestLimits;
+  /** Addresses of proxies whose `X-Forwarded-For` is believed. */
+  readonly trustedProxies: readonly string[];
   /** Reads and analyses a file on its way in. */
   readonly ingest: Ingest;
   /** Whether webhooks may go to private addresses, and by http; not if left out. */

@@ -5,6 +5,7 @@ import { type Service, timestamp } from '../service.ts';
 import type { KnownToken } from '../store/people.ts';
 import type { Actor } from '../store/port.ts';
 import { KnownTokens } from './known-tokens.ts';
+import type { CountedRequests } from './request-limits.ts';
 import { carriesToken } from './token-in-url.ts';
 import { noteUses } from './token-use.ts';
 
@@ -28,17 +29,23 @@ declare module 'fastify' {
 }
 
 /** Lets no request pass without the right that its route declares (RFC 6750). */
-export function guardRoutes(app: FastifyInstance, service: Service): void {
+export function guardRoutes(
+  app: FastifyInstance,
+  service: Service,
+  counted: CountedRequests,
+): void {
   const tokens = new KnownTokens(service.store);
   const noteUse = noteUses(service);
   app.decorateRequest('actor', null);
   app.addHook('onRequest', async (request) => {
     if (carriesToken(request.url)) throw new Problem('token-in-url');
     const { right = 'public' } = request.routeOptions.config;
+    if (right !== 'public' || request.url.startsWith('/v1/')) await counted.ofAddress(request);
     if (right === 'public') return;
     const token = await authenticate(request, service, tokens);
     const principal = principalOfToken(token);
     request.actor = principal;
+    await counted.ofToken(request);
     noteUse(token, request.log);
     if (!principal.rights.has(right)) throw lacking(right);
   });

@@ -40,6 +40,8 @@ async function makeDocument(): Promise<string> {
     now,
     newId: makeIdSource(now, randomBytes),
     publicUrl: 'http://127.0.0.1:8080',
+    requestLimits: { perAddress: 0, perToken: 0 },
+    trustedProxies: [],
     ingest: async (incoming) => ingest(incoming),
     limits: defaultReadLimits,
   };

@@ -56,6 +56,7 @@ export const commonProblems: readonly ProblemSlug[] = [
   'token-in-url',
   'unauthenticated',
   'insufficient-right',
+  'too-many-requests',
   'uri-too-long',
   'headers-too-large',
   'internal',

@@ -72,6 +72,8 @@ function serviceOver(store: Store): Service {
     newId: makeIdSource(Date.now, randomBytes),
     publicUrl: 'http://127.0.0.1',
     ingest: async (incoming) => ingest(incoming),
+    requestLimits: { perAddress: 0, perToken: 0 },
+    trustedProxies: [],
     limits: defaultReadLimits,
   };
 }

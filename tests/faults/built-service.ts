@@ -37,6 +37,8 @@ export function startService(
       DATA_DIR: dataDir,
       DEMO: 'off',
       BACKUP_EVERY_HOURS: '0',
+      REQUESTS_PER_MINUTE_ADDRESS: '0',
+      REQUESTS_PER_MINUTE_TOKEN: '0',
       ...settings,
     },
     stdio: ['ignore', 'pipe', 'pipe'],

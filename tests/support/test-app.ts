@@ -6,6 +6,7 @@ import type { OpenAPIV3_1 } from 'openapi-types';
 import type { DestinationStream } from 'pino';
 import { defaultReadLimits, type ReadLimits } from '../../core/formats/read-types.ts';
 import { buildApp } from '../../server/app.ts';
+import type { RequestLimits } from '../../server/auth/request-limits.ts';
 import { addFirstClub } from '../../server/first-run.ts';
 import type { App } from '../../server/http/app-type.ts';
 import { makeIdSource } from '../../server/ids.ts';
@@ -33,6 +34,9 @@ export interface TestApp {
 
 interface TestAppOptions {
   readonly limits?: Partial<ReadLimits>;
+  /** Without them nothing is counted. */
+  readonly requestLimits?: RequestLimits;
+  readonly trustedProxies?: readonly string[];
   /** Puts something between the routes and the store, to make it fail. */
   readonly around?: (store: Store) => Store;
   readonly heartbeatMs?: number;
@@ -54,6 +58,8 @@ export async function makeTestApp(options: TestAppOptions = {}): Promise<TestApp
     publicUrl: testUrl,
     ingest: async (incoming) => ingest(incoming),
     limits: { ...defaultReadLimits, ...options.limits },
+    requestLimits: options.requestLimits ?? { perAddress: 0, perToken: 0 },
+    trustedProxies: options.trustedProxies ?? [],
     privateWebhooks: options.privateWebhooks ?? false,
     ...(options.heartbeatMs === undefined ? {} : { heartbeatMs: options.heartbeatMs }),
   };

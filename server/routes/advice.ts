@@ -19,8 +19,8 @@ import { findProblems } from './editables.ts';
 import { planeQuery } from './sweep-reports.ts';
 import { findSweepOrRefuse, sweepParams } from './sweeps.ts';
 
-const hertz = z.coerce.number().positive().max(1e12);
-const quality = z.coerce.number().positive().max(1e6);
+const hertz = z.coerce.number().min(1).max(1e12);
+const quality = z.coerce.number().min(1).max(1e6);
 
 const adviceQuery = z
   .strictObject({

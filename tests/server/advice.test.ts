@@ -153,13 +153,19 @@ describe('advice on a sweep without the sign of its reactance', () => {
 });
 
 describe('a request for advice', () => {
-  it.each(['low_hz=1', 'low_hz=5&high_hz=4', 'band=20m&low_hz=1&high_hz=2', 'power_w=0', 'x=1'])(
-    'refuses %s',
-    async (query) => {
-      const answer = await club.call({ url: `/v1/sweeps/${low}/advice?${query}` });
-      expect(answer.statusCode).toBe(400);
-    },
-  );
+  it.each([
+    'low_hz=1',
+    'low_hz=5&high_hz=4',
+    'band=20m&low_hz=1&high_hz=2',
+    'power_w=0',
+    'x=1',
+    'coil_q=4e-323',
+    'capacitor_q=3e-151',
+    'low_hz=6e-323&high_hz=15e6',
+  ])('refuses %s', async (query) => {
+    const answer = await club.call({ url: `/v1/sweeps/${low}/advice?${query}` });
+    expect(answer.statusCode).toBe(400);
+  });
 
   it('is answered with 304 while nothing has changed', async () => {
     const url = `/v1/sweeps/${low}/advice`;

@@ -22,6 +22,7 @@ import { adviceRoutes } from './routes/advice.ts';
 import { agreementRoutes } from './routes/agreement.ts';
 import { analyzerRoutes } from './routes/analyzers.ts';
 import { antennaRoutes } from './routes/antennas.ts';
+import { auditRoutes } from './routes/audit.ts';
 import { baselineRoutes } from './routes/baselines.ts';
 import { cableRoutes } from './routes/cables.ts';
 import { clubRoutes } from './routes/club.ts';
@@ -52,6 +53,7 @@ import { uploadRoutes } from './routes/upload.ts';
 import { webhookRoutes } from './routes/webhooks.ts';
 import { workRoutes } from './routes/work.ts';
 import type { Service } from './service.ts';
+import { withOrigin } from './store/origin.ts';
 
 export interface AppParts {
   readonly service: Service;
@@ -95,6 +97,8 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
   answerErrorsAsProblems(app, publicUrl);
   closeSoon(app);
   guardRoutes(app, service, await countRequests(app, service.requestLimits));
+  // Last before the handlers: what reads a body loses what was set before it.
+  app.addHook('preHandler', (request, _reply, done) => withOrigin(request.ip, done));
   if (document === null) await collectRoutes(app);
   else await serveDocs(app, document);
 
@@ -106,6 +110,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     clubRoutes(behindToken, service);
     memberRoutes(behindToken, service);
     tokenRoutes(behindToken, service);
+    auditRoutes(behindToken, service);
     siteRoutes(behindToken, service);
     antennaRoutes(behindToken, service);
     analyzerRoutes(behindToken, service);

@@ -11,6 +11,7 @@ import type { FarEnd } from '../../core/line/check/checked-line.ts';
 import type { WindowId } from '../../core/line/check/windows.ts';
 import type { FeedLineSection } from '../../core/line/feed-line.ts';
 import type { Conditions } from '../../core/record/conditions.ts';
+import type { AuditStore } from './audit.ts';
 import type { EventStore } from './events.ts';
 import type { HistoryStore, StoredMeasures } from './history-store.ts';
 import type { KnownToken, PeopleStore } from './people.ts';
@@ -312,6 +313,8 @@ export interface Store extends HistoryStore, EventStore, RoundStore {
   /** Members, their tokens, and the club itself. */
   readonly people: PeopleStore;
 
+  /** Who did what. */
+  readonly audit: AuditStore;
   /** Where events are sent. */
   readonly webhooks: WebhookStore;
 

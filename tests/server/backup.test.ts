@@ -99,6 +99,10 @@ describe('restoring', () => {
       "DROP TRIGGER file_is_kept_update; UPDATE file SET body = x'00'",
     ],
     ['a row lost its parent', 'DROP TRIGGER file_is_kept_delete; DELETE FROM file'],
+    [
+      'an entry of the audit trail was changed',
+      "DROP TRIGGER audit_is_kept_update; UPDATE audit SET act = 'x'",
+    ],
     ['the database is of another program', 'PRAGMA application_id = 1'],
   ])('refuses a backup in which %s, and leaves nothing', async (_fault, sql) => {
     const file = await backupFile();

@@ -1,7 +1,8 @@
 import type { EventDetails, EventKind, LedgerEvent } from '../events.ts';
+import { auditLog } from './audit-log.ts';
 import type { Connection } from './connection.ts';
 
-/** Writes that something happened, within the act that calls it. */
+/** Writes that something happened, and into the audit trail, within the act that calls it. */
 export interface EventLog {
   run(
     clubId: string,
@@ -18,9 +19,11 @@ export function eventLog(connection: Connection): EventLog {
   const insert = connection.prepare(
     'INSERT INTO event (club_id, kind, subject_id, at, member_id, details) VALUES (?, ?, ?, ?, ?, ?)',
   );
+  const audit = auditLog(connection);
   return {
     run(clubId, kind, subjectId, at, memberId, details = {}) {
       insert.run(clubId, kind, subjectId, at, memberId, JSON.stringify(details));
+      audit({ clubId, at, memberId, act: kind, subjectId, outcome: 'done' });
     },
   };
 }

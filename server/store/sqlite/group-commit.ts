@@ -1,3 +1,4 @@
+import { withOrigin } from '../origin.ts';
 import type { Connection } from './connection.ts';
 import { type Failure, failureOf, toStoreError } from './errors.ts';
 import type { WriteActs } from './write-acts.ts';
@@ -7,6 +8,8 @@ export interface Job {
   readonly id: number;
   readonly act: keyof WriteActs;
   readonly args: readonly unknown[];
+  /** The address that it came from; null: the service itself. */
+  readonly origin: string | null;
 }
 
 export type JobResult =
@@ -61,10 +64,10 @@ function inSavepoint(connection: Connection, acts: WriteActs, job: Job): JobResu
   return result;
 }
 
-function attempt(acts: WriteActs, { id, act, args }: Job): JobResult {
+function attempt(acts: WriteActs, { id, act, args, origin }: Job): JobResult {
   try {
     const run = acts[act] as (...args: readonly unknown[]) => unknown;
-    return { id, value: run(...args) };
+    return { id, value: withOrigin(origin, () => run(...args)) };
   } catch (error) {
     return { id, failure: failureOf(error) };
   }

@@ -88,6 +88,7 @@ export function peopleActs(connection: Connection, writeEvent: WriteEvent): Peop
       members.update.run({ ...actor, id, ...erased });
       writePerson(actor, id, null);
       tokens.revokeAll.run({ ...actor, id });
+      members.deleteOrigins.run(actor.clubId, id);
       writeEvent(actor, 'member_erased', id);
       return { outcome: 'changed', row: memberOf(actor, id) };
     },
@@ -136,6 +137,10 @@ function memberStatements(connection: Connection) {
     insertPerson: connection.prepare(
       `INSERT INTO person (club_id, member_id, name, call_sign, contact)
        VALUES (@clubId, @id, @name, @callSign, @contact)`,
+    ),
+    // The chain of the audit trail covers a salted hash, so it holds without them.
+    deleteOrigins: connection.prepare(
+      'DELETE FROM audit_origin WHERE seq IN (SELECT seq FROM audit WHERE club_id = ? AND member_id = ?)',
     ),
     deletePerson: connection.prepare('DELETE FROM person WHERE club_id = ? AND member_id = ?'),
   };

@@ -1,4 +1,5 @@
 import type { ClubRecord, EditableKind, PageRequest } from '../port.ts';
+import { AuditQueries, auditListQueries } from './audit-log.ts';
 import type { Codec } from './compression.ts';
 import type { Connection } from './connection.ts';
 import { EventQueries, eventListQueries } from './event-log.ts';
@@ -51,6 +52,7 @@ export const listQueries = {
     WHERE club_id = @clubId AND antenna_id = @antennaId AND (sort_at, id) < (@sortAt, @id)
     ORDER BY sort_at DESC, id DESC LIMIT @limit`,
   ...historyListQueries,
+  ...auditListQueries,
   ...eventListQueries,
   ...webhookListQueries,
   ...roundListQueries,
@@ -66,6 +68,7 @@ export class Reader {
   readonly events: EventQueries;
   readonly webhooks: WebhookQueries;
   readonly rounds: RoundQueries;
+  readonly audit: AuditQueries;
   private readonly connection: Connection;
   private readonly prepared;
 
@@ -75,6 +78,7 @@ export class Reader {
     this.prepared = prepareAll(connection);
     this.history = new HistoryQueries(connection);
     this.events = new EventQueries(connection);
+    this.audit = new AuditQueries(connection);
     this.webhooks = new WebhookQueries(connection);
     this.rounds = new RoundQueries(connection);
   }

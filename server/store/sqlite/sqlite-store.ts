@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto';
+import type { AuditStore } from '../audit.ts';
 import type { LedgerEvent } from '../events.ts';
 import type {
   ChosenBaseline,
@@ -64,6 +65,7 @@ import type { Writer } from './writer.ts';
 export class SqliteStore implements Store {
   readonly people: SqlitePeople;
   readonly webhooks: SqliteWebhooks;
+  readonly audit: AuditStore;
   private readonly path: string;
   private readonly reader: Reader;
   private readonly writer: Writer;
@@ -77,6 +79,17 @@ export class SqliteStore implements Store {
     this.writer = writer;
     this.reserveBytes = reserveBytes;
     this.webhooks = new SqliteWebhooks((ask) => this.read((all) => ask(all.webhooks)), writer);
+    this.audit = {
+      list: async (clubId, page) => {
+        const rows = this.read((all) => all.audit.list(clubId, page));
+        return pageOf(
+          rows,
+          page,
+          (row) => row,
+          ({ seq }) => [String(seq), ''],
+        );
+      },
+    };
     this.people = new SqlitePeople((ask) => this.read((all) => ask(all.people)), writer);
   }
 

@@ -3,8 +3,13 @@ import { closeSync, fsyncSync, openSync, renameSync, rmSync } from 'node:fs';
 import { dirname } from 'node:path';
 import Database from 'better-sqlite3';
 import { StoreError } from '../port.ts';
+import { verifyAudit } from './audit-chain.ts';
 import { type Codec, unpackHere } from './compression.ts';
 import type { Connection } from './connection.ts';
+import { schemaVersion } from './migrations.ts';
+
+/** The schema that brought the audit trail. */
+const auditSince = 12;
 
 interface FileRow {
   readonly sha256: Buffer;
@@ -40,8 +45,8 @@ export function flush(path: string): void {
 }
 
 /**
- * Checks a copy of the database as a whole: its structure, that no row lacks its parent, and every
- * file against its SHA-256. Throws `corrupt`.
+ * Checks a copy of the database as a whole: its structure, that no row lacks its parent, every
+ * file against its SHA-256, and the audit trail. Throws `corrupt`.
  */
 export function verifyCopy(path: string): void {
   const copy = new Database(path, { readonly: true, fileMustExist: true });
@@ -51,6 +56,8 @@ export function verifyCopy(path: string): void {
     const orphans = copy.prepare('SELECT count(*) FROM pragma_foreign_key_check').pluck().get();
     if (orphans !== 0)
       throw new StoreError('corrupt', `The copy has ${orphans} rows without parents.`);
+    // The schemas of the first releases had none.
+    if (schemaVersion(copy) >= auditSince) verifyAudit(copy);
     const files = copy.prepare<[], FileRow>('SELECT sha256, bytes, codec, body FROM file');
     for (const file of files.iterate()) {
       if (isWhole(file)) continue;

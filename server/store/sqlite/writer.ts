@@ -1,4 +1,5 @@
 import { Worker } from 'node:worker_threads';
+import { presentOrigin } from '../origin.ts';
 import { StoreError } from '../port.ts';
 import { toStoreError } from './errors.ts';
 import type { JobResult } from './group-commit.ts';
@@ -58,7 +59,7 @@ export class Writer {
     const id = this.nextId++;
     return new Promise((resolve, reject) => {
       this.waiting.set(id, { resolve, reject });
-      this.worker.postMessage({ id, act, args });
+      this.worker.postMessage({ id, act, args, origin: presentOrigin() });
     });
   }
 

@@ -25,8 +25,10 @@ function siteJob(number: number, key: string, at?: string) {
   const actor = { ...actorOf(club), ...(at === undefined ? {} : { at }) };
   const facts = JSON.stringify(siteFacts);
   const fresh = { kind: 'sites', actor, id: idOf(number), key, siteId: null, facts };
-  return { id: number, act: 'addResource', args: [fresh] } as const;
+  return { id: number, act: 'addResource', args: [fresh], origin: null } as const;
 }
+
+const lockJob = (id: number) => ({ id, act: 'takeLock', args: [], origin: null }) as const;
 
 describe('acts that wait for the writer together', () => {
   it('share one commit, and one that fails takes no other with it', async () => {
@@ -56,14 +58,12 @@ describe('acts that wait for the writer together', () => {
       { id: 2, failure: { kind: 'unavailable' } },
     ]);
     expect(told.filter((sql) => sql.startsWith('BEGIN'))).toHaveLength(1);
-    expect(runTogether(connection, acts, [{ id: 3, act: 'takeLock', args: [] }])).toMatchObject([
+    expect(runTogether(connection, acts, [lockJob(3)])).toMatchObject([
       { id: 3, failure: { kind: 'unavailable' } },
     ]);
     other.exec('ROLLBACK');
     other.close();
-    expect(runTogether(connection, acts, [{ id: 4, act: 'takeLock', args: [] }])).toEqual([
-      { id: 4, value: null },
-    ]);
+    expect(runTogether(connection, acts, [lockJob(4)])).toEqual([{ id: 4, value: null }]);
     connection.close();
   });
 

@@ -28,6 +28,7 @@ import { cableRoutes } from './routes/cables.ts';
 import { clubRoutes } from './routes/club.ts';
 import { compareRoutes } from './routes/compare.ts';
 import { compareChartRoutes } from './routes/compare-charts.ts';
+import { correctionRoutes } from './routes/corrections.ts';
 import { dashboardRoutes } from './routes/dashboard.ts';
 import { driftRoutes } from './routes/drift.ts';
 import { dueRoutes } from './routes/due.ts';
@@ -120,6 +121,7 @@ export async function buildApp({ service, log, document }: AppParts): Promise<Ap
     lineCheckRoutes(behindToken, service);
     lineCheckChartRoutes(behindToken, service);
     sweepRoutes(behindToken, service);
+    correctionRoutes(behindToken, service);
     sweepPointRoutes(behindToken, service);
     sweepReportRoutes(behindToken, service);
     sweepChartRoutes(behindToken, service);

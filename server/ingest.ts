@@ -135,7 +135,8 @@ function derivedFrom(
 
 function recordOf(incoming: Incoming, read: ReadSweep): SweepRecord {
   const { id, clubId, receivedAt, uploadedBy, facts } = incoming;
-  return { id, clubId, receivedAt, uploadedBy, facts, measured: measuredOf(incoming, read) };
+  const measured = measuredOf(incoming, read);
+  return { id, clubId, receivedAt, uploadedBy, revision: 1, facts, measured };
 }
 
 function measuredOf(incoming: IncomingFile, read: ReadSweep): SweepMeasured {

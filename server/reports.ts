@@ -48,7 +48,8 @@ export async function summaryText(
   basis: ReportBasis,
 ): Promise<string> {
   const stored = await service.store.readSummary(record.clubId, record.id, basis.analysisVersion);
-  if (stored !== null && holds(JSON.parse(stored.summaryJson), summaryMark(basis))) {
+  const mark = { ...summaryMark(basis), antenna_id: record.facts.antennaId };
+  if (stored !== null && holds(JSON.parse(stored.summaryJson), mark)) {
     return stored.summaryJson;
   }
   const view = viewOf(basis, await readSweepOf(service, record), assumptionsOf(record));
@@ -64,7 +65,8 @@ export async function usableText(
   const stored = await service.store.readSummary(record.clubId, record.id, basis.analysisVersion);
   // What is stored holds at the plane of the sweep.
   const isStored = stored !== null && lineToRemove(basis) === null;
-  if (isStored && holds(JSON.parse(stored.usableJson), usableMark(basis))) return stored.usableJson;
+  const mark = { ...usableMark(basis), antenna_id: record.facts.antennaId };
+  if (isStored && holds(JSON.parse(stored.usableJson), mark)) return stored.usableJson;
   const sweep = await readSweepOf(service, record);
   const view = viewOf(basis, sweep, assumptionsOf(record), [basis.maxSwr]);
   return JSON.stringify(usableOf(record, view, basis));

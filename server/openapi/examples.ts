@@ -111,6 +111,12 @@ function calls({
     },
     listSweeps: { url: '/v1/antennas/hilltop-20m/sweeps?limit=2' },
     getSweep: { url: `/v1/sweeps/${sweep}` },
+    listSweepRevisions: { url: `/v1/sweeps/${sweep}/revisions` },
+    correctSweep: {
+      ...edit,
+      url: `/v1/sweeps/${throughLine}`,
+      body: { reason: 'It had begun to rain.', weather: 'rain' },
+    },
     getSummary: { url: `/v1/sweeps/${throughLine}/summary` },
     addWork: {
       method: 'POST',

@@ -117,6 +117,7 @@ export function adviceRoutes(app: App, service: Service): void {
       const tag = derivedTag([
         'advice',
         record.id,
+        record.revision,
         JSON.stringify([summaryMark(basis), usableMark(basis), antenna, asked]),
       ]);
       if (isNotModified(request, reply, tag)) return reply.code(304).send();

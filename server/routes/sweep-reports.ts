@@ -16,7 +16,7 @@ import { usableSchema } from '../wire/usable.ts';
 import { atPlane } from './asked-plane.ts';
 import { findProblems } from './editables.ts';
 import { planFaults } from './plan-reference.ts';
-import { findSweepOrRefuse, sweepParams } from './sweeps.ts';
+import { asOfQuery, findSweepOrRefuse, sweepParams } from './sweeps.ts';
 
 const tags = ['reports'];
 export const planeQuery = planeSchema
@@ -51,7 +51,11 @@ export function sweepReportRoutes(app: App, service: Service): void {
         tags,
         summary: 'Where the antenna resonates, and where its SWR is lowest',
         params: sweepParams,
-        querystring: z.strictObject({ plane: planeQuery, reference_ohm: referenceQuery }),
+        querystring: z.strictObject({
+          plane: planeQuery,
+          reference_ohm: referenceQuery,
+          as_of: asOfQuery,
+        }),
         headers: readHeaders,
         response: answers({ 200: jsonAnswer('The summary.', summarySchema), ...notModified }, [
           ...findProblems,
@@ -62,14 +66,14 @@ export function sweepReportRoutes(app: App, service: Service): void {
     },
     (request, reply) =>
       kept.send(request, reply, async () => {
-        const { plane, reference_ohm } = request.query;
-        const record = await findSweepOrRefuse(request, service, request.params.sweep);
+        const { plane, reference_ohm, as_of } = request.query;
+        const record = await findSweepOrRefuse(request, service, request.params.sweep, as_of);
         refuseOtherReference(record, reference_ohm);
         const own = await reportBasisOf(service, record);
         const basis = atPlane(withEdits(own, { referenceOhm: reference_ohm }), record, plane);
         const mark = JSON.stringify(summaryMark(basis));
         return {
-          tag: derivedTag(['summary', record.id, basis.analysisVersion, mark]),
+          tag: derivedTag(['summary', record.id, record.revision, basis.analysisVersion, mark]),
           text: () => summaryText(service, record, basis),
         };
       }),
@@ -102,6 +106,7 @@ export function sweepReportRoutes(app: App, service: Service): void {
             .optional()
             .meta({ description: "Operator class; default: the antenna's, if its plan is asked." }),
           plane: planeQuery,
+          as_of: asOfQuery,
         }),
         headers: readHeaders,
         response: answers({ 200: jsonAnswer('The report.', usableSchema), ...notModified }, [
@@ -113,8 +118,8 @@ export function sweepReportRoutes(app: App, service: Service): void {
     },
     (request, reply) =>
       kept.send(request, reply, async () => {
-        const { plane, plan, licence, max_swr } = request.query;
-        const record = await findSweepOrRefuse(request, service, request.params.sweep);
+        const { plane, plan, licence, max_swr, as_of } = request.query;
+        const record = await findSweepOrRefuse(request, service, request.params.sweep, as_of);
         const own = atPlane(await reportBasisOf(service, record), record, plane);
         // Another plan has classes of its own, so the antenna's class does not carry over to it.
         const basis = withEdits(own, {
@@ -126,7 +131,7 @@ export function sweepReportRoutes(app: App, service: Service): void {
         const line = lineToRemove(basis) === null ? null : basis.line;
         const mark = JSON.stringify({ ...usableMark(basis), line });
         return {
-          tag: derivedTag(['usable', record.id, mark]),
+          tag: derivedTag(['usable', record.id, record.revision, mark]),
           text: () => usableText(service, record, basis),
         };
       }),

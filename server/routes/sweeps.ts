@@ -8,7 +8,7 @@ import { derivedTag, noneMatchHits } from '../http/etags.ts';
 import { safeFileName } from '../http/file-names.ts';
 import { pageRequest, sendPage } from '../http/pages.ts';
 import { Problem } from '../problems.ts';
-import { reportBasisOf, summaryMark } from '../report-basis.ts';
+import { type ReportBasis, reportBasisOf, summaryMark } from '../report-basis.ts';
 import { summaryText } from '../reports.ts';
 import type { Service } from '../service.ts';
 import type { SweepRecord } from '../store/port.ts';
@@ -19,6 +19,7 @@ import {
   pageQuery,
   pageSchema,
   readHeaders,
+  timeInputSchema,
 } from '../wire/common.ts';
 import { answers, jsonAnswer, notModified } from '../wire/problem.ts';
 import {
@@ -32,16 +33,34 @@ import { findOrRefuse, findProblems, listProblems } from './editables.ts';
 const tags = ['sweeps'];
 export const sweepParams = z.strictObject({ sweep: idSchema });
 
-/** The record that a path names. Throws `not-found`. */
+/** A time of which a sweep is asked, in a query. */
+export const asOfQuery = timeInputSchema.optional().meta({
+  description:
+    'What was told of the sweep at that time; default: what is told now. It is judged by its antenna, cables and analyzer as they are now.',
+});
+
+/** The tag of a sweep's record with its summary. */
+export function recordTag(record: SweepRecord, basis: ReportBasis): string {
+  const mark = JSON.stringify(summaryMark(basis));
+  return derivedTag(['record', record.id, record.revision, basis.analysisVersion, mark]);
+}
+
+/** The record that a path names, as it is told now or was at a time. Throws `not-found`. */
 export async function findSweepOrRefuse(
   request: FastifyRequest,
   service: Service,
   id: string,
+  asOf?: string,
 ): Promise<SweepRecord> {
   const { clubId } = principalOf(request);
-  const record = await service.store.findSweep(clubId, id);
+  const { store } = service;
+  const record =
+    asOf === undefined
+      ? await store.findSweep(clubId, id)
+      : await store.corrections.findAsOf(clubId, id, asOf);
   if (record === null) {
-    throw new Problem('not-found', { detail: `The club has no sweep \`${id}\`.` });
+    const then = asOf === undefined ? 'has' : `had at ${asOf}`;
+    throw new Problem('not-found', { detail: `The club ${then} no sweep \`${id}\`.` });
   }
   return record;
 }
@@ -81,7 +100,7 @@ export function sweepRoutes(app: App, service: Service): void {
         tags,
         summary: 'Read the record of a sweep',
         params: sweepParams,
-        querystring: noQuery,
+        querystring: z.strictObject({ as_of: asOfQuery }),
         headers: readHeaders,
         response: answers(
           { 200: jsonAnswer('The record.', sweepWithSummarySchema), ...notModified },
@@ -90,15 +109,10 @@ export function sweepRoutes(app: App, service: Service): void {
       },
     },
     async (request, reply) => {
-      const record = await findSweepOrRefuse(request, service, request.params.sweep);
+      const { as_of } = request.query;
+      const record = await findSweepOrRefuse(request, service, request.params.sweep, as_of);
       const basis = await reportBasisOf(service, record);
-      const tag = derivedTag([
-        'record',
-        record.id,
-        basis.analysisVersion,
-        JSON.stringify(summaryMark(basis)),
-      ]);
-      if (isNotModified(request, reply, tag)) return reply.code(304).send();
+      if (isNotModified(request, reply, recordTag(record, basis))) return reply.code(304).send();
       const summary = await summaryText(service, record, basis);
       return reply.type('application/json').send(sweepWithSummaryJson(record, summary));
     },

@@ -25,6 +25,7 @@ export const toldEventKinds = [
   'load_check_added',
   'line_check_added',
   'sweep_added',
+  'sweep_corrected',
   'work_added',
   'work_withdrawn',
   'baseline_chosen',

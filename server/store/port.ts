@@ -12,6 +12,7 @@ import type { WindowId } from '../../core/line/check/windows.ts';
 import type { FeedLineSection } from '../../core/line/feed-line.ts';
 import type { Conditions } from '../../core/record/conditions.ts';
 import type { AuditStore } from './audit.ts';
+import type { CorrectionStore } from './corrections.ts';
 import type { EventStore } from './events.ts';
 import type { HistoryStore, StoredMeasures } from './history-store.ts';
 import type { KnownToken, PeopleStore } from './people.ts';
@@ -125,6 +126,8 @@ export interface SweepFacts extends Partial<Conditions> {
   readonly note: string;
   readonly plane: 'measured' | 'feed_point';
   readonly invented: boolean;
+  /** Why it tells nothing of the antenna, so that no history has it; null or left out: it does. */
+  readonly rejectedBecause?: string | null;
 }
 
 /** What was read from the file, fixed for good. */
@@ -150,6 +153,8 @@ export interface SweepRecord {
   readonly clubId: string;
   readonly receivedAt: string;
   readonly uploadedBy: string;
+  /** Of the facts: 1 as uploaded, one more with each correction. */
+  readonly revision: number;
   readonly facts: SweepFacts;
   readonly measured: SweepMeasured;
 }
@@ -313,6 +318,8 @@ export interface Store extends HistoryStore, EventStore, RoundStore {
   /** Members, their tokens, and the club itself. */
   readonly people: PeopleStore;
 
+  /** What was told of sweeps, and its corrections. */
+  readonly corrections: CorrectionStore;
   /** Who did what. */
   readonly audit: AuditStore;
   /** Where events are sent. */

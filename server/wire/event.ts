@@ -17,6 +17,7 @@ const eventPaths: Readonly<Record<ToldEventKind, (event: ToldEvent) => string>> 
     analyzerId === undefined ? '/v1/analyzers' : `/v1/analyzers/${analyzerId}/load-checks`,
   line_check_added: (event) => ofAntenna(event, `/line-checks/${event.subjectId}`),
   sweep_added: ({ subjectId }) => `/v1/sweeps/${subjectId}`,
+  sweep_corrected: ({ subjectId }) => `/v1/sweeps/${subjectId}`,
   work_added: (event) => ofAntenna(event, `/work/${event.subjectId}`),
   work_withdrawn: (event) => ofAntenna(event, `/work/${event.subjectId}`),
   baseline_chosen: (event) => ofAntenna(event, '/baselines'),

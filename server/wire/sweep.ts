@@ -9,6 +9,7 @@ import {
   timeSchema,
 } from './common.ts';
 import { conditionsFields, conditionsToWire } from './conditions.ts';
+import { rejectedSchema } from './correction.ts';
 import { phaseSchema, planeSchema, summarySchema } from './summary.ts';
 
 /** The file of a measurement, as it was sent. */
@@ -37,11 +38,15 @@ export const sweepSchema = z
     measured_at: timeSchema.nullable().meta({ description: 'Null if nobody said.' }),
     received_at: timeSchema,
     uploaded_by: idSchema,
+    revision: z.int().min(1).meta({
+      description: 'Of what was told: grows by one with each correction.',
+    }),
     ...conditionsFields,
     conditions: z.string().nullable().meta({ description: 'In the member’s own words.' }),
     note: noteSchema,
     plane: planeSchema,
     invented: inventedSchema,
+    rejected_because: rejectedSchema,
     file: fileSchema,
     phase: phaseSchema,
     reference_ohm: z.number().meta({ description: 'The reference of the file.' }),
@@ -79,11 +84,13 @@ export function sweepToWire(record: SweepRecord): z.output<typeof sweepSchema> {
     measured_at: facts.measuredAt,
     received_at: record.receivedAt,
     uploaded_by: record.uploadedBy,
+    revision: record.revision,
     ...conditionsToWire(facts),
     conditions: facts.conditions,
     note: facts.note,
     plane: facts.plane,
     invented: facts.invented,
+    rejected_because: facts.rejectedBecause ?? null,
     file: fileToWire(measured),
     phase: measured.phase,
     reference_ohm: measured.referenceOhm,

@@ -49,6 +49,14 @@ export async function addRouteRecords(
   });
   const webhook = await post('/v1/webhooks', { url: 'https://receiver.example/ledger' });
   const member = await addMember(club, 'reader');
+  await post('/v1/analyzers', { key: 'second-unit', name: 'Second unit' });
+  const round = await post('/v1/rounds', {
+    name: 'Round',
+    antenna: 'field-20m',
+    analyzers: ['field-unit', 'second-unit'],
+    begins_at: '2026-05-01T00:00:00Z',
+    ends_at: '2026-06-01T00:00:00Z',
+  });
   return {
     antenna: String(antenna),
     site: String(site),
@@ -59,6 +67,7 @@ export async function addRouteRecords(
     check: check.id,
     cable: cable.id,
     work: work.id,
+    round: round.id,
     member: member.id,
     token: member.tokenId,
   };

@@ -132,6 +132,7 @@ export function newSweep(clubId: string, id: string, antennaId: string, text: st
       clubId,
       receivedAt: at,
       uploadedBy: idOf(900),
+      revision: 1,
       facts: {
         antennaId,
         analyzerId: null,

@@ -1,13 +1,15 @@
 import type { ChosenBaseline, FreshWork, StoredMeasures } from '../history-store.ts';
-import { type Actor, StoreError, type SweepRecord } from '../port.ts';
+import { type Actor, StoreError, type SweepFacts, type SweepRecord } from '../port.ts';
 import type { Connection } from './connection.ts';
 import { eventLog } from './event-log.ts';
-import { type WorkRow, workColumns } from './rows.ts';
+import { type SweepRow, type WorkRow, workColumns } from './rows.ts';
 
 /** What the writer does for histories, each within the act that calls it. */
 export interface HistoryActs {
   /** Takes a new sweep into its antenna's history. */
   enter(record: SweepRecord, stored: StoredMeasures): void;
+  /** Puts a sweep where its corrected facts have it: into one antenna's history, or into none. */
+  place(sweep: SweepRow, facts: SweepFacts): void;
   keepMeasures(clubId: string, sweepId: string, stored: StoredMeasures): null;
   addWork(actor: Actor, fresh: FreshWork): WorkRow;
   withdrawWork(actor: Actor, id: string, reason: string): WorkRow;
@@ -39,6 +41,13 @@ export function historyActs(connection: Connection): HistoryActs {
   const deleteBands = connection.prepare(
     `DELETE FROM history WHERE club_id = ? AND sweep_id = ? AND band <> ''`,
   );
+  const deleteRows = connection.prepare('DELETE FROM history WHERE club_id = ? AND sweep_id = ?');
+  const selectBands = connection
+    .prepare<unknown[], string>(
+      `SELECT part.value ->> '$.band' FROM sweep_measures, json_each(measures, '$.bands') AS part
+       WHERE club_id = ? AND sweep_id = ?`,
+    )
+    .pluck();
   const deleteUnmeasured = connection.prepare(
     'DELETE FROM unmeasured WHERE club_id = ? AND sweep_id = ?',
   );
@@ -76,9 +85,20 @@ export function historyActs(connection: Connection): HistoryActs {
       insertMeasures.run(clubId, id, basis, JSON.stringify(measures));
       insertRows(clubId, id, placeOf(record), ['', ...bands]);
     },
+    place({ clubId, id, sortAt }, facts) {
+      deleteRows.run(clubId, id);
+      const isRejected = (facts.rejectedBecause ?? null) !== null;
+      if (isRejected) return;
+      insertRows(clubId, id, placeAt(facts, sortAt), ['', ...selectBands.all(clubId, id)]);
+    },
     keepMeasures(clubId, sweepId, { basis, measures }) {
       const place = selectPlace.get(clubId, sweepId);
-      if (place === undefined) throw new StoreError('unavailable', `There is no sweep ${sweepId}.`);
+      // It was rejected meanwhile: the measures are kept, for it may come back.
+      if (place === undefined) {
+        insertMeasures.run(clubId, sweepId, basis, JSON.stringify(measures));
+        deleteUnmeasured.run(clubId, sweepId);
+        return null;
+      }
       const bands = measures.bands.map(({ band }) => band);
       insertMeasures.run(clubId, sweepId, basis, JSON.stringify(measures));
       deleteBands.run(clubId, sweepId);
@@ -115,9 +135,13 @@ export function historyActs(connection: Connection): HistoryActs {
 }
 
 function placeOf({ facts, receivedAt }: SweepRecord): Place {
+  return placeAt(facts, facts.measuredAt ?? receivedAt);
+}
+
+function placeAt(facts: SweepFacts, sortAt: string): Place {
   return {
     antennaId: facts.antennaId,
-    sortAt: facts.measuredAt ?? receivedAt,
+    sortAt,
     analyzerId: facts.analyzerId ?? '',
     weather: facts.weather ?? '',
   };

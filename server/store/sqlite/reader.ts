@@ -18,6 +18,7 @@ import {
   type SweepRow,
   sweepColumns,
 } from './rows.ts';
+import { CorrectionQueries } from './sqlite-corrections.ts';
 import { WebhookQueries, webhookListQueries } from './sqlite-webhooks.ts';
 
 export interface FileRow {
@@ -69,6 +70,7 @@ export class Reader {
   readonly webhooks: WebhookQueries;
   readonly rounds: RoundQueries;
   readonly audit: AuditQueries;
+  readonly corrections: CorrectionQueries;
   private readonly connection: Connection;
   private readonly prepared;
 
@@ -78,6 +80,7 @@ export class Reader {
     this.prepared = prepareAll(connection);
     this.history = new HistoryQueries(connection);
     this.events = new EventQueries(connection);
+    this.corrections = new CorrectionQueries(connection);
     this.audit = new AuditQueries(connection);
     this.webhooks = new WebhookQueries(connection);
     this.rounds = new RoundQueries(connection);

@@ -7,6 +7,7 @@ import {
   type LineCheckRecord,
   type LoadCheckRecord,
   StoreError,
+  type SweepFacts,
   type SweepRecord,
 } from '../port.ts';
 
@@ -31,12 +32,14 @@ export interface SweepRow {
   readonly uploadedBy: string;
   readonly measured: string;
   readonly facts: string;
+  readonly revision: number;
   readonly sortAt: string;
 }
 
 /** Columns of a `SweepRow` with the facts that hold. */
 export const sweepFields = `sweep.club_id AS clubId, sweep.id AS id, received_at AS receivedAt,
-  uploaded_by AS uploadedBy, measured, sweep_facts.facts AS facts, sweep_current.sort_at AS sortAt`;
+  uploaded_by AS uploadedBy, measured, sweep_facts.facts AS facts,
+  sweep_facts.revision AS revision, sweep_current.sort_at AS sortAt`;
 
 /** The tables of these columns beside `sweep_current`. */
 export const sweepTables = `JOIN sweep ON sweep.club_id = sweep_current.club_id AND sweep.id = sweep_current.sweep_id
@@ -163,15 +166,21 @@ export function toLineCheckRecord(row: LineCheckRow): LineCheckRecord {
 
 /** A row as the record that callers know. */
 export function toSweepRecord(row: SweepRow): SweepRecord {
-  const { id, clubId, receivedAt, uploadedBy } = row;
+  const { id, clubId, receivedAt, uploadedBy, revision } = row;
   return {
     id,
     clubId,
     receivedAt,
     uploadedBy,
-    facts: parsed(row.facts),
+    revision,
+    facts: toSweepFacts(row.facts),
     measured: parsed(row.measured),
   };
+}
+
+/** What was told of a sweep. Throws `corrupt`. */
+export function toSweepFacts(text: string): SweepFacts {
+  return parsed(text);
 }
 
 function parsed<Kept>(text: string): Kept {

@@ -57,6 +57,7 @@ import {
   toSweepRecord,
   toWorkRecord,
 } from './rows.ts';
+import { SqliteCorrections } from './sqlite-corrections.ts';
 import { SqlitePeople } from './sqlite-people.ts';
 import { SqliteWebhooks } from './sqlite-webhooks.ts';
 import type { Writer } from './writer.ts';
@@ -66,6 +67,7 @@ export class SqliteStore implements Store {
   readonly people: SqlitePeople;
   readonly webhooks: SqliteWebhooks;
   readonly audit: AuditStore;
+  readonly corrections: SqliteCorrections;
   private readonly path: string;
   private readonly reader: Reader;
   private readonly writer: Writer;
@@ -79,6 +81,10 @@ export class SqliteStore implements Store {
     this.writer = writer;
     this.reserveBytes = reserveBytes;
     this.webhooks = new SqliteWebhooks((ask) => this.read((all) => ask(all.webhooks)), writer);
+    this.corrections = new SqliteCorrections(
+      (ask) => this.read((all) => ask(all.corrections)),
+      writer,
+    );
     this.audit = {
       list: async (clubId, page) => {
         const rows = this.read((all) => all.audit.list(clubId, page));

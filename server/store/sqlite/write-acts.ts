@@ -13,6 +13,7 @@ import {
 } from '../port.ts';
 import type { Packed } from './compression.ts';
 import type { Connection } from './connection.ts';
+import { type CorrectionActs, correctionActs } from './correction-acts.ts';
 import { eventLog } from './event-log.ts';
 import { historyActs } from './history-acts.ts';
 import { type PeopleActs, peopleActs, type WriteEvent } from './people-acts.ts';
@@ -81,7 +82,7 @@ export interface EditedResource extends FreshResource {
 }
 
 /** What the writer does, each whole or not at all. Arguments and results pass between threads. */
-export interface WriteActs extends PeopleActs, WebhookActs, RoundActs {
+export interface WriteActs extends PeopleActs, WebhookActs, RoundActs, CorrectionActs {
   addClub(club: ClubRecord, token: TokenRecord, secretSha256: Uint8Array): null;
   addResource(fresh: FreshResource): ResourceRow;
   editResource(edited: EditedResource): ResourceRow;
@@ -190,6 +191,7 @@ export function writeActs(connection: Connection): WriteActs {
   return {
     ...peopleActs(connection, writeEvent),
     ...webhookActs(connection, writeEvent),
+    ...correctionActs(connection, insertEvent, history.place),
     addClub(club, token, secretSha256) {
       const { id, key, name, invented, createdAt } = club;
       insertClub.run(id, key, name, invented ? 1 : 0, createdAt, createdAt);

@@ -15,7 +15,11 @@ const readings = 100;
 const say = (line: string) => process.stdout.write(`${line}\n`);
 
 const folder = mkdtempSync(join(tmpdir(), 'sweep-ledger-soak-'));
-const service = startService(folder, await freePort(), { LOG_LEVEL: 'warn' });
+const service = startService(folder, await freePort(), {
+  LOG_LEVEL: 'warn',
+  // As `npm start` runs it.
+  NODE_OPTIONS: '--max-semi-space-size=4',
+});
 await service.listening;
 const { pid } = service.child;
 if (pid === undefined) throw new Error('The service has no process.');
@@ -37,7 +41,9 @@ const failed = Object.keys(load.byStatus).filter((status) => Number(status) >= 5
 const faults = [...verdict.faults, ...failed.map((status) => `answers ${status}`)];
 for (const [status, count] of Object.entries(load.byStatus)) say(`${status}: ${count}`);
 const mib = (value: number) => value.toFixed(1);
-say(`memory from ${mib(kept[0].residentMib)} to ${mib(kept[kept.length - 1].residentMib)} MiB`);
+// Every tenth reading, so that a climb that ends can be told from one that goes on.
+const series = gauges.filter((_, i) => i % 10 === 9);
+say(`memory, MiB: ${series.map(({ residentMib }) => mib(residentMib)).join(', ')}`);
 say(
   `slope ${mib(verdict.slope)} MiB/h, 95 % interval ${mib(verdict.slopeLow)} to ${mib(verdict.slopeHigh)}, may reach ${bounds.growthMibPerHour}`,
 );
